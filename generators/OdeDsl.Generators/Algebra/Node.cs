@@ -1,0 +1,14 @@
+using System;
+
+namespace OdeDsl.Generators.Algebra;
+
+/// <summary>
+/// One operation of an <see cref="ExpressionGraph"/>. Operands are indices of earlier nodes, -1 where there is none. Constants
+/// are kept as bits, so that 0.0 and -0.0 differ and every NaN equals itself.
+/// </summary>
+internal readonly record struct Node(Operator Operator, int First, int Second, int Third, long Payload)
+{
+    public double Constant => BitConverter.Int64BitsToDouble(Payload);
+
+    public int Index => (int)Payload;
+}

@@ -1,0 +1,89 @@
+namespace OdeDsl.Generators.Algebra;
+
+/// <summary>
+/// The operations of an <see cref="ExpressionGraph"/>. Operands are named First, Second, Third in the order of the C# operation;
+/// all numbers are doubles and every operation rounds as C# does, so an expression built in the user's order evaluates to the
+/// user's bits.
+/// </summary>
+internal enum Operator : byte
+{
+    // Leaves. Payload: the bits of the constant, or the index.
+    Constant,
+    State,
+    Parameter,
+    Time,
+
+    /// <summary>A direction component, only in Jacobian-vector products. Payload: index.</summary>
+    Direction,
+
+    // Arithmetic.
+    Add,
+    Subtract,
+    Multiply,
+    Divide,
+    Remainder,
+    Negate,
+
+    // Functions of System.Math with the same name.
+    Sqrt,
+    Cbrt,
+    Exp,
+    Log,
+    LogBase,
+    Log2,
+    Log10,
+    Pow,
+    Sin,
+    Cos,
+    Tan,
+    Asin,
+    Acos,
+    Atan,
+    Atan2,
+    Sinh,
+    Cosh,
+    Tanh,
+    Asinh,
+    Acosh,
+    Atanh,
+    FusedMultiplyAdd,
+    CopySign,
+    IEEERemainder,
+
+    // Functions with kinks or jumps: each owns a switching function.
+    Abs,
+    Sign,
+    Min,
+    Max,
+    MinMagnitude,
+    MaxMagnitude,
+    Clamp,
+    Floor,
+    Ceiling,
+    Truncate,
+    Round,
+    RoundAwayFromZero,
+
+    // Conditions (bool). BooleanConstant: payload 0 or 1.
+    BooleanConstant,
+    Less,
+    LessOrEqual,
+    Greater,
+    GreaterOrEqual,
+    Equal,
+    NotEqual,
+    And,
+    Or,
+    Not,
+
+    /// <summary>First ? Second : Third, for numbers and for conditions.</summary>
+    Conditional,
+
+    // Only in locked graphs. Payload: index of the switching function.
+
+    /// <summary>The condition "regime entry is 1".</summary>
+    Side,
+
+    /// <summary>The regime entry of a whole-number switch, as a number.</summary>
+    WholeNumber,
+}

@@ -1,0 +1,29 @@
+namespace OdeDsl.Modeling;
+
+/// <summary>What the generator adds to a model class: access to its numbers as vectors. Implemented explicitly, out of the user's way.</summary>
+/// <typeparam name="TModel">The model class itself.</typeparam>
+/// <typeparam name="TSystem">Its generated equations.</typeparam>
+public interface IOdeModel<TModel, TSystem>
+    where TModel : class, IOdeModel<TModel, TSystem>
+    where TSystem : struct, IOdeSystem
+{
+    /// <summary>Copies the model's states out.</summary>
+    /// <param name="state">Receives n values.</param>
+    void ReadState(Span<double> state);
+
+    /// <summary>Sets the model's states.</summary>
+    /// <param name="state">n values.</param>
+    void WriteState(ReadOnlySpan<double> state);
+
+    /// <summary>Copies the model's parameters out.</summary>
+    /// <param name="parameters">Receives m values.</param>
+    void ReadParameters(Span<double> parameters);
+
+    /// <summary>Sets the model's parameters.</summary>
+    /// <param name="parameters">m values.</param>
+    void WriteParameters(ReadOnlySpan<double> parameters);
+
+    /// <summary>Makes an independent copy of the model.</summary>
+    /// <returns>A model of the same class with the same states and parameters.</returns>
+    TModel Copy();
+}

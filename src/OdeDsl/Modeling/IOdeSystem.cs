@@ -1,0 +1,130 @@
+namespace OdeDsl.Modeling;
+
+/// <summary>
+/// The contract that generated equations fulfil, over flat vectors: state[n], parameters[m], regime[s], with n, m, s the counts
+/// in <see cref="Description"/>.
+/// </summary>
+/// <remarks>
+/// No member allocates, reads anything but its arguments, or throws except <see cref="ArgumentOutOfRangeException"/> for a vector
+/// that is too short (and what a called function of System.Math throws, such as Clamp with crossed bounds). Results must not
+/// overlap inputs. All members are safe to call from several threads at once.
+/// Except for the member that computes rates as written, everything is evaluated with the regime locked: each condition takes
+/// the side its regime entry names (see <see cref="SwitchDescription.SideOf"/>), whatever its switching function says at the point.
+/// A formula thus stays smooth on both sides of its surface.
+/// </remarks>
+public interface IOdeSystem
+{
+    /// <summary>Names, units, bounds, defaults and structure.</summary>
+    static abstract ModelDescription Description { get; }
+
+    /// <summary>The rates as written by the user, equal to the model's own members bit for bit.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="rates">Receives the n time derivatives.</param>
+    static abstract void Rates(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> rates);
+
+    /// <summary>The rates within a locked regime.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="rates">Receives the n time derivatives.</param>
+    static abstract void Rates(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> rates);
+
+    /// <summary>The derivatives of the rates by the states, dense.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="jacobian">Receives n × n values by rows: entry (i, j) at i n + j is ∂rate i / ∂state j. Zeros are written too.</param>
+    static abstract void StateJacobian(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian);
+
+    /// <summary>The derivatives of the rates by the states, only the entries of <see cref="ModelDescription.StateSparsity"/>, in its order.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="values">Receives the values of the entries.</param>
+    static abstract void StateJacobianValues(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> values);
+
+    /// <summary>The derivatives of the rates by the parameters, dense.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="jacobian">Receives n × m values by rows. Zeros are written too.</param>
+    static abstract void ParameterJacobian(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian);
+
+    /// <summary>The explicit derivatives of the rates by time.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="derivative">Receives n values.</param>
+    static abstract void TimeDerivative(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> derivative);
+
+    /// <summary>The product of the state Jacobian with a direction.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="direction">The direction, n values.</param>
+    /// <param name="product">Receives n values.</param>
+    static abstract void JacobianVectorProduct(
+        double time,
+        ReadOnlySpan<double> state,
+        ReadOnlySpan<double> parameters,
+        ReadOnlySpan<double> regime,
+        ReadOnlySpan<double> direction,
+        Span<double> product);
+
+    /// <summary>The observables.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="values">Receives the observables, as the user's own members compute them.</param>
+    static abstract void Observables(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> values);
+
+    /// <summary>The values of the switching functions.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">
+    /// The regime, s values: conditions inside a switching function are locked too. A switching function only looks at entries
+    /// before its own, so the regime of a point is found by evaluating and deciding entry by entry.
+    /// </param>
+    /// <param name="values">Receives s values.</param>
+    static abstract void SwitchingFunctions(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> values);
+
+    /// <summary>The derivatives of the switching functions by the states, dense.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="jacobian">Receives s × n values by rows. Zeros are written too.</param>
+    static abstract void SwitchingJacobian(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian);
+
+    /// <summary>The explicit derivatives of the switching functions by time.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="derivative">Receives s values.</param>
+    static abstract void SwitchingTimeDerivative(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> derivative);
+
+    /// <summary>The regime of a point: for each switching function the side that holds there, as the user's conditions decide it.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">Receives s values.</param>
+    static abstract void Regime(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> regime);
+}

@@ -1,0 +1,59 @@
+using System.Collections.Immutable;
+
+namespace OdeDsl.Modeling;
+
+/// <summary>What is known about a model apart from its numbers: names, units, bounds, defaults, structure.</summary>
+public sealed record ModelDescription
+{
+    /// <summary>The name of the model class.</summary>
+    public required string Name { get; init; }
+
+    /// <summary>The model's documentation summary, or the empty string.</summary>
+    public string Summary { get; init; } = "";
+
+    /// <summary>The states, in the order of the state vector.</summary>
+    public required ImmutableArray<StateDescription> States { get; init; }
+
+    /// <summary>The parameters, in the order of the parameter vector.</summary>
+    public required ImmutableArray<ParameterDescription> Parameters { get; init; }
+
+    /// <summary>The observables, in the order of the observable vector.</summary>
+    public ImmutableArray<ObservableDescription> Observables { get; init; } = [];
+
+    /// <summary>The switching functions, in the order of the regime vector.</summary>
+    public ImmutableArray<SwitchDescription> Switches { get; init; } = [];
+
+    /// <summary>The entries of the state Jacobian that are not identically zero.</summary>
+    public required SparsityPattern StateSparsity { get; init; }
+
+    /// <summary>The entries of the parameter Jacobian that are not identically zero.</summary>
+    public required SparsityPattern ParameterSparsity { get; init; }
+
+    /// <summary>Whether a rate or a switching function depends on time explicitly.</summary>
+    public bool DependsOnTime { get; init; }
+
+    /// <summary>The position of a state in the state vector.</summary>
+    /// <param name="name">The state's name.</param>
+    /// <returns>The index, or -1 if there is no such state.</returns>
+    public int IndexOfState(string name) => IndexOf(States, name, static state => state.Name);
+
+    /// <summary>The position of a parameter in the parameter vector.</summary>
+    /// <param name="name">The parameter's name.</param>
+    /// <returns>The index, or -1 if there is no such parameter.</returns>
+    public int IndexOfParameter(string name) => IndexOf(Parameters, name, static parameter => parameter.Name);
+
+    /// <summary>The position of an observable in the observable vector.</summary>
+    /// <param name="name">The observable's name.</param>
+    /// <returns>The index, or -1 if there is no such observable.</returns>
+    public int IndexOfObservable(string name) => IndexOf(Observables, name, static observable => observable.Name);
+
+    private static int IndexOf<T>(ImmutableArray<T> items, string name, Func<T, string> nameOf)
+    {
+        for (int i = 0; i < items.Length; i++)
+        {
+            if (string.Equals(nameOf(items[i]), name, StringComparison.Ordinal)) return i;
+        }
+
+        return -1;
+    }
+}
