@@ -1,0 +1,50 @@
+using System;
+using System.Linq;
+using Microsoft.CodeAnalysis;
+
+namespace OdeDsl.Generators.Reading;
+
+/// <summary>The modelling attributes and their arguments.</summary>
+internal static class Attributes
+{
+    public const string Namespace = "OdeDsl";
+    public const string ModelName = "OdeDsl.OdeModelAttribute";
+    public const string State = "State";
+    public const string Parameter = "Parameter";
+    public const string Rate = "Rate";
+    public const string Observable = "Observable";
+    public const string Angle = "Angle";
+
+    /// <summary>The short names of all attributes that mark a member of a model.</summary>
+    public static readonly string[] OfMembers = [State, Parameter, Rate, Observable, Angle];
+
+    public static AttributeData? Find(ISymbol member, string shortName) =>
+        member.GetAttributes().FirstOrDefault(attribute => Is(attribute, shortName));
+
+    public static bool Is(AttributeData attribute, string shortName) =>
+        attribute.AttributeClass is { ContainingType: null, ContainingNamespace: { Name: Namespace, ContainingNamespace.IsGlobalNamespace: true } } type
+        && type.Name.Length == shortName.Length + nameof(Attribute).Length
+        && type.Name.StartsWith(shortName, StringComparison.Ordinal);
+
+    /// <summary>Where an attribute stands.</summary>
+    public static Location Place(AttributeData attribute, ISymbol member) =>
+        attribute.ApplicationSyntaxReference is { } reference ? reference.SyntaxTree.GetLocation(reference.Span) : member.Locations[0];
+
+    /// <returns>The named argument, or <paramref name="otherwise"/> if it is not given; null if it has no constant value.</returns>
+    public static T? Named<T>(AttributeData attribute, string name, T otherwise)
+    {
+        foreach (var argument in attribute.NamedArguments)
+        {
+            if (argument.Key == name) return Constant<T>(argument.Value);
+        }
+
+        return otherwise;
+    }
+
+    /// <returns>The first argument of the constructor; null if it is missing or has no constant value.</returns>
+    public static T? First<T>(AttributeData attribute) =>
+        attribute.ConstructorArguments.IsDefaultOrEmpty ? default : Constant<T>(attribute.ConstructorArguments[0]);
+
+    private static T? Constant<T>(TypedConstant constant) =>
+        constant.Kind == TypedConstantKind.Primitive && constant.Value is T value ? value : default;
+}

@@ -1,0 +1,165 @@
+using System.Collections.Generic;
+using System.Collections.Immutable;
+using System.Linq;
+using System.Numerics;
+using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.Operations;
+using OdeDsl.Generators.Algebra;
+using OdeDsl.Generators.Diagnostics;
+
+namespace OdeDsl.Generators.Reading;
+
+/// <content>Calls: functions of System.Math become operators, all others are run in place.</content>
+internal sealed partial class BodyReader
+{
+    private Value Invocation(IInvocationOperation operation)
+    {
+        IMethodSymbol method = operation.TargetMethod;
+        if (MathFunctions.IsHome(method.ContainingType)) return MathCall(operation, method);
+        if (method.MethodKind is not (MethodKind.Ordinary or MethodKind.LocalFunction)) return Unsupported(operation);
+        bool isLocal = method.MethodKind == MethodKind.LocalFunction;
+        if (!isLocal && !method.IsStatic && !BelongsToModel(operation.Instance, operation, method)) return UnknownValue.Instance;
+        if (method.RefKind != RefKind.None) return Unsupported(operation);
+        if (Reach(method, !operation.IsVirtual, operation) is not IMethodSymbol reached) return UnknownValue.Instance;
+        if (Arguments(operation, isLocal) is not { } arguments) return UnknownValue.Instance;
+        if (Bodies.Find(reached, _compilation, _cancellation) is null) return WithoutSource(operation, reached);
+        return Call(reached, arguments);
+    }
+
+    /// <summary>The arguments in the order of the parameters, evaluated in the order of the text.</summary>
+    private Value[]? Arguments(IInvocationOperation operation, bool isLocal)
+    {
+        Value[] values = new Value[operation.TargetMethod.Parameters.Length];
+        foreach (IArgumentOperation argument in operation.Arguments)
+        {
+            IParameterSymbol parameter = argument.Parameter!;
+            // A local function could change a variable that it also gets by reference.
+            if (parameter.RefKind is RefKind.Ref or RefKind.Out || (isLocal && parameter.RefKind != RefKind.None))
+            {
+                Problem(Descriptors.ArgumentByReference, argument, UserText.Of(argument.Value.Syntax), operation.TargetMethod.Name, parameter.RefKind.ToString().ToLowerInvariant());
+                return null;
+            }
+
+            values[parameter.Ordinal] = Evaluate(argument.Value);
+        }
+
+        _current = operation;
+        return values;
+    }
+
+    /// <summary>Runs a member with source.</summary>
+    private Value Call(ISymbol member, Value[] arguments)
+    {
+        ISymbol definition = ((member as IMethodSymbol)?.PartialImplementationPart ?? member).OriginalDefinition;
+        if (_active.Contains(definition, SymbolEqualityComparer.Default)) return Recursion(definition);
+
+        // The value of a local function depends on variables around it, and while static members are set their order matters.
+        bool isReusable = definition is not IMethodSymbol { MethodKind: MethodKind.LocalFunction } && _initializing.Count == 0;
+        CallKey key = new(member, new(arguments));
+        if (isReusable && _known.TryGetValue(key, out Value? known)) return known;
+        Value value = Run(definition, arguments);
+        if (isReusable) _known[key] = value;
+        return value;
+    }
+
+    private UnknownValue Recursion(ISymbol definition)
+    {
+        int start = _active.FindIndex(active => SymbolEqualityComparer.Default.Equals(active, definition));
+        string cycle = string.Join(" → ", _active.Skip(start).Append(definition).Select(static member => member.Name));
+        return Problem(Descriptors.Recursion, _current?.Syntax.GetLocation() ?? definition.Locations[0], definition.Name, cycle);
+    }
+
+    private Value Run(ISymbol definition, Value[] arguments)
+    {
+        SyntaxNode body = Bodies.Find(definition, _compilation, _cancellation)!;
+        int problemsBefore = _problems.Found.Count;
+        bool isLocal = definition is IMethodSymbol { MethodKind: MethodKind.LocalFunction };
+        ImmutableDictionary<ISymbol, Value> variables = isLocal ? _flow.Variables : NoVariables;
+        if (definition is IMethodSymbol method)
+            variables = variables.SetItems(method.Parameters.Select(parameter => new KeyValuePair<ISymbol, Value>(parameter, arguments[parameter.Ordinal])));
+
+        Flow before = _flow;
+        _active.Add(definition);
+        try
+        {
+            _flow = Start(variables);
+            if (Block(body) is { } block) Execute(block);
+            if (_flow.Returned == _conditions.True) return _flow.Result!;
+            // The compiler reports a body that does not return; this stands for it unless something else is wrong here.
+            return _problems.Found.Count > problemsBefore ? UnknownValue.Instance : Problem(Descriptors.NotResolved, body.GetLocation(), definition.Name);
+        }
+        finally
+        {
+            _active.RemoveAt(_active.Count - 1);
+            _flow = before;
+        }
+    }
+
+    private IOperation? Block(SyntaxNode body) =>
+        _compilation.GetSemanticModel(body.SyntaxTree).GetOperation(body, _cancellation) switch
+        {
+            IMethodBodyBaseOperation method => method.BlockBody ?? method.ExpressionBody,
+            ILocalFunctionOperation function => function.Body,
+            IBlockOperation block => block,
+            _ => null,
+        };
+
+    private Value MathCall(IInvocationOperation operation, IMethodSymbol method)
+    {
+        if (Arguments(operation, isLocal: false) is not { } arguments) return UnknownValue.Instance;
+        if (arguments.Any(static argument => argument is UnknownValue)) return UnknownValue.Instance;
+        if (method.IsStatic && MathFunctions.Find(method) is { } function) return MathCall(operation, function, arguments);
+        if (method is { Name: "Round", Parameters: [{ Type.SpecialType: SpecialType.System_Double }, { Type.Name: "MidpointRounding" }] }
+            && arguments[1] is WholeValue { Choice: ChoiceLeaf<BigInteger> mode } && Rounding(mode.Value) is { } rounding)
+            return MathCall(operation, rounding, [arguments[0]]);
+        if (arguments.Length > 0 && arguments.All(static argument => argument is WholeValue)) return WholeCall(operation, method, arguments);
+        IParameterSymbol? imprecise = method.Parameters.FirstOrDefault(
+            static parameter => parameter.Type.SpecialType is SpecialType.System_Single or SpecialType.System_Decimal);
+        return imprecise is not null
+            ? Problem(Descriptors.NotDoublePrecision, operation, UserText.Of(operation.Syntax), imprecise.Type.ToDisplayString())
+            : Problem(Descriptors.FunctionNotSupported, operation, Name(method), MathFunctions.AdviceFor(method.Name));
+    }
+
+    private Value MathCall(IInvocationOperation operation, Operator function, Value[] arguments)
+    {
+        int[] nodes = arguments.Select(Node).ToArray();
+        int node = nodes.Length switch
+        {
+            1 => _graph.Unary(function, nodes[0]),
+            2 => _graph.Binary(function, nodes[0], nodes[1]),
+            _ => _graph.Ternary(function, nodes[0], nodes[1], nodes[2]),
+        };
+        if (MathFunctions.HasKink(function)) Remember(node, UserText.Of(operation.Syntax));
+        if (function != Operator.Sign) return new NumberValue(node);
+
+        // Math.Sign gives an int: as a number it is the node itself, in integer arithmetic a choice between its three values.
+        Choice<BigInteger> sign = Choice.Between(
+            _graph.Binary(Operator.Equal, node, _graph.Constant(1.0)),
+            new ChoiceLeaf<BigInteger>(BigInteger.One),
+            Choice.Between(
+                _graph.Binary(Operator.Equal, node, _graph.Constant(-1.0)),
+                new ChoiceLeaf<BigInteger>(BigInteger.MinusOne),
+                new ChoiceLeaf<BigInteger>(BigInteger.Zero)));
+        return new WholeValue(sign, node);
+    }
+
+    /// <summary>The values of System.MidpointRounding.</summary>
+    private static Operator? Rounding(BigInteger mode) => (int)mode switch
+    {
+        0 => Operator.Round,
+        1 => Operator.RoundAwayFromZero,
+        2 => Operator.Truncate,
+        3 => Operator.Floor,
+        4 => Operator.Ceiling,
+        _ => null,
+    };
+
+    private Value WholeCall(IInvocationOperation operation, IMethodSymbol method, Value[] arguments)
+    {
+        Choice<BigInteger>[] choices = arguments.Select(static argument => ((WholeValue)argument).Choice).ToArray();
+        if (!WholeNumbers.IsWhole(method.ReturnType) || WholeNumbers.Function(method.Name) is not { } function || choices.Length > 2)
+            return Problem(Descriptors.FunctionNotSupported, operation, Name(method), MathFunctions.AdviceFor(method.Name));
+        return Whole(operation, () => choices[0].Combine(
+            choices[choices.Length - 1], (a, b) => WholeNumbers.Fit(function(a, b), method.ReturnType, isChecked: true)));
+    }
+}

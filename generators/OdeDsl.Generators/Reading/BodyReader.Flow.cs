@@ -1,0 +1,83 @@
+using System;
+using System.Collections.Generic;
+using System.Collections.Immutable;
+using System.Numerics;
+using Microsoft.CodeAnalysis;
+using OdeDsl.Generators.Diagnostics;
+
+namespace OdeDsl.Generators.Reading;
+
+/// <content>Following both sides of a branch and joining them.</content>
+internal sealed partial class BodyReader
+{
+    private Value Fork(int condition, Func<Value> whenTrue, Func<Value> whenFalse)
+    {
+        if (condition == _conditions.True) return whenTrue();
+        if (condition == _conditions.False) return whenFalse();
+        Flow start = _flow;
+        Value first = whenTrue();
+        Flow afterFirst = _flow;
+        _flow = start;
+        Value second = whenFalse();
+        _flow = Join(condition, afterFirst, _flow);
+        return Choose(condition, first, second);
+    }
+
+    private void Fork(int condition, Action whenTrue, Action whenFalse) =>
+        Fork(condition, () => Done(whenTrue), () => Done(whenFalse));
+
+    private static UnknownValue Done(Action action)
+    {
+        action();
+        return UnknownValue.Instance;
+    }
+
+    private Flow Join(int condition, Flow first, Flow second)
+    {
+        if (ReferenceEquals(first, second)) return first;
+        ImmutableDictionary<ISymbol, Value> variables =
+            IsOver(first) ? second.Variables : IsOver(second) ? first.Variables : Join(condition, first.Variables, second.Variables);
+        Value? result = first.Result is null ? second.Result : second.Result is null ? first.Result : Choose(condition, first.Result, second.Result);
+        ImmutableDictionary<ISymbol, Value> afterBreak =
+            first.Broken == _conditions.False ? second.AfterBreak
+            : second.Broken == _conditions.False ? first.AfterBreak
+            : Join(condition, first.AfterBreak, second.AfterBreak);
+        return new(
+            variables,
+            _conditions.Choose(condition, first.Returned, second.Returned),
+            result,
+            _conditions.Choose(condition, first.Broken, second.Broken),
+            afterBreak);
+    }
+
+    /// <summary>Whether no execution goes on from here.</summary>
+    private bool IsOver(Flow flow) => flow.Returned == _conditions.True || flow.Broken == _conditions.True;
+
+    private ImmutableDictionary<ISymbol, Value> Join(
+        int condition, ImmutableDictionary<ISymbol, Value> first, ImmutableDictionary<ISymbol, Value> second)
+    {
+        if (ReferenceEquals(first, second)) return first;
+        ImmutableDictionary<ISymbol, Value>.Builder joined = NoVariables.ToBuilder();
+        foreach (KeyValuePair<ISymbol, Value> variable in first)
+        {
+            // A variable set on one side only cannot be read after the branch: C# demands definite assignment.
+            if (second.TryGetValue(variable.Key, out Value? other)) joined.Add(variable.Key, Choose(condition, variable.Value, other));
+        }
+
+        return joined.ToImmutable();
+    }
+
+    private Value Choose(int condition, Value whenTrue, Value whenFalse) => (whenTrue, whenFalse) switch
+    {
+        _ when whenTrue == whenFalse => whenTrue,
+        (NumberValue first, NumberValue second) => new NumberValue(_conditions.ChooseNumber(condition, first.Node, second.Node)),
+        (ConditionValue first, ConditionValue second) => new ConditionValue(_conditions.Choose(condition, first.Node, second.Node)),
+        (WholeValue first, WholeValue second) => Bounded(Choice.Between(condition, first.Choice, second.Choice)),
+        (LiteralValue first, LiteralValue) => Imprecise(_current!, first),
+        _ => UnknownValue.Instance,
+    };
+
+    private Value Bounded(Choice<BigInteger> choice) => choice.Count <= Choice.MaximumCount
+        ? new WholeValue(choice)
+        : Problem(Descriptors.TooManyCases, _current!, UserText.Of(_current!.Syntax), Choice.MaximumCount.ToString(System.Globalization.CultureInfo.InvariantCulture));
+}

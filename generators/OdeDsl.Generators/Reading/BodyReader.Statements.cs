@@ -1,0 +1,89 @@
+using System.Runtime.CompilerServices;
+using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.Operations;
+using OdeDsl.Generators.Diagnostics;
+
+namespace OdeDsl.Generators.Reading;
+
+/// <content>Statements.</content>
+internal sealed partial class BodyReader
+{
+    private void Execute(IOperation statement)
+    {
+        _cancellation.ThrowIfCancellationRequested();
+        RuntimeHelpers.EnsureSufficientExecutionStack();
+        _current = statement;
+        switch (statement)
+        {
+            case IBlockOperation block:
+                foreach (IOperation inner in block.Operations)
+                {
+                    if (IsOver(_flow)) break;
+                    Execute(inner);
+                }
+
+                break;
+            case IVariableDeclarationGroupOperation group:
+                foreach (IVariableDeclarationOperation declaration in group.Declarations) Declare(declaration);
+                break;
+            case IExpressionStatementOperation { Operation: IInvocationOperation call }:
+                Problem(Descriptors.StatementNotSupported, call, "A call whose result is not used", "use its result, or remove it");
+                break;
+            case IExpressionStatementOperation expression:
+                Evaluate(expression.Operation);
+                break;
+            case IReturnOperation { Kind: OperationKind.Return, ReturnedValue: { } value }:
+                Return(Evaluate(value));
+                break;
+            case IConditionalOperation branch:
+                Fork(
+                    Condition(branch.Condition),
+                    () => Execute(branch.WhenTrue),
+                    () =>
+                    {
+                        if (branch.WhenFalse is not null) Execute(branch.WhenFalse);
+                    });
+                break;
+            case ISwitchOperation choice:
+                Switch(choice);
+                break;
+            case IBranchOperation { BranchKind: BranchKind.Break }:
+                Break();
+                break;
+            case IEmptyOperation or ILocalFunctionOperation:
+                break;
+            case IInvalidOperation:
+                Unresolved(statement);
+                break;
+            default:
+                (string what, string instead) = Unreadable.Describe(statement);
+                Problem(Descriptors.StatementNotSupported, Unreadable.Place(statement), what, instead);
+                break;
+        }
+    }
+
+    private void Declare(IVariableDeclarationOperation declaration)
+    {
+        foreach (IVariableDeclaratorOperation declarator in declaration.Declarators)
+        {
+            IVariableInitializerOperation? initializer = declarator.Initializer ?? declaration.Initializer;
+            if (initializer is null) continue;
+            Value value = declarator.Symbol.IsRef
+                ? Problem(Descriptors.ExpressionNotSupported, declarator, "A reference", "use a plain local variable")
+                : Evaluate(initializer.Value);
+            Assign(declarator.Symbol, value);
+        }
+    }
+
+    private void Return(Value value)
+    {
+        Value result = _flow.Result is null ? value : Choose(_flow.Returned, _flow.Result, value);
+        _flow = _flow with { Returned = _conditions.True, Result = result };
+    }
+
+    private void Break()
+    {
+        var after = _flow.Broken == _conditions.False ? _flow.Variables : Join(_flow.Broken, _flow.AfterBreak, _flow.Variables);
+        _flow = _flow with { Broken = _conditions.True, AfterBreak = after };
+    }
+}

@@ -1,0 +1,166 @@
+using System.Collections.Generic;
+using System.Collections.Immutable;
+using System.Linq;
+using System.Numerics;
+using System.Runtime.CompilerServices;
+using System.Threading;
+using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.Operations;
+using OdeDsl.Generators.Algebra;
+using OdeDsl.Generators.Diagnostics;
+
+namespace OdeDsl.Generators.Reading;
+
+/// <summary>
+/// Runs the bodies of a model's members on expressions instead of numbers. What is read is the compiler's <em>bound</em> operations,
+/// so that conversions, integer division, constants and overloads mean what C# means.
+/// </summary>
+/// <remarks>
+/// Branches are followed on both sides and joined by a conditional expression. Members of the model and static methods with source in
+/// the compilation are run in place, once for each list of arguments. What is not understood is reported where it stands, and stands
+/// for <see cref="UnknownValue"/> from there on.
+/// </remarks>
+internal sealed partial class BodyReader
+{
+    private static readonly ImmutableDictionary<ISymbol, Value> NoVariables =
+        ImmutableDictionary.Create<ISymbol, Value>(SymbolEqualityComparer.Default);
+
+    private readonly INamedTypeSymbol _model;
+    private readonly Compilation _compilation;
+    private readonly IReadOnlyDictionary<ISymbol, int> _leaves;
+    private readonly ExpressionGraph _graph;
+    private readonly Conditions _conditions;
+    private readonly Problems _problems;
+    private readonly CancellationToken _cancellation;
+
+    private readonly Dictionary<CallKey, Value> _known = [];
+    private readonly List<ISymbol> _active = [];
+    private Flow _flow;
+    private IOperation? _current;
+
+    /// <param name="leaves">The nodes of the states and parameters.</param>
+    public BodyReader(
+        INamedTypeSymbol model,
+        Compilation compilation,
+        IReadOnlyDictionary<ISymbol, int> leaves,
+        ExpressionGraph graph,
+        Problems problems,
+        CancellationToken cancellation)
+    {
+        _model = model;
+        _compilation = compilation;
+        _leaves = leaves;
+        _graph = graph;
+        _conditions = new(graph);
+        _problems = problems;
+        _cancellation = cancellation;
+        _flow = Start(NoVariables);
+    }
+
+    /// <summary>The user's text of conditions and of functions with a kink, by node.</summary>
+    public Dictionary<int, string> ConditionTexts { get; } = [];
+
+    /// <summary>Reads a rate or an observable.</summary>
+    /// <returns>The node of its value, or null with a problem reported.</returns>
+    public int? Read(ISymbol member)
+    {
+        Value[] arguments = member is IMethodSymbol { Parameters.Length: 1 } ? [new NumberValue(_graph.Leaf(Operator.Time))] : [];
+        try
+        {
+            return Call(member, arguments) is NumberValue number ? number.Node : null;
+        }
+        catch (System.InsufficientExecutionStackException)
+        {
+            _problems.Report(Descriptors.EquationTooDeep, member.Locations[0], member.Name);
+            return null;
+        }
+    }
+
+    private Flow Start(ImmutableDictionary<ISymbol, Value> variables) => new(variables, _conditions.False, null, _conditions.False, NoVariables);
+
+    private Value Evaluate(IOperation operation)
+    {
+        _cancellation.ThrowIfCancellationRequested();
+        RuntimeHelpers.EnsureSufficientExecutionStack();
+        _current = operation;
+        if (operation.ConstantValue is { HasValue: true, Value: var constant }) return Constant(constant, operation);
+        return operation switch
+        {
+            ILocalReferenceOperation local => Variable(local.Local, operation),
+            IParameterReferenceOperation parameter => Variable(parameter.Parameter, operation),
+            IInstanceReferenceOperation { ReferenceKind: InstanceReferenceKind.ContainingTypeInstance } => ModelValue.Instance,
+            IFieldReferenceOperation field => Field(field),
+            IPropertyReferenceOperation property => Property(property),
+            IInvocationOperation invocation => Invocation(invocation),
+            IBinaryOperation binary => Binary(binary),
+            IUnaryOperation unary => Unary(unary),
+            IConversionOperation conversion => Conversion(conversion),
+            IConditionalOperation { WhenFalse: not null } conditional => Conditional(conditional),
+            ISwitchExpressionOperation choice => SwitchExpression(choice),
+            IIsPatternOperation test => new ConditionValue(Match(test.Pattern, Evaluate(test.Value), UserText.Of(test.Value.Syntax))),
+            ISimpleAssignmentOperation assignment => Assignment(assignment),
+            ICompoundAssignmentOperation assignment => CompoundAssignment(assignment),
+            IIncrementOrDecrementOperation step => Step(step),
+            IInvalidOperation => Unresolved(operation),
+            _ => Unsupported(operation),
+        };
+    }
+
+    private Value Constant(object? constant, IOperation operation) => constant switch
+    {
+        double number => new NumberValue(_graph.Constant(number)),
+        bool condition => new ConditionValue(_graph.Constant(condition)),
+        float or decimal => new LiteralValue(constant),
+        not null when WholeNumbers.Read(constant) is { } whole => new WholeValue(new ChoiceLeaf<BigInteger>(whole)),
+        _ => Problem(Descriptors.ExpressionNotSupported, operation, "A text or null", "use numbers and conditions"),
+    };
+
+    private Value Variable(ISymbol variable, IOperation operation)
+    {
+        if (_flow.Variables.TryGetValue(variable, out Value? value)) return value;
+        return variable.ContainingSymbol is IMethodSymbol { MethodKind: MethodKind.Constructor }
+            ? Problem(Descriptors.ConstructorSetsValue, operation, variable.Name)
+            : Unresolved(operation);
+    }
+
+    private Value Conditional(IConditionalOperation operation)
+    {
+        int condition = Condition(operation.Condition);
+        return Fork(condition, () => Evaluate(operation.WhenTrue), () => Evaluate(operation.WhenFalse!));
+    }
+
+    /// <summary>The node of a condition. An unknown condition becomes one that is decided by nothing, so that both its sides are still read.</summary>
+    private int Condition(IOperation operation) => ConditionOf(Evaluate(operation));
+
+    private int ConditionOf(Value value) => value is ConditionValue condition ? condition.Node : Undecided;
+
+    /// <summary>Stands for a condition with a problem. It never reaches a model, because models with problems keep no equation.</summary>
+    private int Undecided => _graph.Binary(Operator.Less, _graph.Leaf(Operator.Time), _graph.Constant(double.NaN));
+
+    private int Node(Value value) => value switch
+    {
+        NumberValue number => number.Node,
+        WholeValue { Number: { } number } => number,
+        WholeValue whole => whole.Choice.Fold(leaf => _graph.Constant(WholeNumbers.ToDouble(leaf)), _conditions.ChooseNumber),
+        _ => _graph.Constant(double.NaN),
+    };
+
+    private UnknownValue Problem(DiagnosticDescriptor descriptor, IOperation operation, params object[] arguments) =>
+        Problem(descriptor, operation.Syntax.GetLocation(), arguments);
+
+    private UnknownValue Problem(DiagnosticDescriptor descriptor, Location place, params object[] arguments)
+    {
+        _problems.Report(descriptor, place, arguments);
+        return UnknownValue.Instance;
+    }
+
+    private UnknownValue Unresolved(IOperation operation) => Problem(Descriptors.NotResolved, operation, UserText.Of(operation.Syntax));
+
+    private UnknownValue Unsupported(IOperation operation)
+    {
+        (string what, string instead) = Unreadable.Describe(operation);
+        return Problem(Descriptors.ExpressionNotSupported, operation, what, instead);
+    }
+
+    private sealed record CallKey(ISymbol Member, EquatableArray<Value> Arguments);
+}

@@ -1,0 +1,105 @@
+using System.Collections.Generic;
+using System.Linq;
+using System.Threading;
+using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.CSharp.Syntax;
+using OdeDsl.Generators.Diagnostics;
+
+namespace OdeDsl.Generators.Reading;
+
+/// <summary>Finds the rates and observables of a model and checks their declarations. Their bodies are read elsewhere.</summary>
+internal sealed class EquationReader(
+    INamedTypeSymbol model, PropertyReader properties, Compilation compilation, Problems problems, CancellationToken cancellation)
+{
+    /// <summary>The member that computes the rate, by the state's name. Null where it cannot be read.</summary>
+    public Dictionary<string, ISymbol?> Rates { get; } = [];
+
+    public List<(ISymbol Member, string Unit)> Observables { get; } = [];
+
+    public void Read()
+    {
+        foreach (ISymbol member in model.GetMembers())
+        {
+            cancellation.ThrowIfCancellationRequested();
+            if (Attributes.Find(member, Attributes.State) is not null || Attributes.Find(member, Attributes.Parameter) is not null) continue;
+            if (Attributes.Find(member, Attributes.Rate) is { } rate) ReadRate(member, rate);
+            if (Attributes.Find(member, Attributes.Observable) is { } observable) ReadObservable(member, observable);
+        }
+
+        foreach (DeclaredState state in properties.States)
+        {
+            if (!Rates.ContainsKey(state.Property.Name))
+                problems.Report(Descriptors.MissingRate, state.Symbol.Locations[0], state.Property.Name);
+        }
+    }
+
+    private void ReadRate(ISymbol member, AttributeData attribute)
+    {
+        Location place = Attributes.Place(attribute, member);
+        bool readable = IsReadable(member, Attributes.Rate);
+        string? name = Attributes.First<string>(attribute);
+        if (name is null)
+        {
+            problems.Report(Descriptors.AttributeNotReadable, place, Attributes.Rate, member.Name);
+            return;
+        }
+
+        bool isState = properties.States.Any(state => state.Property.Name == name) || properties.FailedStates.Contains(name);
+        if (!isState && model.GetMembers(name).IsEmpty)
+            problems.Report(Descriptors.RateOfUnknownMember, place, member.Name, name, model.Name);
+        else if (!isState)
+            problems.Report(Descriptors.RateOfOtherMember, place, member.Name, name);
+        else if (Rates.TryGetValue(name, out ISymbol? first) && first is not null)
+            problems.Report(Descriptors.SecondRate, place, name, first.Name, member.Name);
+        else
+            Rates[name] = readable ? member : null;
+    }
+
+    private void ReadObservable(ISymbol member, AttributeData attribute)
+    {
+        if (!IsReadable(member, Attributes.Observable)) return;
+        string? unit = Attributes.Named(attribute, "Unit", "");
+        if (Observables.Any(other => other.Member.Name == member.Name))
+            problems.Report(Descriptors.DuplicateObservable, member.Locations[0], member.Name);
+        else
+            Observables.Add((member, unit ?? ""));
+    }
+
+    private bool IsReadable(ISymbol member, string role)
+    {
+        Location place = member.Locations[0];
+        ITypeSymbol? type = member switch
+        {
+            IPropertySymbol property => property.Type,
+            IMethodSymbol method => method.ReturnType,
+            _ => null,
+        };
+        if (member.IsStatic) problems.Report(Descriptors.EquationStatic, place, role, member.Name);
+        else if (member is IMethodSymbol { IsGenericMethod: true }) problems.Report(Descriptors.EquationGeneric, place, role, member.Name);
+        else if (type?.SpecialType != SpecialType.System_Double)
+            problems.Report(Descriptors.EquationNotDouble, TypePlace(member) ?? place, role, member.Name, type?.ToDisplayString() ?? "");
+        else if (!TakesOnlyTime(member)) problems.Report(Descriptors.EquationArguments, place, role, member.Name);
+        else if (Bodies.Find(member, compilation, cancellation) is null) problems.Report(Descriptors.EquationWithoutBody, place, role, member.Name);
+        else if (Overriding.CanBeOverridden(member, model)) problems.Report(Descriptors.MemberOverridable, place, member.Name, model.Name);
+        else return true;
+        return false;
+    }
+
+    /// <summary>Whether the member takes nothing, or the time under one of its two usual names: any other number would silently get the time.</summary>
+    private static bool TakesOnlyTime(ISymbol member) => member switch
+    {
+        IMethodSymbol { Parameters: [var parameter] } =>
+            parameter is { Type.SpecialType: SpecialType.System_Double, RefKind: RefKind.None, Name: "time" or "t" },
+        IMethodSymbol { Parameters: [] } => true,
+        IPropertySymbol { IsIndexer: false } => true,
+        _ => false,
+    };
+
+    private Location? TypePlace(ISymbol member) =>
+        member.DeclaringSyntaxReferences.FirstOrDefault()?.GetSyntax(cancellation) switch
+        {
+            PropertyDeclarationSyntax property => property.Type.GetLocation(),
+            MethodDeclarationSyntax method => method.ReturnType.GetLocation(),
+            _ => null,
+        };
+}
