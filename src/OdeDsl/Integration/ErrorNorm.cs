@@ -1,0 +1,92 @@
+using System.Numerics;
+using System.Runtime.InteropServices;
+
+namespace OdeDsl.Integration;
+
+/// <summary>
+/// Measures an error against the tolerances: the root mean square of error_i / (a_i + r max(|y_i| before, |y_i| after))
+/// (Hairer, Norsett and Wanner, Solving ODEs I, equation II.4.11). Tangents are measured as a group of their own, so that
+/// they never relax the test of the state; their absolute tolerance follows their length (see <see cref="FollowTangents"/>).
+/// </summary>
+internal sealed class ErrorNorm
+{
+    private readonly int stateCount;
+    private readonly int dimension;
+    private readonly double[] extents;
+
+    /// <param name="relative">The relative tolerance r.</param>
+    /// <param name="absolute">The absolute tolerance of each state.</param>
+    /// <param name="tangentCount">The number of tangents.</param>
+    public ErrorNorm(double relative, ReadOnlySpan<double> absolute, int tangentCount)
+    {
+        stateCount = absolute.Length;
+        dimension = stateCount * (1 + tangentCount);
+        Relative = relative;
+        // Beyond the last component the error is zero; a tolerance of one there avoids 0 / 0.
+        Absolute = StageSums.Allocate(dimension);
+        Array.Fill(Absolute, 1.0);
+        absolute.CopyTo(Absolute);
+        extents = absolute.ToArray();
+    }
+
+    /// <summary>The relative tolerance.</summary>
+    public double Relative { get; }
+
+    /// <summary>The absolute tolerances, padded.</summary>
+    public double[] Absolute { get; }
+
+    /// <summary>The norm of an error vector; all vectors padded. Not a number if a component is.</summary>
+    public double Measure(double[] error, double[] before, double[] after)
+    {
+        if (dimension != stateCount)
+        {
+            double state = MeanSquare(error, before, after, 0, stateCount);
+            double tangents = MeanSquare(error, before, after, stateCount, dimension);
+            return Math.Sqrt(Math.Max(state, tangents));
+        }
+
+        ref double e = ref MemoryMarshal.GetArrayDataReference(error);
+        ref double b = ref MemoryMarshal.GetArrayDataReference(before);
+        ref double a = ref MemoryMarshal.GetArrayDataReference(after);
+        ref double floor = ref MemoryMarshal.GetArrayDataReference(Absolute);
+        var relative = new Vector<double>(Relative);
+        Vector<double> sum = Vector<double>.Zero;
+        nuint count = (nuint)error.Length;
+        for (nuint i = 0; i < count; i += (nuint)Vector<double>.Count)
+        {
+            Vector<double> size = Vector.Max(Vector.Abs(Vector.LoadUnsafe(ref b, i)), Vector.Abs(Vector.LoadUnsafe(ref a, i)));
+            Vector<double> ratio = Vector.LoadUnsafe(ref e, i) / Vector.MultiplyAddEstimate(relative, size, Vector.LoadUnsafe(ref floor, i));
+            sum = Vector.MultiplyAddEstimate(ratio, ratio, sum);
+        }
+
+        return Math.Sqrt(Vector.Sum(sum) / dimension);
+    }
+
+    /// <summary>
+    /// Sets the absolute tolerances of each tangent to r times its length, where the length is the largest component
+    /// counted in extents of the states: an error that is small against the whole tangent does no harm.
+    /// </summary>
+    public void FollowTangents(ReadOnlySpan<double> y)
+    {
+        for (int start = stateCount; start < dimension; start += stateCount)
+        {
+            double length = 0;
+            for (int i = 0; i < stateCount; i++) length = Math.Max(length, Math.Abs(y[start + i]) / extents[i]);
+            // A zero tangent stays zero; any tolerance serves.
+            if (length == 0) length = 1 / extents[0];
+            for (int i = 0; i < stateCount; i++) Absolute[start + i] = Relative * length * extents[i];
+        }
+    }
+
+    private double MeanSquare(double[] error, double[] before, double[] after, int from, int to)
+    {
+        double sum = 0;
+        for (int i = from; i < to; i++)
+        {
+            double ratio = error[i] / (Absolute[i] + Relative * Math.Max(Math.Abs(before[i]), Math.Abs(after[i])));
+            sum += ratio * ratio;
+        }
+
+        return sum / (to - from);
+    }
+}

@@ -1,0 +1,23 @@
+namespace OdeDsl.Integration;
+
+/// <summary>
+/// A differential equation as the steppers see it: y' = f(t, y). Implemented by structs, so that the rates are compiled into
+/// the stepper's loops. A field may be made of blocks of equal size: the state first, then tangents carried along by it.
+/// </summary>
+internal interface IVectorField
+{
+    /// <summary>The number of components of y.</summary>
+    int Dimension { get; }
+
+    /// <summary>The size of a block: the number of states.</summary>
+    int BlockSize { get; }
+
+    /// <summary>Computes f(t, y).</summary>
+    void Rates(double time, ReadOnlySpan<double> y, Span<double> rates);
+
+    /// <summary>
+    /// Computes the Jacobian of the first block by rows. Implicit methods use it for every block: the blocks of tangents have the same
+    /// one, and their dependence on the state is left to the iteration (the state does not depend on them).
+    /// </summary>
+    void Jacobian(double time, ReadOnlySpan<double> y, Span<double> jacobian);
+}

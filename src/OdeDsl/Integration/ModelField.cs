@@ -1,0 +1,26 @@
+using OdeDsl.Modeling;
+
+namespace OdeDsl.Integration;
+
+/// <summary>A model's rates within the regime that <see cref="Motion"/> holds locked, or along the surface it slides on.</summary>
+internal readonly struct ModelField<TSystem>(double[] parameters, double[] regime, SlidingSurface sliding) : IVectorField
+    where TSystem : struct, IOdeSystem
+{
+    private static readonly int StateCount = TSystem.Description.States.Length;
+
+    public int Dimension => StateCount;
+
+    public int BlockSize => StateCount;
+
+    public void Rates(double time, ReadOnlySpan<double> y, Span<double> rates)
+    {
+        if (sliding.IsActive) sliding.Rates(time, y, rates);
+        else TSystem.Rates(time, y, parameters, regime, rates);
+    }
+
+    public void Jacobian(double time, ReadOnlySpan<double> y, Span<double> jacobian)
+    {
+        if (sliding.IsActive) sliding.Jacobian(time, y, jacobian);
+        else TSystem.StateJacobian(time, y, parameters, regime, jacobian);
+    }
+}

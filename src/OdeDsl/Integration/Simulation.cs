@@ -1,0 +1,39 @@
+using OdeDsl.Modeling;
+
+namespace OdeDsl.Integration;
+
+/// <summary>The loop of a recorded run.</summary>
+internal static class Simulation
+{
+    private const double ProgressInterval = 0.01;
+
+    public static Trajectory Run(
+        DynamicSystem system, double until, SimulationOptions options, IProgress<double>? progress, CancellationToken cancellationToken)
+    {
+        var motion = new Motion(system, options, tangentCount: 0);
+        var run = new Trajectory(system, options.From, motion.Statistics);
+        double reported = 0;
+        try
+        {
+            motion.Begin(options.From, system.InitialState);
+            while (motion.Time != until)
+            {
+                if (cancellationToken.IsCancellationRequested)
+                    throw MotionFailure.Cancelled(motion, system.StateCount, run, cancellationToken);
+                StepStatus status = motion.Step(until);
+                if (status != StepStatus.Accepted) throw MotionFailure.Of(status, motion, system.StateCount, run);
+                run.Append(motion.Current);
+                double done = (motion.Time - options.From) / (until - options.From);
+                if (progress is null || done - reported < ProgressInterval) continue;
+                reported = done;
+                progress.Report(done);
+            }
+        }
+        catch (Exception thrown) when (thrown is not IIntegrationFailure)
+        {
+            throw MotionFailure.Of(thrown, motion, system.StateCount, run);
+        }
+
+        return run;
+    }
+}

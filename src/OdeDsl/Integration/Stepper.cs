@@ -1,0 +1,278 @@
+namespace OdeDsl.Integration;
+
+/// <summary>
+/// One integration method at work on one field: takes steps under error control, holds the last step for continuation.
+/// Time may run in either direction. No member allocates after construction. The loop over steps belongs to the caller.
+/// </summary>
+internal abstract class Stepper
+{
+    /// <summary>A step is given up when a tenth of it no longer changes the time (Hairer, Norsett and Wanner, Solving ODEs I, appendix).</summary>
+    private const double GiveUpPart = 0.1;
+
+    /// <summary>A step that would come this close to the limit, in parts of itself, is stretched to land on it.</summary>
+    private const double Stretch = 1.01;
+
+    /// <summary>Factor on a step that met values that are not finite.</summary>
+    private const double NotFiniteFactor = 0.25;
+
+    private bool stepHeld;
+    private bool ratesKnown;
+    private bool endMoved;
+    private bool fieldChanged;
+    private bool estimateStep;
+    private bool denseReady;
+
+    protected Stepper(int dimension, ErrorNorm norm, IntegrationStatistics statistics)
+    {
+        Dimension = dimension;
+        Norm = norm;
+        Statistics = statistics;
+        Start = StageSums.Allocate(dimension);
+        End = StageSums.Allocate(dimension);
+        StartRates = StageSums.Allocate(dimension);
+        Scratch = StageSums.Allocate(dimension);
+        D2 = StageSums.Allocate(dimension);
+        D3 = StageSums.Allocate(dimension);
+        D4 = StageSums.Allocate(dimension);
+    }
+
+    /// <summary>The number of components.</summary>
+    public int Dimension { get; }
+
+    /// <summary>The method's name for reports.</summary>
+    public abstract IntegrationMethod Method { get; }
+
+    /// <summary>Where the last step started.</summary>
+    public double StartTime { get; private set; }
+
+    /// <summary>Where the last step ended, and the next will start.</summary>
+    public double EndTime { get; private set; }
+
+    /// <summary>The state at <see cref="StartTime"/>, padded.</summary>
+    public double[] Start { get; private set; }
+
+    /// <summary>The state at <see cref="EndTime"/>, padded.</summary>
+    public double[] End { get; private set; }
+
+    /// <summary>The size of the next step, signed.</summary>
+    public double Proposed { get; protected set; }
+
+    /// <summary>The size of the step last tried, signed.</summary>
+    public double LastTried { get; private set; }
+
+    /// <summary>The largest step permitted.</summary>
+    public double MaximumStep { get; set; } = double.PositiveInfinity;
+
+    /// <summary>The number of attempts permitted in all.</summary>
+    public long MaximumAttempts { get; set; } = long.MaxValue;
+
+    /// <summary>Whether the motion suits the other kind of method better.</summary>
+    public bool SuggestsChange { get; protected set; }
+
+    /// <summary>The coefficients that continue the last step, see <see cref="DenseStep"/>.</summary>
+    public double[] D2 { get; }
+
+    /// <inheritdoc cref="D2"/>
+    public double[] D3 { get; }
+
+    /// <inheritdoc cref="D2"/>
+    public double[] D4 { get; }
+
+    /// <summary>The order of the method, for the starting step.</summary>
+    protected abstract int Order { get; }
+
+    protected ErrorNorm Norm { get; }
+
+    protected IntegrationStatistics Statistics { get; }
+
+    /// <summary>The rates at <see cref="Start"/>, padded.</summary>
+    protected double[] StartRates { get; set; }
+
+    protected double[] Scratch { get; }
+
+    /// <summary>Computes the rates into a padded vector and counts the evaluation.</summary>
+    public abstract void Rates(double time, double[] y, double[] rates);
+
+    /// <summary>Starts anew from a state.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="y">The state.</param>
+    /// <param name="step">The size of the first step; 0: estimated from the rates.</param>
+    public void Begin(double time, ReadOnlySpan<double> y, double step)
+    {
+        EndTime = StartTime = time;
+        y[..Dimension].CopyTo(Start);
+        y[..Dimension].CopyTo(End);
+        Norm.FollowTangents(Start);
+        Proposed = step;
+        stepHeld = false;
+        SuggestsChange = false;
+        FieldChanged();
+        estimateStep = step == 0;
+    }
+
+    /// <summary>Tells that the caller moved <see cref="End"/>: the rates there must be computed anew.</summary>
+    public void EndMoved() => endMoved = true;
+
+    /// <summary>
+    /// Tells that the rates have another formula after the last step: nothing learnt carries over, and the next step is no longer than
+    /// a first step would be.
+    /// </summary>
+    public void FieldChanged() => endMoved = estimateStep = fieldChanged = true;
+
+    /// <summary>Takes one step under error control.</summary>
+    /// <param name="limit">Where to stop at the latest; a step that comes near lands on it exactly.</param>
+    /// <returns>The outcome; unless accepted, the position is where the last accepted step ended.</returns>
+    public StepStatus Step(double limit)
+    {
+        MoveOn();
+        StepStatus status = Prepare(limit);
+        if (status == StepStatus.Accepted) status = TryUntilAccepted(limit);
+        if (status != StepStatus.Accepted) Undo();
+        return status;
+    }
+
+    /// <summary>
+    /// Takes the last step again with another end inside it. Neither tested for its error (the longer step passed) nor a guide for the
+    /// next step. If it fails, the step is undone, and the next will be at most half as long.
+    /// </summary>
+    /// <param name="endTime">The new end.</param>
+    /// <returns>Whether the step succeeded.</returns>
+    public bool Retake(double endTime)
+    {
+        double h = endTime - StartTime;
+        (StepStatus outcome, _) = Attempt(h);
+        denseReady = false;
+        if (outcome == StepStatus.Accepted)
+        {
+            EndTime = endTime;
+            return true;
+        }
+
+        Undo();
+        Proposed = h / 2;
+        return false;
+    }
+
+    /// <summary>Undoes the last step: the position is its start again.</summary>
+    public void Undo()
+    {
+        stepHeld = false;
+        EndTime = StartTime;
+        Start.CopyTo(End, 0);
+    }
+
+    /// <summary>Evaluates the continuation of the last step.</summary>
+    /// <param name="time">A time inside the step.</param>
+    /// <param name="y">Receives the leading components, as many as fit.</param>
+    public void Evaluate(double time, Span<double> y)
+    {
+        EnsureDense();
+        double theta = (time - StartTime) / (EndTime - StartTime);
+        DenseStep.Evaluate(theta, Start, End, D2, D3, D4, y);
+    }
+
+    /// <summary>Makes the coefficients of the continuation ready.</summary>
+    public void EnsureDense()
+    {
+        if (denseReady) return;
+        ComputeDense(EndTime - StartTime);
+        denseReady = true;
+    }
+
+    /// <summary>Tries a step from <see cref="Start"/> with the rates <see cref="StartRates"/>; leaves the result in <see cref="End"/>.</summary>
+    /// <returns>Accepted with the error norm, or what went wrong.</returns>
+    protected abstract (StepStatus Outcome, double Error) Attempt(double h);
+
+    /// <summary>Learns from an accepted step and proposes the size of the next.</summary>
+    protected abstract double Accept(double h, double error, bool rejectedBefore);
+
+    /// <summary>Learns from a rejected step and proposes a smaller one.</summary>
+    protected abstract double Reject(double h, double error, StepStatus outcome);
+
+    /// <summary>Computes <see cref="D2"/>, <see cref="D3"/>, <see cref="D4"/> for the step held.</summary>
+    protected abstract void ComputeDense(double h);
+
+    /// <summary>Brings the rates at the end of the step held to <see cref="StartRates"/>, if the method knows them.</summary>
+    /// <returns>Whether it does.</returns>
+    protected abstract bool CarryRates();
+
+    /// <summary>Drops everything learnt about the field.</summary>
+    protected abstract void Forget();
+
+    private void MoveOn()
+    {
+        denseReady = false;
+        if (stepHeld)
+        {
+            stepHeld = false;
+            ratesKnown = CarryRates();
+            StartTime = EndTime;
+            (Start, End) = (End, Start);
+            Norm.FollowTangents(Start);
+        }
+
+        if (endMoved) ratesKnown = false;
+        if (fieldChanged) Forget();
+        endMoved = fieldChanged = false;
+    }
+
+    private StepStatus Prepare(double limit)
+    {
+        double direction = limit < StartTime ? -1 : 1;
+        Proposed = direction * Math.Min(Math.Abs(Proposed), MaximumStep);
+        if (!ratesKnown)
+        {
+            Rates(StartTime, Start, StartRates);
+            if (!AllFinite(StartRates)) return StepStatus.NotFinite;
+            ratesKnown = true;
+        }
+
+        if (!estimateStep) return StepStatus.Accepted;
+        double longest = Math.Min(Math.Abs(limit - StartTime), MaximumStep);
+        // The continuation of the last step is not needed any more: its vectors serve as workspace.
+        double estimate = StartingStep.Estimate(this, StartTime, direction * longest, Start, StartRates, D2, D3, Norm, Order);
+        if (Proposed == 0 || Math.Abs(estimate) < Math.Abs(Proposed)) Proposed = estimate;
+        estimateStep = false;
+        return StepStatus.Accepted;
+    }
+
+    private StepStatus TryUntilAccepted(double limit)
+    {
+        var failure = StepStatus.StepTooSmall;
+        for (bool rejected = false; ; rejected = true)
+        {
+            if (Statistics.AcceptedSteps + Statistics.RejectedSteps >= MaximumAttempts) return StepStatus.TooManySteps;
+            double remaining = limit - StartTime;
+            bool landing = Math.Abs(Proposed) * Stretch >= Math.Abs(remaining);
+            double h = LastTried = landing ? remaining : Proposed;
+            if (StartTime + GiveUpPart * h == StartTime && !(landing && !rejected)) return failure;
+            (StepStatus outcome, double error) = Attempt(h);
+            denseReady = false;
+            if (outcome == StepStatus.Accepted && error <= 1)
+            {
+                double next = Accept(h, error, rejected);
+                // The shortened last step does not set the next one.
+                if (landing && Math.Abs(next) < Math.Abs(Proposed)) next = Proposed;
+                Proposed = Math.CopySign(Math.Min(Math.Abs(next), MaximumStep), h);
+                EndTime = landing ? limit : StartTime + h;
+                stepHeld = true;
+                Statistics.AcceptedSteps++;
+                return StepStatus.Accepted;
+            }
+
+            Statistics.RejectedSteps++;
+            failure = outcome == StepStatus.Accepted ? StepStatus.StepTooSmall : outcome;
+            Proposed = outcome == StepStatus.NotFinite ? h * NotFiniteFactor : Reject(h, error, outcome);
+        }
+    }
+
+    private static bool AllFinite(double[] values)
+    {
+        foreach (double value in values)
+        {
+            if (!double.IsFinite(value)) return false;
+        }
+
+        return true;
+    }
+}

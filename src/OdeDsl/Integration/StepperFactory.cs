@@ -1,0 +1,23 @@
+using OdeDsl.Modeling;
+
+namespace OdeDsl.Integration;
+
+/// <summary>Makes a method for a system, with the system's equations compiled in.</summary>
+internal sealed class StepperFactory(
+    double[] regime, SlidingSurface sliding, int tangentCount, ErrorNorm norm, IntegrationStatistics statistics)
+    : ISystemOperation<Stepper>
+{
+    public Stepper Run<TSystem>(DynamicSystem system)
+        where TSystem : struct, IOdeSystem
+    {
+        var field = new ModelField<TSystem>(system.Parameters.ToArray(), regime, sliding);
+        return tangentCount == 0 ? Make(field) : Make(new VariationalField<ModelField<TSystem>>(field, tangentCount));
+    }
+
+    private Stepper Make<TField>(TField field)
+        where TField : struct, IVectorField
+    {
+        Stepper stepper = new DormandPrince54<TField>(field, norm, statistics);
+        return stepper;
+    }
+}

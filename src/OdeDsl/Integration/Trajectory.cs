@@ -1,0 +1,161 @@
+using System.Runtime.CompilerServices;
+using OdeDsl.Modeling;
+
+namespace OdeDsl.Integration;
+
+/// <summary>
+/// A simulated run: states at all times between its ends, by the continuation polynomial of each step. Safe to use from several
+/// threads at once.
+/// </summary>
+public sealed class Trajectory
+{
+    /// <summary>Up to this many numbers, scratch space lies on the stack.</summary>
+    internal const int SmallStateCount = 64;
+
+    private readonly List<Crossing> crossings = [];
+    private readonly List<IntegrationMethod> methods = [];
+
+    internal Trajectory(DynamicSystem system, double time, IntegrationStatistics statistics)
+    {
+        System = system;
+        Statistics = statistics;
+        Store = new TrajectoryStore(system.StateCount, time, system.InitialState);
+    }
+
+    /// <summary>The system that was simulated.</summary>
+    public DynamicSystem System { get; }
+
+    /// <summary>The number of states.</summary>
+    public int StateCount => System.StateCount;
+
+    /// <summary>The time at which the run starts.</summary>
+    public double StartTime => Times[0];
+
+    /// <summary>The time at which the run ends; before the start time if time ran backwards.</summary>
+    public double EndTime => Times[^1];
+
+    /// <summary>The times of the steps' ends, the start first.</summary>
+    public ReadOnlySpan<double> Times => Store.Times;
+
+    /// <summary>The state at the end.</summary>
+    public double[] FinalState => Store.State(Store.NodeCount - 1).ToArray();
+
+    /// <summary>What the run cost.</summary>
+    public IntegrationStatistics Statistics { get; }
+
+    /// <summary>The meetings with surfaces of switching functions, in order.</summary>
+    public IReadOnlyList<Crossing> Crossings => crossings;
+
+    /// <summary>The methods in the order of their first use.</summary>
+    public IReadOnlyList<IntegrationMethod> MethodsUsed => methods;
+
+    internal TrajectoryStore Store { get; }
+
+    /// <summary>A state or observable by name.</summary>
+    /// <param name="name">The name of a state or observable of the model.</param>
+    /// <returns>Its course.</returns>
+    /// <exception cref="KeyNotFoundException">There is no such state or observable; the message lists those there are.</exception>
+    public Series this[string name]
+    {
+        get
+        {
+            ModelDescription description = System.Description;
+            int state = description.IndexOfState(name);
+            if (state >= 0) return new Series(this, name, description.States[state].Unit, state, -1);
+            int observable = description.IndexOfObservable(name);
+            if (observable >= 0) return new Series(this, name, description.Observables[observable].Unit, -1, observable);
+            IEnumerable<string> known =
+                [.. description.States.Select(static item => item.Name), .. description.Observables.Select(static item => item.Name)];
+            throw new KeyNotFoundException(
+                $"{description.Name} has no state or observable named '{name}'. It has: {string.Join(", ", known)}.");
+        }
+    }
+
+    /// <summary>A state or observable by its property, as in <c>run[tank.Level]</c>: the property's name counts, not its value.</summary>
+    /// <param name="member">The property.</param>
+    /// <param name="expression">Supplied by the compiler: the property's text.</param>
+    /// <returns>Its course.</returns>
+    /// <exception cref="KeyNotFoundException">The text does not end in the name of a state or observable.</exception>
+    public Series this[double member, [CallerArgumentExpression(nameof(member))] string expression = ""]
+    {
+        get
+        {
+            _ = member;
+            return this[expression[(expression.LastIndexOf('.') + 1)..].TrimStart('@').TrimEnd('(', ')')];
+        }
+    }
+
+    /// <summary>The state at a time.</summary>
+    /// <param name="time">A time within the run.</param>
+    /// <returns>The state, a new array.</returns>
+    /// <exception cref="ArgumentOutOfRangeException">The time lies outside the run or is not a number.</exception>
+    public double[] At(double time)
+    {
+        var state = new double[StateCount];
+        StateAt(time, state);
+        return state;
+    }
+
+    /// <summary>The state at a time.</summary>
+    /// <param name="time">A time within the run.</param>
+    /// <param name="state">Receives n values.</param>
+    /// <exception cref="ArgumentOutOfRangeException">The time lies outside the run or is not a number, or too little room.</exception>
+    public void StateAt(double time, Span<double> state)
+    {
+        RequireInside(time);
+        if (Store.NodeCount == 1)
+        {
+            Store.State(0).CopyTo(state);
+            return;
+        }
+
+        int step = Store.StepOf(time);
+        if (time == Times[step]) Store.State(step).CopyTo(state);
+        else if (time == Times[step + 1]) Store.State(step + 1).CopyTo(state);
+        else Store.Evaluate(step, Store.Theta(step, time), state);
+    }
+
+    /// <summary>The state at the end of a step.</summary>
+    /// <param name="node">The index into <see cref="Times"/>.</param>
+    /// <returns>The n values.</returns>
+    public ReadOnlySpan<double> StateAtNode(int node)
+    {
+        ArgumentOutOfRangeException.ThrowIfNegative(node);
+        ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual(node, Store.NodeCount);
+        return Store.State(node);
+    }
+
+    /// <summary>Equally spaced times over the run, both ends included.</summary>
+    /// <param name="count">How many, at least 2.</param>
+    /// <returns>The times.</returns>
+    /// <exception cref="ArgumentOutOfRangeException">Fewer than 2.</exception>
+    public double[] SampleTimes(int count)
+    {
+        ArgumentOutOfRangeException.ThrowIfLessThan(count, 2);
+        var times = new double[count];
+        for (int i = 0; i < count; i++) times[i] = StartTime + (EndTime - StartTime) * i / (count - 1);
+        times[^1] = EndTime;
+        return times;
+    }
+
+    /// <summary>The states at equally spaced times, both ends included.</summary>
+    /// <param name="count">How many, at least 2.</param>
+    /// <returns>The states at <see cref="SampleTimes"/>.</returns>
+    /// <exception cref="ArgumentOutOfRangeException">Fewer than 2.</exception>
+    public double[][] Sample(int count) => Array.ConvertAll(SampleTimes(count), At);
+
+    internal void Append(Stepper stepper)
+    {
+        Store.Append(stepper);
+        if (!methods.Contains(stepper.Method)) methods.Add(stepper.Method);
+    }
+
+    internal void Append(Crossing crossing) => crossings.Add(crossing);
+
+    internal void RequireInside(double time)
+    {
+        (double low, double high) = StartTime <= EndTime ? (StartTime, EndTime) : (EndTime, StartTime);
+        if (!(time >= low && time <= high))
+            throw new ArgumentOutOfRangeException(nameof(time), time, $"The run covers the times from {low:g9} to {high:g9}.");
+    }
+}

@@ -1,0 +1,38 @@
+namespace OdeDsl.Integration;
+
+/// <summary>
+/// A field together with k tangents carried by its linearisation: y = (x, v₁, ..., vₖ) with x' = f(t, x) and vᵢ' = ∂f/∂x · vᵢ
+/// (variational equation; Hairer, Norsett and Wanner, Solving ODEs I, section I.14).
+/// </summary>
+internal readonly struct VariationalField<TField>(TField inner, int tangentCount) : IVectorField
+    where TField : struct, IVectorField
+{
+    private readonly TField inner = inner;
+    private readonly double[] jacobian = new double[inner.Dimension * inner.Dimension];
+
+    public int Dimension => inner.Dimension * (1 + tangentCount);
+
+    public int BlockSize => inner.Dimension;
+
+    public void Rates(double time, ReadOnlySpan<double> y, Span<double> rates)
+    {
+        int n = inner.Dimension;
+        inner.Rates(time, y[..n], rates[..n]);
+        inner.Jacobian(time, y[..n], jacobian);
+        for (int c = 1; c <= tangentCount; c++)
+        {
+            ReadOnlySpan<double> tangent = y.Slice(c * n, n);
+            Span<double> change = rates.Slice(c * n, n);
+            for (int i = 0; i < n; i++)
+            {
+                ReadOnlySpan<double> row = jacobian.AsSpan(i * n, n);
+                double sum = 0;
+                for (int j = 0; j < row.Length; j++) sum += row[j] * tangent[j];
+                change[i] = sum;
+            }
+        }
+    }
+
+    public void Jacobian(double time, ReadOnlySpan<double> y, Span<double> jacobian) =>
+        inner.Jacobian(time, y[..inner.Dimension], jacobian);
+}

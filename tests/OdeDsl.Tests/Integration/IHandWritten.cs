@@ -1,0 +1,99 @@
+using OdeDsl.Modeling;
+
+namespace OdeDsl.Tests.Integration;
+
+/// <summary>
+/// Equations written by hand for a test, without conditions: a system states its description and rates, and gets a Jacobian by central
+/// differences. No parameters, no observables.
+/// </summary>
+internal interface IHandWritten<TSelf> : IOdeSystem
+    where TSelf : struct, IHandWritten<TSelf>
+{
+    static abstract void F(double time, ReadOnlySpan<double> x, Span<double> dx);
+
+    static ModelDescription Describe(string name, params double[] initial) => new()
+    {
+        Name = name,
+        States = [.. initial.Select((value, i) =>
+            new StateDescription("X" + i, "", value, double.NegativeInfinity, double.PositiveInfinity, null, ""))],
+        Parameters = [],
+        StateSparsity = Dense(initial.Length, initial.Length),
+        ParameterSparsity = Dense(initial.Length, 0),
+        DependsOnTime = true,
+    };
+
+    static SparsityPattern Dense(int rows, int columns) => new(
+        rows,
+        columns,
+        [.. Enumerable.Range(0, rows + 1).Select(row => row * columns)],
+        [.. Enumerable.Range(0, rows * columns).Select(entry => entry % columns)]);
+
+    static void IOdeSystem.Rates(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> rates) =>
+        TSelf.F(time, state, rates);
+
+    static void IOdeSystem.Rates(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> rates) =>
+        TSelf.F(time, state, rates);
+
+    static void IOdeSystem.StateJacobian(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian)
+    {
+        int n = state.Length;
+        double[] x = state.ToArray(), plus = new double[n], minus = new double[n];
+        for (int j = 0; j < n; j++)
+        {
+            double h = 1e-6 * Math.Max(1, Math.Abs(x[j]));
+            x[j] = state[j] + h;
+            TSelf.F(time, x, plus);
+            x[j] = state[j] - h;
+            TSelf.F(time, x, minus);
+            x[j] = state[j];
+            for (int i = 0; i < n; i++) jacobian[i * n + j] = (plus[i] - minus[i]) / (2 * h);
+        }
+    }
+
+    static void IOdeSystem.StateJacobianValues(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> values) =>
+        TSelf.StateJacobian(time, state, parameters, regime, values);
+
+    static void IOdeSystem.ParameterJacobian(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian)
+    {
+    }
+
+    static void IOdeSystem.TimeDerivative(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> derivative) =>
+        throw new NotSupportedException();
+
+    static void IOdeSystem.JacobianVectorProduct(
+        double time,
+        ReadOnlySpan<double> state,
+        ReadOnlySpan<double> parameters,
+        ReadOnlySpan<double> regime,
+        ReadOnlySpan<double> direction,
+        Span<double> product) =>
+        throw new NotSupportedException();
+
+    static void IOdeSystem.Observables(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> values)
+    {
+    }
+
+    static void IOdeSystem.SwitchingFunctions(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> values)
+    {
+    }
+
+    static void IOdeSystem.SwitchingJacobian(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian)
+    {
+    }
+
+    static void IOdeSystem.SwitchingTimeDerivative(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> derivative)
+    {
+    }
+
+    static void IOdeSystem.Regime(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> regime)
+    {
+    }
+}
