@@ -31,6 +31,9 @@ public sealed record ModelAssessment
     /// <summary>How far each parameter stands from a change of the set of attractors.</summary>
     public required MarginsAnswer Margins { get; init; }
 
+    /// <summary>Which integration method computes the model's motion best.</summary>
+    public required MethodAnswer Method { get; init; }
+
     /// <summary>What could not be answered and why, or what deserves attention; a sentence each.</summary>
     public required IReadOnlyList<string> Remarks { get; init; }
 
