@@ -24,6 +24,8 @@ internal sealed class ExpressionGraph
 
     public IReadOnlyList<Node> Nodes => _nodes;
 
+    public int Count => _nodes.Count;
+
     public Node this[int index] => _nodes[index];
 
     public int Constant(double value) => Intern(new Node(Operator.Constant, -1, -1, -1, BitConverter.DoubleToInt64Bits(value)));
@@ -37,6 +39,16 @@ internal sealed class ExpressionGraph
     public int Binary(Operator operation, int first, int second) => Intern(new Node(operation, first, second, -1, 0));
 
     public int Ternary(Operator operation, int first, int second, int third) => Intern(new Node(operation, first, second, third, 0));
+
+    /// <summary>Whether a node is a condition rather than a number.</summary>
+    public bool IsCondition(int index)
+    {
+        while (_nodes[index].Operator == Operator.Conditional) index = _nodes[index].Second;
+        return _nodes[index].Operator is Operator.BooleanConstant or Operator.Side
+            or (>= Operator.Less and <= Operator.Not);
+    }
+
+    public bool Contains(Node node) => _indexOf.ContainsKey(node);
 
     public int Intern(Node node)
     {

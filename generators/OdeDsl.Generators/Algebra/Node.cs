@@ -1,4 +1,5 @@
 using System;
+using System.Collections.Generic;
 
 namespace OdeDsl.Generators.Algebra;
 
@@ -11,4 +12,17 @@ internal readonly record struct Node(Operator Operator, int First, int Second, i
     public double Constant => BitConverter.Int64BitsToDouble(Payload);
 
     public int Index => (int)Payload;
+
+    public bool IsLeaf => First < 0;
+
+    /// <summary>The operands, in order.</summary>
+    public IEnumerable<int> Operands
+    {
+        get
+        {
+            if (First >= 0) yield return First;
+            if (Second >= 0) yield return Second;
+            if (Third >= 0) yield return Third;
+        }
+    }
 }

@@ -1,0 +1,83 @@
+using System.Collections.Generic;
+using System.Linq;
+using System.Threading;
+using OdeDsl.Generators.Reading;
+
+namespace OdeDsl.Generators.Algebra;
+
+/// <summary>Everything that is computed for a model, as expressions: what the user wrote, its locked form and the derivatives.</summary>
+internal sealed class ModelEquations
+{
+    private ModelEquations(ExpressionGraph free, Locker locker)
+    {
+        Free = free;
+        Locked = locker.Graph;
+        Switches = locker.Switches;
+    }
+
+    /// <summary>The expressions as written: rates, observables and the decisions of the switches.</summary>
+    public ExpressionGraph Free { get; }
+
+    /// <summary>The locked expressions and all derivatives.</summary>
+    public ExpressionGraph Locked { get; }
+
+    public IReadOnlyList<SwitchingFunction> Switches { get; }
+
+    /// <summary>What each node of <see cref="Free"/> changes with.</summary>
+    public Dependence[] FreeDependences { get; private init; } = [];
+
+    public bool DependsOnTime { get; private init; }
+
+    public IReadOnlyList<int> LockedRates { get; private init; } = [];
+
+    public SparseMatrix StateJacobian { get; private init; } = null!;
+
+    public SparseMatrix ParameterJacobian { get; private init; } = null!;
+
+    public IReadOnlyList<int> TimeDerivative { get; private init; } = [];
+
+    public IReadOnlyList<int> JacobianVectorProduct { get; private init; } = [];
+
+    public SparseMatrix SwitchingJacobian { get; private init; } = null!;
+
+    public IReadOnlyList<int> SwitchingTimeDerivative { get; private init; } = [];
+
+    public static ModelEquations Of(ModelDefinition model, CancellationToken cancellationToken)
+    {
+        ExpressionGraph free = new(model.Nodes);
+        int[] rates = [.. model.States.Select(static state => state.Rate)];
+        Locker locker = Locker.Lock(free, rates, cancellationToken);
+        int[] lockedRates = [.. rates.Select(rate => locker[rate])];
+        int[] surfaces = [.. locker.Switches.Select(static function => function.Value)];
+        DerivativeTable derivatives = new(locker.Graph, [.. lockedRates, .. surfaces]);
+
+        SparseMatrix byState = derivatives.By(Operator.State, model.States.Count, cancellationToken);
+        int[] byTime = derivatives.ByTime(cancellationToken);
+        int[] alongDirection = derivatives.AlongDirection(model.States.Count, cancellationToken);
+        Dependence[] dependences = Dependences.Of(free);
+        int count = lockedRates.Length;
+        return new ModelEquations(free, locker)
+        {
+            FreeDependences = dependences,
+            DependsOnTime = rates.Any(rate => (dependences[rate] & Dependence.Time) != 0),
+            LockedRates = lockedRates,
+            StateJacobian = Rows(byState, 0, count),
+            SwitchingJacobian = Rows(byState, count, surfaces.Length),
+            ParameterJacobian = Rows(derivatives.By(Operator.Parameter, model.Parameters.Count, cancellationToken), 0, count),
+            TimeDerivative = [.. byTime.Take(count)],
+            SwitchingTimeDerivative = [.. byTime.Skip(count)],
+            JacobianVectorProduct = [.. alongDirection.Take(count)],
+        };
+    }
+
+    private static SparseMatrix Rows(SparseMatrix matrix, int first, int count)
+    {
+        List<MatrixEntry> entries = [];
+        foreach (MatrixEntry entry in matrix.Entries)
+        {
+            if (entry.Row >= first && entry.Row < first + count) entries.Add(entry with { Row = entry.Row - first });
+        }
+
+        return new SparseMatrix(count, matrix.Columns, entries);
+    }
+}

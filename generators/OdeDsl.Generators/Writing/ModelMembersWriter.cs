@@ -1,0 +1,46 @@
+using System.Linq;
+using OdeDsl.Generators.Reading;
+
+namespace OdeDsl.Generators.Writing;
+
+/// <summary>Prints what is added to the model class itself: property storage and access to the numbers as vectors.</summary>
+internal sealed class ModelMembersWriter(SourceWriter writer, ModelDefinition model, NameScope members)
+{
+    private const string Input = "global::System.ReadOnlySpan<double>";
+    private const string Output = "global::System.Span<double>";
+
+    private readonly string[] _states = [.. model.States.Select(state => members.Claim(FieldName(state.Property)))];
+    private readonly string[] _parameters = [.. model.Parameters.Select(parameter => members.Claim(FieldName(parameter.Property)))];
+
+    public void Write(string modelName, string equationsName)
+    {
+        for (int i = 0; i < _states.Length; i++) PropertyWriter.Write(writer, model.States[i].Property, _states[i], model.States[i].InitialBits);
+        for (int i = 0; i < _parameters.Length; i++)
+            PropertyWriter.Write(writer, model.Parameters[i].Property, _parameters[i], model.Parameters[i].ValueBits);
+
+        string contract = $"global::OdeDsl.Modeling.IOdeModel<{modelName}, {modelName}.{equationsName}>";
+        Transfer($"void {contract}.ReadState({Output} state)", "state", _states, static (vector, field) => $"{vector} = {field};");
+        Transfer($"void {contract}.WriteState({Input} state)", "state", _states, static (vector, field) => $"{field} = {vector};");
+        Transfer(
+            $"void {contract}.ReadParameters({Output} parameters)", "parameters", _parameters, static (vector, field) => $"{vector} = {field};");
+        Transfer(
+            $"void {contract}.WriteParameters({Input} parameters)", "parameters", _parameters, static (vector, field) => $"{field} = {vector};");
+        writer.Line(GeneratedMark.Code);
+        writer.Line(GeneratedMark.NotCovered);
+        writer.Line($"{modelName} {contract}.Copy() => ({modelName})base.MemberwiseClone();");
+        writer.Line();
+    }
+
+    private void Transfer(string signature, string vector, string[] fields, System.Func<string, string, string> line)
+    {
+        writer.Line(GeneratedMark.Code);
+        writer.Line(GeneratedMark.NotCovered);
+        writer.Open(signature);
+        writer.Line($"{vector} = {vector}[..{Literals.Integer(fields.Length)}];");
+        for (int i = 0; i < fields.Length; i++) writer.Line(line($"{vector}[{Literals.Integer(i)}]", fields[i]));
+        writer.Close();
+        writer.Line();
+    }
+
+    private static string FieldName(PropertyDefinition property) => "_" + Identifiers.Local(property.Name);
+}

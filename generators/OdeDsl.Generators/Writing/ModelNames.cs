@@ -1,0 +1,66 @@
+using System.Collections.Generic;
+using System.Linq;
+using OdeDsl.Generators.Algebra;
+using OdeDsl.Generators.Reading;
+
+namespace OdeDsl.Generators.Writing;
+
+/// <summary>The names a model's numbers have in every printed method: taken from the model, unique against one another and the arguments.</summary>
+internal sealed class ModelNames
+{
+    private static readonly string[] Arguments =
+        ["time", "state", "parameters", "regime", "direction", "rates", "jacobian", "values", "derivative", "product", "scratch"];
+
+    private readonly List<string> _taken = [.. Arguments];
+    private readonly string[] _states;
+    private readonly string[] _parameters;
+    private readonly string[] _directions;
+
+    public ModelNames(ModelDefinition model)
+    {
+        NameScope scope = new(Arguments);
+        _states = [.. model.States.Select(state => Claim(scope, Identifiers.Local(state.Property.Name)))];
+        _parameters = [.. model.Parameters.Select(parameter => Claim(scope, Identifiers.Local(parameter.Property.Name)))];
+        _directions = [.. model.States.Select(state => Claim(scope, Identifiers.Local(state.Property.Name) + "Direction"))];
+    }
+
+    /// <summary>The local that a leaf is read into, or <see langword="null"/> if it is read where it is used.</summary>
+    public string? LocalOf(Node leaf) => leaf.Operator switch
+    {
+        Operator.State => Identifiers.Escape(_states[leaf.Index]),
+        Operator.Parameter => Identifiers.Escape(_parameters[leaf.Index]),
+        Operator.Direction => Identifiers.Escape(_directions[leaf.Index]),
+        _ => null,
+    };
+
+    /// <summary>The expression that reads a leaf from the arguments.</summary>
+    public static string Access(Node leaf) => leaf.Operator switch
+    {
+        Operator.State => $"state[{Literals.Integer(leaf.Index)}]",
+        Operator.Parameter => $"parameters[{Literals.Integer(leaf.Index)}]",
+        Operator.Direction => $"direction[{Literals.Integer(leaf.Index)}]",
+        Operator.Side => $"regime[{Literals.Integer(leaf.Index)}] == 1d",
+        Operator.WholeNumber => $"regime[{Literals.Integer(leaf.Index)}]",
+        _ => "time",
+    };
+
+    /// <summary>The argument that a leaf is read from.</summary>
+    public static string ArgumentOf(Node leaf) => leaf.Operator switch
+    {
+        Operator.State => "state",
+        Operator.Parameter => "parameters",
+        Operator.Direction => "direction",
+        Operator.Side or Operator.WholeNumber => "regime",
+        _ => "time",
+    };
+
+    /// <summary>A scope for the further locals of one method.</summary>
+    public NameScope NewScope() => new(_taken);
+
+    private string Claim(NameScope scope, string wanted)
+    {
+        string name = scope.Claim(wanted);
+        _taken.Add(name);
+        return name;
+    }
+}

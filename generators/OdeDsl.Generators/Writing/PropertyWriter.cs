@@ -1,0 +1,25 @@
+using System.Collections.Generic;
+using OdeDsl.Generators.Reading;
+
+namespace OdeDsl.Generators.Writing;
+
+/// <summary>Prints the implementing parts of the model's partial properties, each over a field of its own.</summary>
+internal static class PropertyWriter
+{
+    public static void Write(SourceWriter writer, PropertyDefinition property, string field, long defaultBits)
+    {
+        writer.Line(GeneratedMark.Code);
+        writer.Line($"private double {field} = {Literals.Number(System.BitConverter.Int64BitsToDouble(defaultBits))};");
+        writer.Line();
+        writer.Line(GeneratedMark.Code);
+        writer.Line(GeneratedMark.NotCovered);
+        string modifiers = property.Modifiers.Length > 0 ? property.Modifiers + " " : "";
+        writer.Open($"{modifiers}partial double {Identifiers.Escape(property.Name)}");
+        foreach (string accessor in property.Accessors)
+            writer.Line(IsGetter(accessor) ? $"{accessor} => {field};" : $"{accessor} => {field} = value;");
+        writer.Close();
+        writer.Line();
+    }
+
+    private static bool IsGetter(string accessor) => accessor == "get" || accessor.EndsWith(" get", System.StringComparison.Ordinal);
+}

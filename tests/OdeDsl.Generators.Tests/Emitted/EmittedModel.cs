@@ -1,0 +1,64 @@
+using System.Reflection;
+using System.Runtime.Loader;
+using System.Text;
+using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.CSharp;
+using OdeDsl.Generators.Reading;
+using OdeDsl.Generators.Writing;
+using OdeDsl.Modeling;
+
+namespace OdeDsl.Generators.Tests.Emitted;
+
+/// <summary>The emitted code of a model, compiled with every warning an error, loaded and ready to call.</summary>
+internal sealed class EmittedModel
+{
+    private static readonly MetadataReference[] References = [.. ((string)AppContext.GetData("TRUSTED_PLATFORM_ASSEMBLIES")!)
+        .Split(Path.PathSeparator)
+        .Where(static path => Path.GetFileName(path) is var file && (file.StartsWith("System.", StringComparison.Ordinal) || file == "OdeDsl.dll"))
+        .Select(static path => MetadataReference.CreateFromFile(path))];
+
+    private EmittedModel(string source, IEmittedCalls calls) => (Source, Calls) = (source, calls);
+
+    public string Source { get; }
+
+    public IEmittedCalls Calls { get; }
+
+    public static EmittedModel Of(ModelDefinition model, string? userSource = null)
+    {
+        string source = ModelWriter.Write(model, CancellationToken.None);
+        Assembly assembly = Compile(source, userSource ?? UserHalf(model));
+        Type type = assembly.GetType(model.Type.MetadataName)!;
+        Type contract = type.GetInterfaces().Single(static face => face.Name.StartsWith("IOdeModel", StringComparison.Ordinal));
+        Type calls = typeof(EmittedCalls<,>).MakeGenericType(contract.GetGenericArguments());
+        return new EmittedModel(source, (IEmittedCalls)Activator.CreateInstance(calls)!);
+    }
+
+    public static Assembly Compile(params string[] sources)
+    {
+        CSharpParseOptions parse = new(LanguageVersion.CSharp13, DocumentationMode.Diagnose);
+        CSharpCompilationOptions options = new(
+            OutputKind.DynamicallyLinkedLibrary,
+            optimizationLevel: OptimizationLevel.Release,
+            generalDiagnosticOption: ReportDiagnostic.Error,
+            warningLevel: 9999,
+            nullableContextOptions: NullableContextOptions.Enable);
+        CSharpCompilation compilation = CSharpCompilation.Create(
+            "Emitted", [.. sources.Select(source => CSharpSyntaxTree.ParseText(source, parse, encoding: Encoding.UTF8))], References, options);
+        using MemoryStream image = new();
+        var result = compilation.Emit(image);
+        Diagnostic[] problems = [.. result.Diagnostics.Where(static problem => problem.Severity >= DiagnosticSeverity.Warning)];
+        if (problems.Length > 0) throw new InvalidOperationException(string.Join("\n", problems.Take(5).Select(static p => p.ToString())) + "\n" + sources[0]);
+        image.Position = 0;
+        return new AssemblyLoadContext(null, isCollectible: true).LoadFromStream(image);
+    }
+
+    /// <summary>The declarations a user would have written.</summary>
+    public static string UserHalf(ModelDefinition model)
+    {
+        StringBuilder text = new();
+        text.Append("namespace Models;\n/// <summary>A model.</summary>\npublic sealed partial class ").Append(model.Type.Types[0].Name).Append("\n{\n");
+        foreach (PropertyDefinition property in model.States.Select(static s => s.Property).Concat(model.Parameters.Select(static p => p.Property)))
+            text.Append("/// <summary>A number.</summary>\npublic partial double @").Append(property.Name).Append(" { get; set; }\n");
+        return text.Append("}\n").ToString();
+    }
+}
