@@ -14,6 +14,9 @@ internal static class Literals
         if (double.IsInfinity(value)) return value > 0 ? "double.PositiveInfinity" : "double.NegativeInfinity";
         if (value == 0) return BitConverter.DoubleToInt64Bits(value) < 0 ? "-0d" : "0d";
 
+        // Whole numbers as people write them: 60d rather than 6E+01d. All of them below 1E+15 print exactly.
+        if (Math.Abs(value) < 1e15 && Math.Floor(value) == value) return value.ToString("F0", CultureInfo.InvariantCulture) + "d";
+
         // Counting the digits up, instead of the round-trip format, gives the same text on every host.
         for (int digits = 1; digits < 17; digits++)
         {
