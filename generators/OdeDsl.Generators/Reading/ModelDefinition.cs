@@ -18,7 +18,11 @@ internal sealed record ModelDefinition(
     EquatableArray<ObservableDefinition> Observables,
     EquatableArray<Node> Nodes,
     EquatableArray<ConditionText> ConditionTexts,
-    EquatableArray<string> TakenNames);
+    EquatableArray<string> TakenNames)
+{
+    /// <summary>The unit of time, or the empty string.</summary>
+    public string TimeUnit { get; init; } = "";
+}
 
 /// <summary>Where the model class stands: enough to reopen it in a generated file.</summary>
 /// <param name="Namespace">The namespace with keywords escaped, or the empty string.</param>

@@ -39,10 +39,16 @@ internal static class ModelReader
         {
             Type = chain,
             Summary = Summaries.Of(model, cancellation),
+            TimeUnit = TimeUnit(model),
             TakenNames = type.TakenNames(),
         };
         return new(definition, new(problems.Found.ToArray()));
     }
+
+    private static string TimeUnit(INamedTypeSymbol model) =>
+        model.GetAttributes().FirstOrDefault(static attribute => Attributes.Is(attribute, "OdeModel")) is { } mark
+            ? Attributes.Named(mark, "TimeUnit", "") ?? ""
+            : "";
 
     /// <summary>Whether another part of the class carries the attribute before this one.</summary>
     private static bool IsRepeated(INamedTypeSymbol model, TypeDeclarationSyntax declaration, out Location repeated)

@@ -19,6 +19,7 @@ internal sealed class DescriptionWriter(SourceWriter writer, ModelDefinition mod
         writer.Line("{");
         writer.Line($"    Name = {Literals.Text(type.Name.TrimStart('@'))},");
         writer.Line($"    Summary = {Literals.Text(model.Summary)},");
+        writer.Line($"    TimeUnit = {Literals.Text(model.TimeUnit)},");
         List("States", model.States.Select(StateText));
         List("Parameters", model.Parameters.Select(ParameterText));
         List("Observables", model.Observables.Select(ObservableText));

@@ -11,6 +11,9 @@ public sealed record ModelDescription
     /// <summary>The model's documentation summary, or the empty string.</summary>
     public string Summary { get; init; } = "";
 
+    /// <summary>The unit of time, or the empty string.</summary>
+    public string TimeUnit { get; init; } = "";
+
     /// <summary>The states, in the order of the state vector.</summary>
     public required ImmutableArray<StateDescription> States { get; init; }
 
