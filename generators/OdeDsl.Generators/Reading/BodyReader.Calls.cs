@@ -21,9 +21,8 @@ internal sealed partial class BodyReader
         if (!isLocal && !method.IsStatic && !BelongsToModel(operation.Instance, operation, method)) return UnknownValue.Instance;
         if (method.RefKind != RefKind.None) return Unsupported(operation);
         if (Reach(method, !operation.IsVirtual, operation) is not IMethodSymbol reached) return UnknownValue.Instance;
-        if (Arguments(operation, isLocal) is not { } arguments) return UnknownValue.Instance;
         if (Bodies.Find(reached, _compilation, _cancellation) is null) return WithoutSource(operation, reached);
-        return Call(reached, arguments);
+        return Arguments(operation, isLocal) is { } arguments ? Call(reached, arguments) : UnknownValue.Instance;
     }
 
     /// <summary>The arguments in the order of the parameters, evaluated in the order of the text.</summary>
@@ -106,13 +105,21 @@ internal sealed partial class BodyReader
 
     private Value MathCall(IInvocationOperation operation, IMethodSymbol method)
     {
-        if (Arguments(operation, isLocal: false) is not { } arguments) return UnknownValue.Instance;
-        if (arguments.Any(static argument => argument is UnknownValue)) return UnknownValue.Instance;
-        if (method.IsStatic && MathFunctions.Find(method) is { } function) return MathCall(operation, function, arguments);
-        if (method is { Name: "Round", Parameters: [{ Type.SpecialType: SpecialType.System_Double }, { Type.Name: "MidpointRounding" }] }
-            && arguments[1] is WholeValue { Choice: ChoiceLeaf<BigInteger> mode } && Rounding(mode.Value) is { } rounding)
-            return MathCall(operation, rounding, [arguments[0]]);
-        if (arguments.Length > 0 && arguments.All(static argument => argument is WholeValue)) return WholeCall(operation, method, arguments);
+        bool isWhole = method.Parameters.All(static parameter => WholeNumbers.IsWhole(parameter.Type)) && WholeNumbers.Function(method.Name) is not null;
+        bool isRounding = method is { Name: "Round", Parameters: [{ Type.SpecialType: SpecialType.System_Double }, { Type.Name: "MidpointRounding" }] };
+        Operator? function = method.IsStatic ? MathFunctions.Find(method) : null;
+        if (function is null && !isWhole && !isRounding) return OtherMathCall(operation, method);
+
+        if (Arguments(operation, isLocal: false) is not { } arguments || arguments.Any(static argument => argument is UnknownValue)) return UnknownValue.Instance;
+        if (function is { } known) return MathCall(operation, known, arguments);
+        if (isWhole) return WholeCall(operation, method, arguments);
+        return arguments[1] is WholeValue { Choice: ChoiceLeaf<BigInteger> mode } && Rounding(mode.Value) is { } rounding
+            ? MathCall(operation, rounding, [arguments[0]])
+            : OtherMathCall(operation, method);
+    }
+
+    private UnknownValue OtherMathCall(IInvocationOperation operation, IMethodSymbol method)
+    {
         IParameterSymbol? imprecise = method.Parameters.FirstOrDefault(
             static parameter => parameter.Type.SpecialType is SpecialType.System_Single or SpecialType.System_Decimal);
         return imprecise is not null
@@ -157,8 +164,7 @@ internal sealed partial class BodyReader
     private Value WholeCall(IInvocationOperation operation, IMethodSymbol method, Value[] arguments)
     {
         Choice<BigInteger>[] choices = arguments.Select(static argument => ((WholeValue)argument).Choice).ToArray();
-        if (!WholeNumbers.IsWhole(method.ReturnType) || WholeNumbers.Function(method.Name) is not { } function || choices.Length > 2)
-            return Problem(Descriptors.FunctionNotSupported, operation, Name(method), MathFunctions.AdviceFor(method.Name));
+        var function = WholeNumbers.Function(method.Name)!;
         return Whole(operation, () => choices[0].Combine(
             choices[choices.Length - 1], (a, b) => WholeNumbers.Fit(function(a, b), method.ReturnType, isChecked: true)));
     }

@@ -14,11 +14,13 @@ internal sealed partial class BodyReader
     {
         if (condition == _conditions.True) return whenTrue();
         if (condition == _conditions.False) return whenFalse();
+        IOperation? at = _current;
         Flow start = _flow;
         Value first = whenTrue();
         Flow afterFirst = _flow;
         _flow = start;
         Value second = whenFalse();
+        _current = at;
         _flow = Join(condition, afterFirst, _flow);
         return Choose(condition, first, second);
     }
@@ -73,8 +75,9 @@ internal sealed partial class BodyReader
         (NumberValue first, NumberValue second) => new NumberValue(_conditions.ChooseNumber(condition, first.Node, second.Node)),
         (ConditionValue first, ConditionValue second) => new ConditionValue(_conditions.Choose(condition, first.Node, second.Node)),
         (WholeValue first, WholeValue second) => Bounded(Choice.Between(condition, first.Choice, second.Choice)),
-        (LiteralValue first, LiteralValue) => Imprecise(_current!, first),
-        _ => UnknownValue.Instance,
+        (LiteralValue { Constant: float or decimal } first, LiteralValue) => Imprecise(_current!, first),
+        (UnknownValue, _) or (_, UnknownValue) => UnknownValue.Instance,
+        _ => Unsupported(_current!),
     };
 
     private Value Bounded(Choice<BigInteger> choice) => choice.Count <= Choice.MaximumCount

@@ -47,20 +47,31 @@ internal sealed partial class BodyReader
     /// <summary>Whether the instance is the model; if not, the problem is reported.</summary>
     private bool BelongsToModel(IOperation? instance, IOperation operation, ISymbol member)
     {
-        Value value = instance is null ? UnknownValue.Instance : instance switch
+        if (NotAFunction.Contains(member.ContainingType) && member.ContainingType.IsReferenceType)
         {
-            IInstanceReferenceOperation or IParameterReferenceOperation or ILocalReferenceOperation or IConversionOperation => Evaluate(instance),
-            IInvalidOperation => Unresolved(instance),
-            _ => UnknownValue.Instance,
-        };
-        _current = operation;
-        if (value is ModelValue && member.ContainingType.TypeKind != TypeKind.Interface) return true;
-        if (value is ModelValue) Unsupported(operation);
-        else if (instance is IInvalidOperation) return false;
-        else if (NotAFunction.Contains(member.ContainingType)) Problem(Descriptors.NotAFunction, operation, Name(member));
-        else Problem(Descriptors.OtherObject, operation, UserText.Of(operation.Syntax));
+            Problem(Descriptors.NotAFunction, operation, Name(member));
+        }
+        else if (instance is IMemberReferenceOperation holder && !NotAFunction.Contains(holder.Member.ContainingType))
+        {
+            OfOther(operation);
+        }
+        else if (instance is null)
+        {
+            Unsupported(operation);
+        }
+        else
+        {
+            Value value = Evaluate(instance);
+            _current = operation;
+            if (value is ModelValue && member.ContainingType.TypeKind == TypeKind.Class) return true;
+            if (value is ModelValue) Unsupported(operation);
+            else if (value is not UnknownValue) OfOther(operation);
+        }
+
         return false;
     }
+
+    private void OfOther(IOperation operation) => Problem(Descriptors.OtherObject, operation, UserText.Of(operation.Syntax));
 
     /// <summary>The member a use reaches when the object is the model; null, with a problem reported, if a derived class may decide.</summary>
     private ISymbol? Reach(ISymbol member, bool isBaseCall, IOperation operation)

@@ -14,9 +14,10 @@ internal sealed partial class BodyReader
     /// <summary>Follows a chain such as <c>a + b + c</c> from its left end without recursion: sums of thousands of terms are read too.</summary>
     private Value Binary(IBinaryOperation operation)
     {
+        if (operation.OperatorMethod is { } method) return UserDefined(operation, method);
         Stack<IBinaryOperation> chain = new();
         IOperation first = operation;
-        while (first is IBinaryOperation { ConstantValue.HasValue: false } link)
+        while (first is IBinaryOperation { ConstantValue.HasValue: false, OperatorMethod: null } link)
         {
             chain.Push(link);
             first = link.LeftOperand;
@@ -37,7 +38,6 @@ internal sealed partial class BodyReader
 
     private Value Shortcut(IBinaryOperation operation, Value first)
     {
-        if (operation.OperatorMethod is not null) return UserDefined(operation, operation.OperatorMethod);
         int condition = ConditionOf(first);
         return operation.OperatorKind == BinaryOperatorKind.ConditionalAnd
             ? Fork(condition, () => Evaluate(operation.RightOperand), () => new ConditionValue(_conditions.False))
@@ -47,7 +47,6 @@ internal sealed partial class BodyReader
     private Value Binary(IBinaryOperation operation, Value first, Value second)
     {
         _current = operation;
-        if (operation.OperatorMethod is not null) return UserDefined(operation, operation.OperatorMethod);
         return Apply(operation, operation.OperatorKind, first, second, operation.Type, operation.IsChecked);
     }
 
@@ -58,8 +57,8 @@ internal sealed partial class BodyReader
         (NumberValue a, NumberValue b) => Apply(operation, kind, a.Node, b.Node),
         (ConditionValue a, ConditionValue b) => Logic(operation, kind, a.Node, b.Node),
         (WholeValue a, WholeValue b) => Apply(operation, kind, a.Choice, b.Choice, type, isChecked),
-        (LiteralValue literal, _) => Imprecise(operation, literal),
-        (_, LiteralValue literal) => Imprecise(operation, literal),
+        (LiteralValue { Constant: float or decimal } literal, _) => Imprecise(operation, literal),
+        (_, LiteralValue { Constant: float or decimal } literal) => Imprecise(operation, literal),
         _ => Unsupported(operation),
     };
 
@@ -153,7 +152,7 @@ internal sealed partial class BodyReader
                 Whole(operation, () => whole.Choice.Select(a => WholeNumbers.Fit(-a, operation.Type!, operation.IsChecked))),
             (UnaryOperatorKind.BitwiseNegation, WholeValue whole) when WholeNumbers.IsWhole(operation.Type) =>
                 Whole(operation, () => whole.Choice.Select(a => WholeNumbers.Fit(-a - 1, operation.Type!, isChecked: false))),
-            (_, LiteralValue literal) => Imprecise(operation, literal),
+            (_, LiteralValue { Constant: float or decimal } literal) => Imprecise(operation, literal),
             _ => Unsupported(operation),
         };
     }
@@ -172,9 +171,9 @@ internal sealed partial class BodyReader
             (LiteralValue { Constant: float single }, SpecialType.System_Double) => new NumberValue(_graph.Constant((double)single)),
             (WholeValue whole, _) when WholeNumbers.IsWhole(target) =>
                 Whole(operation, () => whole.Choice.Select(a => WholeNumbers.Fit(a, target!, operation.IsChecked))),
-            (NumberValue or LiteralValue, _) when WholeNumbers.IsWhole(target) =>
+            (NumberValue or LiteralValue { Constant: float or decimal }, _) when WholeNumbers.IsWhole(target) =>
                 Problem(Descriptors.WholeNumberUnknown, operation, UserText.Of(operation.Syntax), target!.ToDisplayString()),
-            (LiteralValue literal, SpecialType.System_Double) =>
+            (LiteralValue { Constant: decimal } literal, SpecialType.System_Double) =>
                 Imprecise(operation, literal),
             (_, SpecialType.System_Single or SpecialType.System_Decimal) =>
                 Problem(Descriptors.NotDoublePrecision, operation, UserText.Of(operation.Syntax), target!.ToDisplayString()),

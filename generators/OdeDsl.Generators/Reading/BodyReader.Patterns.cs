@@ -19,6 +19,7 @@ internal sealed partial class BodyReader
             return Problem(Descriptors.SwitchWithoutMatch, place);
         }
 
+        _current = operation;
         return Arm(operation, input, UserText.Of(operation.Value.Syntax), 0);
     }
 
@@ -82,6 +83,7 @@ internal sealed partial class BodyReader
 
     private int Match(IPatternOperation pattern, Value input, string inputText)
     {
+        if (input is UnknownValue) return Undecided;
         switch (pattern)
         {
             case IDiscardPatternOperation:

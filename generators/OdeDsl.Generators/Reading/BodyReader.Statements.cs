@@ -50,6 +50,9 @@ internal sealed partial class BodyReader
             case IBranchOperation { BranchKind: BranchKind.Break }:
                 Break();
                 break;
+            case ILabeledOperation { Operation: { } labeled }:
+                Execute(labeled);
+                break;
             case IEmptyOperation or ILocalFunctionOperation:
                 break;
             case IInvalidOperation:

@@ -83,7 +83,7 @@ internal sealed partial class BodyReader
         _cancellation.ThrowIfCancellationRequested();
         RuntimeHelpers.EnsureSufficientExecutionStack();
         _current = operation;
-        if (operation.ConstantValue is { HasValue: true, Value: var constant }) return Constant(constant, operation);
+        if (operation.ConstantValue is { HasValue: true, Value: var constant }) return Constant(constant);
         return operation switch
         {
             ILocalReferenceOperation local => Variable(local.Local, operation),
@@ -106,18 +106,18 @@ internal sealed partial class BodyReader
         };
     }
 
-    private Value Constant(object? constant, IOperation operation) => constant switch
+    private Value Constant(object? constant) => constant switch
     {
         double number => new NumberValue(_graph.Constant(number)),
         bool condition => new ConditionValue(_graph.Constant(condition)),
-        float or decimal => new LiteralValue(constant),
         not null when WholeNumbers.Read(constant) is { } whole => new WholeValue(new ChoiceLeaf<BigInteger>(whole)),
-        _ => Problem(Descriptors.ExpressionNotSupported, operation, "A text or null", "use numbers and conditions"),
+        _ => new LiteralValue(constant),
     };
 
     private Value Variable(ISymbol variable, IOperation operation)
     {
         if (_flow.Variables.TryGetValue(variable, out Value? value)) return value;
+        if (_problems.Found.Count > 0) return UnknownValue.Instance; // It would have been set by what is reported already.
         return variable.ContainingSymbol is IMethodSymbol { MethodKind: MethodKind.Constructor }
             ? Problem(Descriptors.ConstructorSetsValue, operation, variable.Name)
             : Unresolved(operation);
@@ -126,6 +126,7 @@ internal sealed partial class BodyReader
     private Value Conditional(IConditionalOperation operation)
     {
         int condition = Condition(operation.Condition);
+        _current = operation;
         return Fork(condition, () => Evaluate(operation.WhenTrue), () => Evaluate(operation.WhenFalse!));
     }
 
@@ -154,7 +155,11 @@ internal sealed partial class BodyReader
         return UnknownValue.Instance;
     }
 
-    private UnknownValue Unresolved(IOperation operation) => Problem(Descriptors.NotResolved, operation, UserText.Of(operation.Syntax));
+    private UnknownValue Unresolved(IOperation operation)
+    {
+        IOperation smallest = operation.DescendantsAndSelf().LastOrDefault(static inner => inner is IInvalidOperation) ?? operation;
+        return Problem(Descriptors.NotResolved, smallest, UserText.Of(smallest.Syntax));
+    }
 
     private UnknownValue Unsupported(IOperation operation)
     {

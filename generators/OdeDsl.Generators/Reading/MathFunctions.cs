@@ -76,7 +76,7 @@ internal static class MathFunctions
 
     public static bool IsHome(INamedTypeSymbol type) =>
         type is { SpecialType: SpecialType.System_Double }
-            or { Name: "Math", ContainingType: null, ContainingNamespace: { Name: "System", ContainingNamespace.IsGlobalNamespace: true } };
+            or { Name: "Math" or "MathF", ContainingType: null, ContainingNamespace: { Name: "System", ContainingNamespace.IsGlobalNamespace: true } };
 
     /// <summary>The operator of a function of doubles, or null.</summary>
     public static Operator? Find(IMethodSymbol method)

@@ -15,11 +15,15 @@ internal static class Unreadable
         IThrowOperation => ("Throwing an exception", "give a value for every input"),
         ITryOperation => ("A 'try' statement", "give a value for every input"),
         IUsingOperation or IUsingDeclarationOperation or ILockOperation => ("A resource", "compute from states, parameters and time only"),
-        IBranchOperation or ILabeledOperation => ("A jump to a label", "use 'if' and 'else'"),
+        IBranchOperation => ("A jump to a label", "use 'if' and 'else'"),
+        { Syntax: FixedStatementSyntax } => ("A pointer", "compute with doubles"),
+        { Syntax: YieldStatementSyntax } => ("An iterator", "return one number"),
         IAwaitOperation => ("Waiting for a task", "compute from states, parameters and time only"),
         IAnonymousFunctionOperation or IDelegateCreationOperation or IMethodReferenceOperation =>
             ("A lambda or delegate", "write a local function or a method, and call it"),
         IInvocationOperation { TargetMethod.MethodKind: MethodKind.DelegateInvoke } => ("Calling a delegate", "call a method or a local function"),
+        IInvocationOperation { TargetMethod.RefKind: not RefKind.None } or IPropertyReferenceOperation { Property.RefKind: not RefKind.None } =>
+            ("A reference", "return a plain double"),
         ITupleOperation or IDeconstructionAssignmentOperation => ("A tuple", "use separate local variables, or a method for each value"),
         IArrayCreationOperation or IArrayElementReferenceOperation => ("An array", "use separate local variables, parameters or members"),
         IPropertyReferenceOperation { Arguments.Length: > 0 } => ("An indexer", "use separate local variables, parameters or members"),
@@ -41,8 +45,8 @@ internal static class Unreadable
         DoStatementSyntax loop => loop.DoKeyword.GetLocation(),
         TryStatementSyntax attempt => attempt.TryKeyword.GetLocation(),
         UsingStatementSyntax use => use.UsingKeyword.GetLocation(),
+        FixedStatementSyntax use => use.FixedKeyword.GetLocation(),
         LockStatementSyntax guard => guard.LockKeyword.GetLocation(),
-        LabeledStatementSyntax label => label.Identifier.GetLocation(),
         var other => other.GetLocation(),
     };
 

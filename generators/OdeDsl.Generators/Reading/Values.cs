@@ -15,8 +15,8 @@ internal sealed record ConditionValue(int Node) : Value;
 /// <param name="Number">The node that has the value as a double already, if there is one.</param>
 internal sealed record WholeValue(Choice<BigInteger> Choice, int? Number = null) : Value;
 
-/// <summary>A float, decimal or string constant, which can only be converted.</summary>
-internal sealed record LiteralValue(object Constant) : Value;
+/// <summary>A constant of another type: float, decimal, text or null. It can be passed on and, if it is a number, converted.</summary>
+internal sealed record LiteralValue(object? Constant) : Value;
 
 /// <summary>The model itself.</summary>
 internal sealed record ModelValue : Value
