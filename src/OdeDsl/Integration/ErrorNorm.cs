@@ -35,6 +35,17 @@ internal sealed class ErrorNorm
     /// <summary>The absolute tolerances, padded.</summary>
     public double[] Absolute { get; }
 
+    /// <summary>
+    /// The norm for a method of order 5 whose estimate is of order 3: an estimate passes at 0.1 r^(2/3), so that the error of the step
+    /// itself stays in proportion to the tolerance (the transformation of E. Hairer and G. Wanner's program for the Radau IIA method).
+    /// </summary>
+    public ErrorNorm ForEstimateOfOrderThree()
+    {
+        double relative = 0.1 * Math.Pow(Relative, 2.0 / 3);
+        double ratio = relative / Relative;
+        return new ErrorNorm(relative, Array.ConvertAll(extents, extent => extent * ratio), dimension / stateCount - 1);
+    }
+
     /// <summary>The norm of an error vector; all vectors padded. Not a number if a component is.</summary>
     public double Measure(double[] error, double[] before, double[] after)
     {

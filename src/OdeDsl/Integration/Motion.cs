@@ -63,11 +63,23 @@ internal sealed class Motion
 
     /// <summary>Takes one step.</summary>
     /// <param name="limit">Where to stop at the latest.</param>
-    public StepStatus Step(double limit) => Current.Step(limit);
+    public StepStatus Step(double limit)
+    {
+        if (options.Method == IntegrationMethod.Automatic && Current.SuggestsChange) ChangeMethod();
+        return Current.Step(limit);
+    }
+
+    private void ChangeMethod()
+    {
+        Stepper before = Current;
+        Current = before == explicitStepper ? Implicit : Explicit;
+        Current.Begin(before.EndTime, before.End, Math.Abs(before.Proposed));
+        Statistics.MethodChanges++;
+    }
 
     private Stepper MakeStepper(IntegrationMethod method)
     {
-        Stepper stepper = system.Apply(new StepperFactory(regime, sliding, tangentCount, norm, Statistics));
+        Stepper stepper = system.Apply(new StepperFactory(method, regime, sliding, tangentCount, norm, Statistics));
         stepper.MaximumStep = options.MaximumStep ?? double.PositiveInfinity;
         stepper.MaximumAttempts = options.MaximumSteps;
         return stepper;

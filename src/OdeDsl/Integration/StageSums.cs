@@ -94,6 +94,19 @@ internal static class StageSums
         }
     }
 
+    /// <summary>Computes c₁k₁ + c₂k₂ + c₃k₃.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static void Combine(double[] result, double c1, double[] k1, double c2, double[] k2, double c3, double[] k3)
+    {
+        ref double to = ref Ref(result), r1 = ref Ref(k1), r2 = ref Ref(k2), r3 = ref Ref(k3);
+        var (v1, v2, v3) = (new Vector<double>(c1), new Vector<double>(c2), new Vector<double>(c3));
+        for (nuint i = 0; i < (nuint)result.Length; i += (nuint)Vector<double>.Count)
+        {
+            Vector<double> sum = Add(v2, ref r2, i, v1 * Load(ref r1, i));
+            Add(v3, ref r3, i, sum).StoreUnsafe(ref to, i);
+        }
+    }
+
     /// <summary>Computes c₁k₁ + ... + c₆k₆.</summary>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static void Combine(

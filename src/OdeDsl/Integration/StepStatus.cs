@@ -9,6 +9,9 @@ internal enum StepStatus
     /// <summary>The error test or Newton's method asked for a step that no longer changes the time.</summary>
     StepTooSmall,
 
+    /// <summary>Newton's method did not converge; a smaller step will be tried.</summary>
+    NewtonFailed,
+
     /// <summary>Values that are not finite, however small the step.</summary>
     NotFinite,
 

@@ -85,6 +85,9 @@ internal abstract class Stepper
 
     protected IntegrationStatistics Statistics { get; }
 
+    /// <summary>Whether the step under way was rejected before.</summary>
+    protected bool LastAttemptRejected { get; private set; }
+
     /// <summary>The rates at <see cref="Start"/>, padded.</summary>
     protected double[] StartRates { get; set; }
 
@@ -239,18 +242,18 @@ internal abstract class Stepper
     private StepStatus TryUntilAccepted(double limit)
     {
         var failure = StepStatus.StepTooSmall;
-        for (bool rejected = false; ; rejected = true)
+        for (LastAttemptRejected = false; ; LastAttemptRejected = true)
         {
             if (Statistics.AcceptedSteps + Statistics.RejectedSteps >= MaximumAttempts) return StepStatus.TooManySteps;
             double remaining = limit - StartTime;
             bool landing = Math.Abs(Proposed) * Stretch >= Math.Abs(remaining);
             double h = LastTried = landing ? remaining : Proposed;
-            if (StartTime + GiveUpPart * h == StartTime && !(landing && !rejected)) return failure;
+            if (StartTime + GiveUpPart * h == StartTime && !(landing && !LastAttemptRejected)) return failure;
             (StepStatus outcome, double error) = Attempt(h);
             denseReady = false;
             if (outcome == StepStatus.Accepted && error <= 1)
             {
-                double next = Accept(h, error, rejected);
+                double next = Accept(h, error, LastAttemptRejected);
                 // The shortened last step does not set the next one.
                 if (landing && Math.Abs(next) < Math.Abs(Proposed)) next = Proposed;
                 Proposed = Math.CopySign(Math.Min(Math.Abs(next), MaximumStep), h);
@@ -261,7 +264,7 @@ internal abstract class Stepper
             }
 
             Statistics.RejectedSteps++;
-            failure = outcome == StepStatus.Accepted ? StepStatus.StepTooSmall : outcome;
+            failure = outcome is StepStatus.Accepted or StepStatus.NewtonFailed ? StepStatus.StepTooSmall : outcome;
             Proposed = outcome == StepStatus.NotFinite ? h * NotFiniteFactor : Reject(h, error, outcome);
         }
     }

@@ -4,7 +4,7 @@ namespace OdeDsl.Integration;
 
 /// <summary>Makes a method for a system, with the system's equations compiled in.</summary>
 internal sealed class StepperFactory(
-    double[] regime, SlidingSurface sliding, int tangentCount, ErrorNorm norm, IntegrationStatistics statistics)
+    IntegrationMethod method, double[] regime, SlidingSurface sliding, int tangentCount, ErrorNorm norm, IntegrationStatistics statistics)
     : ISystemOperation<Stepper>
 {
     public Stepper Run<TSystem>(DynamicSystem system)
@@ -15,9 +15,10 @@ internal sealed class StepperFactory(
     }
 
     private Stepper Make<TField>(TField field)
-        where TField : struct, IVectorField
-    {
-        Stepper stepper = new DormandPrince54<TField>(field, norm, statistics);
-        return stepper;
-    }
+        where TField : struct, IVectorField =>
+        method switch
+        {
+            IntegrationMethod.DormandPrince54 => new DormandPrince54<TField>(field, norm, statistics),
+            _ => new RadauIIA5<TField>(field, norm.ForEstimateOfOrderThree(), statistics),
+        };
 }

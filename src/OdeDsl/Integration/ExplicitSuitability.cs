@@ -1,0 +1,56 @@
+namespace OdeDsl.Integration;
+
+/// <summary>
+/// Tells when an implicit method's steps have become so small that an explicit one would be stable with them: |h| times a norm of the
+/// Jacobian, which bounds its eigenvalues, well inside the explicit method's stability region, many steps in a row.
+/// </summary>
+internal struct ExplicitSuitability
+{
+    /// <summary>The region of the explicit pair reaches to about 3.3 on the real axis and 1 on the imaginary one.</summary>
+    private const double Limit = 1;
+
+    /// <summary>Steps in a row; doubled after each change, so that changes stay rare.</summary>
+    private const int FirstCount = 10;
+    private const int LargestCount = 1000;
+
+    private double norm;
+    private int count;
+    private int required;
+
+    /// <summary>Whether the explicit method suits.</summary>
+    public readonly bool IsSuitable => required > 0 && count >= required;
+
+    /// <summary>Takes the norm of a Jacobian, in units of the tolerances.</summary>
+    public void Measure(double[] jacobian, double[] y, ErrorNorm tolerance, int n)
+    {
+        double rows = 0, squares = 0;
+        for (int i = 0; i < n; i++)
+        {
+            double row = 0, scale = tolerance.Absolute[i] + tolerance.Relative * Math.Abs(y[i]);
+            for (int j = 0; j < n; j++)
+            {
+                double entry = Math.Abs(jacobian[i * n + j]) * (tolerance.Absolute[j] + tolerance.Relative * Math.Abs(y[j])) / scale;
+                row += entry;
+                squares += entry * entry;
+            }
+
+            rows = Math.Max(rows, row);
+        }
+
+        norm = Math.Min(rows, Math.Sqrt(squares));
+    }
+
+    /// <summary>Observes an accepted step.</summary>
+    public void Observe(double h)
+    {
+        if (required == 0) required = FirstCount;
+        count = Math.Abs(h) * norm <= Limit ? count + 1 : 0;
+    }
+
+    /// <summary>Starts counting anew.</summary>
+    public void Reset()
+    {
+        if (IsSuitable) required = Math.Min(2 * required, LargestCount);
+        count = 0;
+    }
+}
