@@ -10,7 +10,7 @@ internal sealed class DormandPrince54<TField> : Stepper
     where TField : struct, IVectorField
 {
     private readonly TField field;
-    private readonly double[] k2, k3, k4, k5, k6, lastStage;
+    private readonly double[] k2, k3, k4, k5, k6;
     private double[] k7;
     private StepController controller = new(order: 5);
     private StiffnessDetector stiffness;
@@ -25,7 +25,7 @@ internal sealed class DormandPrince54<TField> : Stepper
         k5 = StageSums.Allocate(Dimension);
         k6 = StageSums.Allocate(Dimension);
         k7 = StageSums.Allocate(Dimension);
-        lastStage = StageSums.Allocate(Dimension);
+        stiffness = new StiffnessDetector(field.BlockSize);
     }
 
     public override IntegrationMethod Method => IntegrationMethod.DormandPrince54;
@@ -52,8 +52,8 @@ internal sealed class DormandPrince54<TField> : Stepper
         field.Rates(t + C4 * h, stage.AsSpan(0, n), k4.AsSpan(0, n));
         StageSums.Combine(stage, y, h * A51, k1, h * A52, k2, h * A53, k3, h * A54, k4);
         field.Rates(t + C5 * h, stage.AsSpan(0, n), k5.AsSpan(0, n));
-        StageSums.Combine(lastStage, y, h * A61, k1, h * A62, k2, h * A63, k3, h * A64, k4, h * A65, k5);
-        field.Rates(t + h, lastStage.AsSpan(0, n), k6.AsSpan(0, n));
+        StageSums.Combine(stage, y, h * A61, k1, h * A62, k2, h * A63, k3, h * A64, k4, h * A65, k5);
+        field.Rates(t + h, stage.AsSpan(0, n), k6.AsSpan(0, n));
         StageSums.Combine(End, y, h * B1, k1, h * B3, k3, h * B4, k4, h * B5, k5, h * B6, k6);
         field.Rates(t + h, End.AsSpan(0, n), k7.AsSpan(0, n));
         Statistics.RateEvaluations += StageCount - 1;
@@ -65,9 +65,9 @@ internal sealed class DormandPrince54<TField> : Stepper
 
     protected override double Accept(double h, double error, bool rejectedBefore)
     {
-        if (stiffness.IsDue(Statistics.AcceptedSteps))
+        if (stiffness.IsDue())
         {
-            stiffness.Observe(h, k6, k7, lastStage, End);
+            stiffness.Observe(field, h, StartTime + h, End, StartRates, k7, Norm);
             SuggestsChange = stiffness.IsStiff;
         }
 
@@ -97,6 +97,6 @@ internal sealed class DormandPrince54<TField> : Stepper
     protected override void Forget()
     {
         controller.Reset();
-        stiffness = default;
+        stiffness.Reset();
     }
 }

@@ -73,6 +73,19 @@ internal sealed class ErrorNorm
         return Math.Sqrt(Vector.Sum(sum) / dimension);
     }
 
+    /// <summary>The length of a vector of states in units of the tolerances at a state.</summary>
+    public double Length(ReadOnlySpan<double> vector, ReadOnlySpan<double> state)
+    {
+        double sum = 0;
+        for (int i = 0; i < vector.Length; i++)
+        {
+            double ratio = vector[i] / (Absolute[i] + Relative * Math.Abs(state[i]));
+            sum += ratio * ratio;
+        }
+
+        return Math.Sqrt(sum);
+    }
+
     /// <summary>
     /// Sets the absolute tolerances of each tangent to r times its length, where the length is the largest component
     /// counted in extents of the states: an error that is small against the whole tangent does no harm.

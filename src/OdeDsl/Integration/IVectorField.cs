@@ -15,6 +15,9 @@ internal interface IVectorField
     /// <summary>Computes f(t, y).</summary>
     void Rates(double time, ReadOnlySpan<double> y, Span<double> rates);
 
+    /// <summary>Computes the product of the first block's Jacobian with a direction of the first block.</summary>
+    void DirectionalDerivative(double time, ReadOnlySpan<double> y, ReadOnlySpan<double> direction, Span<double> product);
+
     /// <summary>
     /// Computes the Jacobian of the first block by rows. Implicit methods use it for every block: the blocks of tangents have the same
     /// one, and their dependence on the state is left to the iteration (the state does not depend on them).

@@ -18,6 +18,12 @@ internal readonly struct ModelField<TSystem>(double[] parameters, double[] regim
         else TSystem.Rates(time, y, parameters, regime, rates);
     }
 
+    public void DirectionalDerivative(double time, ReadOnlySpan<double> y, ReadOnlySpan<double> direction, Span<double> product)
+    {
+        if (sliding.IsActive) sliding.DirectionalDerivative(time, y, direction, product);
+        else TSystem.JacobianVectorProduct(time, y, parameters, regime, direction, product);
+    }
+
     public void Jacobian(double time, ReadOnlySpan<double> y, Span<double> jacobian)
     {
         if (sliding.IsActive) sliding.Jacobian(time, y, jacobian);

@@ -33,6 +33,9 @@ internal readonly struct VariationalField<TField>(TField inner, int tangentCount
         }
     }
 
+    public void DirectionalDerivative(double time, ReadOnlySpan<double> y, ReadOnlySpan<double> direction, Span<double> product) =>
+        inner.DirectionalDerivative(time, y[..inner.Dimension], direction, product);
+
     public void Jacobian(double time, ReadOnlySpan<double> y, Span<double> jacobian) =>
         inner.Jacobian(time, y[..inner.Dimension], jacobian);
 }

@@ -38,7 +38,7 @@ internal interface IHandWritten<TSelf> : IOdeSystem
     static void IOdeSystem.StateJacobian(
         double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian)
     {
-        int n = state.Length;
+        int n = TSelf.Description.States.Length;
         double[] x = state.ToArray(), plus = new double[n], minus = new double[n];
         for (int j = 0; j < n; j++)
         {
@@ -71,8 +71,17 @@ internal interface IHandWritten<TSelf> : IOdeSystem
         ReadOnlySpan<double> parameters,
         ReadOnlySpan<double> regime,
         ReadOnlySpan<double> direction,
-        Span<double> product) =>
-        throw new NotSupportedException();
+        Span<double> product)
+    {
+        int n = TSelf.Description.States.Length;
+        var jacobian = new double[n * n];
+        TSelf.StateJacobian(time, state[..n], parameters, regime, jacobian);
+        for (int i = 0; i < n; i++)
+        {
+            product[i] = 0;
+            for (int j = 0; j < n; j++) product[i] += jacobian[i * n + j] * direction[j];
+        }
+    }
 
     static void IOdeSystem.Observables(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> values)
     {
