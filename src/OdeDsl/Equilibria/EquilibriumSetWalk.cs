@@ -51,7 +51,7 @@ internal sealed class EquilibriumSetWalk(RootProblem problem, DampedNewton newto
         double[] backward = [.. forward.Select(static value => -value)];
         if (Neighbour(start, forward, StepLength) is null && Neighbour(start, backward, StepLength) is null) return null;
         List<double[]> ahead = Walk(start, forward);
-        bool closed = ahead.Count > 2 && region.Distance(ahead[^1], start) <= StepLength / 2;
+        bool closed = ahead.Count > 2 && Distance(ahead[^1], start) <= StepLength / 2;
         List<double[]> behind = closed ? [] : Walk(start, backward);
         behind.Reverse();
         return new EquilibriumSet(1, [.. behind.Append(start).Concat(ahead).Select(State)]);
@@ -77,7 +77,7 @@ internal sealed class EquilibriumSetWalk(RootProblem problem, DampedNewton newto
             for (int i = 0; i < here.Length; i++) along += (next[i] - here[i]) * directions[0][i] / (problem.Scale[i] * problem.Scale[i]);
             direction = along >= 0 ? directions[0] : [.. directions[0].Select(static value => -value)];
             here = next;
-            if (k > 1 && region.Distance(next, start) <= StepLength / 2) return points; // once round a closed line
+            if (k > 1 && Distance(next, start) <= StepLength / 2) return points; // once round a closed line
         }
 
         return points;
@@ -103,14 +103,20 @@ internal sealed class EquilibriumSetWalk(RootProblem problem, DampedNewton newto
         var point = new double[here.Length];
         for (int i = 0; i < here.Length; i++) point[i] = here[i] + (length * direction[i]);
         if (!newton.Solve(point)) return null;
-        double moved = 0;
-        for (int i = 0; i < here.Length; i++)
+        return Distance(point, here) >= Returned * length ? point : null;
+    }
+
+    // In scales of all unknowns; angles modulo their periods, so that a line once round a circle closes.
+    private double Distance(double[] a, double[] b)
+    {
+        double sum = 0;
+        for (int i = 0; i < a.Length; i++)
         {
-            double part = (point[i] - here[i]) / problem.Scale[i];
-            moved += part * part;
+            double part = (i < region.Count ? region.Difference(i, a[i], b[i]) : a[i] - b[i]) / problem.Scale[i];
+            sum += part * part;
         }
 
-        return Math.Sqrt(moved) >= Returned * length ? point : null;
+        return Math.Sqrt(sum);
     }
 
     private bool IsInside(double[] point)

@@ -20,10 +20,8 @@ internal sealed class RegimeSurvey
     /// <summary>Bisection down to rounding of the segment's parameter.</summary>
     private const int Bisections = 50;
 
-    /// <summary>Rates that differ by less than this part across a surface are continuous there: a kink, not a jump.</summary>
-    private const double Continuous = 1e-7;
-
     private readonly DynamicSystem system;
+    private readonly SearchRegion region;
     private readonly List<double[]> regimes = [];
     private readonly List<SwitchingFace> faces = [];
     private readonly double[] point;
@@ -31,6 +29,7 @@ internal sealed class RegimeSurvey
     public RegimeSurvey(DynamicSystem system, SearchRegion region, int seed)
     {
         this.system = system;
+        this.region = region;
         int n = system.StateCount;
         point = new double[n];
         if (system.SwitchCount == 0)
@@ -98,7 +97,7 @@ internal sealed class RegimeSurvey
     {
         if (faces.Count >= MaximumFaces || MakeFace(before, after) is not SwitchingFace face || faces.Exists(face.SameAs)) return;
         for (int i = 0; i < point.Length; i++) point[i] = from[i] + (fraction * (to[i] - from[i]));
-        if (RatesJump(face)) faces.Add(face);
+        if (face.RatesJump(system, region, point)) faces.Add(face);
     }
 
     private SwitchingFace? MakeFace(double[] before, double[] after)
@@ -112,19 +111,5 @@ internal sealed class RegimeSurvey
         bool oneIsBelow = kind is SwitchKind.Below or SwitchKind.NotAbove;
         bool beforeIsBelow = before[k] < after[k] != oneIsBelow;
         return beforeIsBelow ? new SwitchingFace(k, level, before, after) : new SwitchingFace(k, level, after, before);
-    }
-
-    private bool RatesJump(SwitchingFace face)
-    {
-        int n = system.StateCount;
-        var (below, above) = (new double[n], new double[n]);
-        system.Rates(0, point, face.Below, below);
-        system.Rates(0, point, face.Above, above);
-        for (int i = 0; i < n; i++)
-        {
-            if (Math.Abs(above[i] - below[i]) > Continuous * Math.Max(Math.Abs(above[i]), Math.Abs(below[i]))) return true;
-        }
-
-        return false;
     }
 }

@@ -12,7 +12,7 @@ internal sealed class SurfaceProblem : RootProblem
     private const double Aside = 1e-6;
 
     /// <summary>How far α may lie outside (0, 1): rounding only.</summary>
-    private const double WeightSlack = 1e-9;
+    private const double WeightSlack = 1e-12;
 
     private readonly SwitchingFace face;
     private readonly double[] scale;
@@ -80,7 +80,8 @@ internal sealed class SurfaceProblem : RootProblem
         if (!(point[n] >= -WeightSlack && point[n] <= 1 + WeightSlack) || !Region.Contains(state)) return false;
         EvaluateSides(state);
         System.SwitchingJacobian(0, state, face.Below, gradients);
-        return RatesJump() && RegimeAside(state, -1, face.Below) && RegimeAside(state, 1, face.Above);
+        return Slope(ratesAbove) != Slope(ratesBelow) && face.RatesJump(System, Region, state)
+            && RegimeAside(state, -1, face.Below) && RegimeAside(state, 1, face.Above);
     }
 
     public override Equilibrium Describe(ReadOnlySpan<double> point, int nullity, EquilibriumSet? set)
@@ -145,18 +146,6 @@ internal sealed class SurfaceProblem : RootProblem
         }
 
         return sliding;
-    }
-
-    // Where both sides' rates are equal the weight means nothing: a kink, whose rests are found as ordinary ones.
-    private bool RatesJump()
-    {
-        for (int i = 0; i < StateCount; i++)
-        {
-            double size = Math.Max(Math.Abs(ratesBelow[i]), Math.Abs(ratesAbove[i]));
-            if (Math.Abs(ratesAbove[i] - ratesBelow[i]) > OnSurface * size && Slope(ratesAbove) != Slope(ratesBelow)) return true;
-        }
-
-        return false;
     }
 
     private bool RegimeAside(ReadOnlySpan<double> state, double direction, double[] expected)
