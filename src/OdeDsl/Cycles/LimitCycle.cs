@@ -1,6 +1,7 @@
 using System.Collections.Immutable;
 using System.Numerics;
 using OdeDsl.Equilibria;
+using OdeDsl.Integration;
 
 namespace OdeDsl.Cycles;
 
@@ -44,6 +45,9 @@ public sealed record LimitCycle
 
     /// <summary>Whether the cycle was reached by running time backwards.</summary>
     public required bool FoundInReversedTime { get; init; }
+
+    /// <summary>The motion once round, from <see cref="State"/>; it runs backwards for a cycle found in reversed time.</summary>
+    public required Trajectory Orbit { get; init; }
 
     /// <summary>Whether nearby motions approach the cycle.</summary>
     public bool IsStable => Stability == Stability.Stable;

@@ -6,7 +6,7 @@ namespace OdeDsl.Cycles;
 /// <summary>The limit cycles and families of closed orbits a search found, and what its runs did. What was not found may still exist.</summary>
 public sealed record LimitCycleSearchResult
 {
-    /// <summary>The distinct limit cycles, by ascending period.</summary>
+    /// <summary>The distinct limit cycles, in the order in which they were found: stable ones first.</summary>
     public required ImmutableArray<LimitCycle> Cycles { get; init; }
 
     /// <summary>The families of closed orbits.</summary>

@@ -10,13 +10,14 @@ namespace OdeDsl.Equilibria;
 /// </summary>
 internal sealed class MinimumNormSolver
 {
-    /// <summary>A smallest pivot below this part of the largest sends the matrix to the singular value decomposition.</summary>
-    private const double PivotRatio = 1e-10;
+    /// <summary>The rank cut for matrices known to rounding.</summary>
+    private const double RoundingCut = 1e-12;
 
-    /// <summary>Singular values below this part of the largest count as zero when solving.</summary>
-    private const double RankCut = 1e-12;
+    /// <summary>A smallest pivot below this many rank cuts, relative to the largest, calls for the singular value decomposition.</summary>
+    private const double PivotMargin = 100;
 
     private readonly int n;
+    private readonly double rankCut;
     private readonly double[] columnScale;
     private readonly double[] rowScale;
     private readonly double[] scaled;
@@ -25,8 +26,12 @@ internal sealed class MinimumNormSolver
     private readonly double[] work;
     private Svd<double>? decomposition;
 
-    public MinimumNormSolver(ReadOnlySpan<double> columnScale)
+    /// <summary>Makes a solver.</summary>
+    /// <param name="columnScale">The sizes of the unknowns.</param>
+    /// <param name="rankCut">Singular values up to this part of the largest count as zero when solving: the accuracy of the matrices.</param>
+    public MinimumNormSolver(ReadOnlySpan<double> columnScale, double rankCut = RoundingCut)
     {
+        this.rankCut = rankCut;
         n = columnScale.Length;
         this.columnScale = columnScale.ToArray();
         (rowScale, work) = (new double[n], new double[n]);
@@ -131,7 +136,7 @@ internal sealed class MinimumNormSolver
         }
 
         DeterminantSign = sign;
-        return smallest > PivotRatio * largest;
+        return smallest > PivotMargin * rankCut * largest;
     }
 
     private void SwapRows(int a, int b)
@@ -162,7 +167,7 @@ internal sealed class MinimumNormSolver
         Vector<double> values = svd.S;
         for (int k = 0; k < n; k++)
         {
-            if (values[k] <= RankCut * values[0] || values[k] == 0) continue;
+            if (values[k] <= rankCut * values[0] || values[k] == 0) continue;
             double projection = 0;
             for (int i = 0; i < n; i++) projection += svd.U[i, k] * work[i];
             projection /= values[k];

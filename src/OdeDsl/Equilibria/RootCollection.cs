@@ -98,31 +98,10 @@ internal sealed class RootCollection(SearchRegion region)
         if (set.Dimension > 1) return true;
         for (int k = 1; k < set.Points.Length; k++)
         {
-            if (DistanceToSegment(state, set.Points[k - 1].AsSpan(), set.Points[k].AsSpan()) <= OnLine) return true;
+            if (region.DistanceToSegment(state, set.Points[k - 1].AsSpan(), set.Points[k].AsSpan(), region.Width) <= OnLine) return true;
         }
 
         return false;
-    }
-
-    private double DistanceToSegment(ReadOnlySpan<double> state, ReadOnlySpan<double> from, ReadOnlySpan<double> to)
-    {
-        double along = 0, square = 0;
-        for (int i = 0; i < state.Length; i++)
-        {
-            double segment = (to[i] - from[i]) / region.Width[i];
-            along += region.Difference(i, state[i], from[i]) / region.Width[i] * segment;
-            square += segment * segment;
-        }
-
-        double fraction = square > 0 ? Math.Clamp(along / square, 0, 1) : 0;
-        double largest = 0;
-        for (int i = 0; i < state.Length; i++)
-        {
-            double gap = (region.Difference(i, state[i], from[i]) - (fraction * (to[i] - from[i]))) / region.Width[i];
-            largest = Math.Max(largest, Math.Abs(gap));
-        }
-
-        return largest;
     }
 
     private bool IsEnd(EquilibriumSet set, double[] state)

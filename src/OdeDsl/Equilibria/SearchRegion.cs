@@ -19,6 +19,12 @@ internal sealed class SearchRegion
     /// <summary>Roots within this part of the width outside a bound count as lying on it.</summary>
     private const double BoundSlack = 1e-9;
 
+    /// <summary>A motion this many widths outside its bounds has run away. Our choice.</summary>
+    private const double RunawayBounded = 10;
+
+    /// <summary>The same where the model gives no bounds and the width is only a guess.</summary>
+    private const double RunawayUnbounded = 1e4;
+
     private readonly double[] trueLower;
     private readonly double[] trueUpper;
     private readonly double[] period;
@@ -127,6 +133,43 @@ internal sealed class SearchRegion
             double excess = Math.Max(Lower[i] - state[i], state[i] - Upper[i]) / Width[i];
             if (double.IsNaN(excess)) return double.PositiveInfinity;
             largest = Math.Max(largest, excess);
+        }
+
+        return largest;
+    }
+
+    /// <summary>Whether a motion has left for good: angles never do.</summary>
+    public bool IsRunaway(ReadOnlySpan<double> state)
+    {
+        for (int i = 0; i < Count; i++)
+        {
+            if (period[i] > 0) continue;
+            double limit = double.IsFinite(trueLower[i]) && double.IsFinite(trueUpper[i]) ? RunawayBounded : RunawayUnbounded;
+            double excess = Math.Max(Lower[i] - state[i], state[i] - Upper[i]) / Width[i];
+            if (!(excess <= limit)) return true;
+        }
+
+        return false;
+    }
+
+    /// <summary>The distance of a state from a segment, in given units; the ends of the segment lie less than half a period apart.</summary>
+    public double DistanceToSegment(
+        ReadOnlySpan<double> state, ReadOnlySpan<double> from, ReadOnlySpan<double> to, ReadOnlySpan<double> units)
+    {
+        double along = 0, square = 0;
+        for (int i = 0; i < Count; i++)
+        {
+            double segment = (to[i] - from[i]) / units[i];
+            along += Difference(i, state[i], from[i]) / units[i] * segment;
+            square += segment * segment;
+        }
+
+        double fraction = square > 0 ? Math.Clamp(along / square, 0, 1) : 0;
+        double largest = 0;
+        for (int i = 0; i < Count; i++)
+        {
+            double gap = (Difference(i, state[i], from[i]) - (fraction * (to[i] - from[i]))) / units[i];
+            largest = Math.Max(largest, Math.Abs(gap));
         }
 
         return largest;
