@@ -3,6 +3,7 @@ using System.Globalization;
 using System.Text;
 using System.Threading;
 using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.CSharp;
 using Microsoft.CodeAnalysis.CSharp.Syntax;
 using Microsoft.CodeAnalysis.Text;
 using OdeDsl.Generators.Diagnostics;
@@ -21,7 +22,7 @@ public sealed class ModelGenerator : IIncrementalGenerator
     public void Initialize(IncrementalGeneratorInitializationContext context)
     {
         IncrementalValuesProvider<ModelReading> readings = context.SyntaxProvider
-            .ForAttributeWithMetadataName(Attributes.ModelName, static (node, _) => node is TypeDeclarationSyntax, static (marked, cancellation) => Read(marked, cancellation))
+            .ForAttributeWithMetadataName(Attributes.ModelName, static (node, _) => IsClass(node), static (marked, cancellation) => Read(marked, cancellation))
             .WithTrackingName(StepNames.Reading);
 
         IncrementalValuesProvider<ModelDefinition> models = readings
@@ -37,12 +38,21 @@ public sealed class ModelGenerator : IIncrementalGenerator
         context.RegisterSourceOutput(problems, static (output, problem) => output.ReportDiagnostic(problem));
     }
 
+    /// <summary>The attribute is refused elsewhere by the compiler.</summary>
+    private static bool IsClass(SyntaxNode node) => node is ClassDeclarationSyntax || node.IsKind(SyntaxKind.RecordDeclaration);
+
     private static ModelReading Read(GeneratorAttributeSyntaxContext marked, CancellationToken cancellation)
     {
         TypeDeclarationSyntax declaration = (TypeDeclarationSyntax)marked.TargetNode;
+        return Guarded(declaration, () => ModelReader.Read((INamedTypeSymbol)marked.TargetSymbol, declaration, marked.SemanticModel.Compilation, cancellation));
+    }
+
+    /// <summary>Turns a fault of ours into a problem of one model: a generator that throws takes the code of all models away.</summary>
+    internal static ModelReading Guarded(TypeDeclarationSyntax declaration, Func<ModelReading> read)
+    {
         try
         {
-            return ModelReader.Read((INamedTypeSymbol)marked.TargetSymbol, declaration, marked.SemanticModel.Compilation, cancellation);
+            return read();
         }
         catch (Exception fault) when (fault is not OperationCanceledException)
         {

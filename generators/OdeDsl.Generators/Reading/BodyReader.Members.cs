@@ -47,7 +47,11 @@ internal sealed partial class BodyReader
     /// <summary>Whether the instance is the model; if not, the problem is reported.</summary>
     private bool BelongsToModel(IOperation? instance, IOperation operation, ISymbol member)
     {
-        if (NotAFunction.Contains(member.ContainingType) && member.ContainingType.IsReferenceType)
+        if (Unreadable.IsExtensionBlock(member.ContainingType))
+        {
+            Unsupported(operation);
+        }
+        else if (NotAFunction.Contains(member.ContainingType) && member.ContainingType.IsReferenceType)
         {
             Problem(Descriptors.NotAFunction, operation, Name(member));
         }

@@ -163,6 +163,7 @@ internal sealed partial class BodyReader
 
     private UnknownValue Unsupported(IOperation operation)
     {
+        if (operation.Type is IErrorTypeSymbol) return Unresolved(operation);
         (string what, string instead) = Unreadable.Describe(operation);
         return Problem(Descriptors.ExpressionNotSupported, operation, what, instead);
     }

@@ -24,6 +24,8 @@ internal static class Unreadable
         IInvocationOperation { TargetMethod.MethodKind: MethodKind.DelegateInvoke } => ("Calling a delegate", "call a method or a local function"),
         IInvocationOperation { TargetMethod.RefKind: not RefKind.None } or IPropertyReferenceOperation { Property.RefKind: not RefKind.None } =>
             ("A reference", "return a plain double"),
+        IInvocationOperation { TargetMethod.ContainingType: var type } when IsExtensionBlock(type) => Extension,
+        IPropertyReferenceOperation { Property.ContainingType: var type } when IsExtensionBlock(type) => Extension,
         ITupleOperation or IDeconstructionAssignmentOperation => ("A tuple", "use separate local variables, or a method for each value"),
         IArrayCreationOperation or IArrayElementReferenceOperation => ("An array", "use separate local variables, parameters or members"),
         IPropertyReferenceOperation { Arguments.Length: > 0 } => ("An indexer", "use separate local variables, parameters or members"),
@@ -35,6 +37,9 @@ internal static class Unreadable
         IInstanceReferenceOperation => ("This use of an object", "compute with doubles"),
         _ => ("'" + Shortened(UserText.Of(operation.Syntax)) + "'", "write it with arithmetic, comparisons and functions of System.Math on doubles"),
     };
+
+    /// <summary>Whether the type is a C# 14 extension block. (The compiler the generator is built against has no name for it yet.)</summary>
+    public static bool IsExtensionBlock(INamedTypeSymbol? type) => type is { Name.Length: 0, IsAnonymousType: false, IsTupleType: false };
 
     /// <summary>Where to point: at the keyword of a statement rather than at all it contains.</summary>
     public static Location Place(IOperation statement) => statement.Syntax switch
@@ -49,6 +54,9 @@ internal static class Unreadable
         LockStatementSyntax guard => guard.LockKeyword.GetLocation(),
         var other => other.GetLocation(),
     };
+
+    private static (string What, string Instead) Extension =>
+        ("A member of an extension block", "write an extension method with a 'this' parameter");
 
     private static string Shortened(string text) => text.Length <= 60 ? text : text.Substring(0, 57) + "...";
 }
