@@ -8,6 +8,7 @@ internal sealed record AssessmentDocument(
     int Schema,
     string Model,
     string Summary,
+    string TimeUnit,
     IReadOnlyList<ParameterDocument> Parameters,
     IReadOnlyDictionary<string, double> InitialState,
     IReadOnlyDictionary<string, string> StateUnits,
@@ -16,7 +17,6 @@ internal sealed record AssessmentDocument(
     MarginsDocument Margins,
     MethodDocument Method,
     IReadOnlyList<string> Remarks,
-    long RateEvaluations,
     string Caution);
 
 internal sealed record ParameterDocument(string Name, string Unit, double Value, double Lower, double Upper);

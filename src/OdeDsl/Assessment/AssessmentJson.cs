@@ -37,6 +37,7 @@ public static class AssessmentJson
             Schema,
             description.Name,
             description.Summary,
+            description.TimeUnit,
             [.. description.Parameters.Select((parameter, i) =>
                 new ParameterDocument(parameter.Name, parameter.Unit, assessment.Parameters[i], parameter.Lower, parameter.Upper))],
             Named(description, assessment.InitialState),
@@ -46,7 +47,6 @@ public static class AssessmentJson
             Margins(assessment.Margins),
             Method(assessment.Method, includeTimings),
             assessment.Remarks,
-            assessment.RateEvaluations,
             Caution);
     }
 

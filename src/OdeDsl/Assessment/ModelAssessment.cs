@@ -36,7 +36,4 @@ public sealed record ModelAssessment
 
     /// <summary>What could not be answered and why, or what deserves attention; a sentence each.</summary>
     public required IReadOnlyList<string> Remarks { get; init; }
-
-    /// <summary>The work done: how many times the rates were evaluated in all analyses, timing runs excluded.</summary>
-    public required long RateEvaluations { get; init; }
 }

@@ -17,9 +17,6 @@ internal sealed class RestMargins(DynamicSystem system, ImmutableArray<Equilibri
 
     private readonly List<MarginCandidate> found = [];
 
-    /// <summary>The rates' Jacobians evaluated so far.</summary>
-    public long Evaluations { get; private set; }
-
     /// <summary>The changes met between the present value and the end of the range, in no order; some may lie beyond the nearest.</summary>
     public IReadOnlyList<MarginCandidate> Between(int parameter, double value, double end)
     {
@@ -46,7 +43,6 @@ internal sealed class RestMargins(DynamicSystem system, ImmutableArray<Equilibri
             {
                 BranchResult branch = BranchFollower.Follow(
                     system, parameter, rests[k].State.AsSpan(), value, end, new BranchOptions(), cancellation);
-                Evaluations += branch.JacobianEvaluations;
                 Collect(branch, name);
             }
             catch (InvalidOperationException exception)
@@ -59,22 +55,39 @@ internal sealed class RestMargins(DynamicSystem system, ImmutableArray<Equilibri
 
     private void Collect(BranchResult branch, string name)
     {
+        if (PassesFromCentre(branch, name) is { } atOnce) found.Add(atOnce);
         bool folded = false;
         foreach (SpecialPoint point in branch.SpecialPoints)
         {
-            if (point.ChangesStability) found.Add(Candidate(branch, point, folded ? "another rest" : name));
+            if (point.ChangesStability) found.Add(Candidate(branch, point, folded ? AttractorNames.OtherRest : name));
             folded |= point.Kind == SpecialPointKind.Fold;
         }
 
         FollowedEquilibrium last = branch.Points[^1];
         if (last.UnstableCount > 0) return;
-        string who = folded ? "another rest" : name;
+        string who = folded ? AttractorNames.OtherRest : name;
         if (branch.End == BranchEnd.StateBoundReached)
             found.Add(new MarginCandidate(MarginEvent.LeavesBounds, last.Parameter, who, $"{who} leaves the state bounds", branch.EndText));
         else if (branch.End == BranchEnd.SurfaceReached)
             found.Add(new MarginCandidate(MarginEvent.SurfaceContact, last.Parameter, who, $"{who} meets a switching surface and does not continue as an ordinary rest", branch.EndText));
         else if (branch.End is BranchEnd.StepTooSmall or BranchEnd.NotFinite or BranchEnd.PointLimit)
             found.Add(new MarginCandidate(MarginEvent.Unknown, last.Parameter, who, $"{who} could not be followed further", branch.EndText));
+    }
+
+    /// <summary>A rest that is a centre at the present value only: the change lies there.</summary>
+    private static MarginCandidate? PassesFromCentre(BranchResult branch, string name)
+    {
+        FollowedEquilibrium first = branch.Points[0], next = branch.Points[Math.Min(1, branch.Points.Count - 1)];
+        if (first.UnstableCount > 0 || first.IsStable || (next.UnstableCount == 0 && !next.IsStable)) return null;
+        double frequency = first.Eigenvalues.Max(static value => value.Imaginary);
+        if (frequency <= 0) return null;
+        return new MarginCandidate(
+            MarginEvent.HopfPoint,
+            first.Parameter,
+            name,
+            $"{name} is a centre only at the present value and {(next.IsStable ? "stable" : "unstable")} beyond",
+            "eigenvalues on the imaginary axis at the present value and off it at the next point followed",
+            frequency);
     }
 
     private static MarginCandidate Candidate(BranchResult branch, SpecialPoint point, string who)
@@ -97,9 +110,7 @@ internal sealed class RestMargins(DynamicSystem system, ImmutableArray<Equilibri
                 MarginEvent.HopfPoint,
                 point.Parameter,
                 who,
-                string.Create(
-                    CultureInfo.InvariantCulture,
-                    $"{who} {(loses ? "loses" : "gains")} stability by oscillation at {point.Frequency:G6} rad per unit of time (Hopf point)"),
+                $"{who} {(loses ? "loses" : "gains")} stability by oscillation at {AssessmentText.Frequency(branch.Description, point.Frequency!.Value)} (Hopf point)",
                 evidence,
                 point.Frequency),
             SpecialPointKind.BranchPoint => new MarginCandidate(

@@ -270,7 +270,8 @@ internal sealed class BranchFollower
         special.Add(new SpecialPoint
         {
             Kind = kind,
-            Parameter = point.Parameter * curve.Scales[^1],
+            // A special point on a bound may come out a rounding beyond it.
+            Parameter = Math.Clamp(point.Parameter * curve.Scales[^1], Math.Min(range.From, range.To), Math.Max(range.From, range.To)),
             State = curve.StateOf(point.Position),
             Eigenvalues = point.Eigenvalues,
             Frequency = kind == SpecialPointKind.HopfPoint ? SpecialPointLocator.CriticalFrequency(point) : null,

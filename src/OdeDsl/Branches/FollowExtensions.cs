@@ -20,7 +20,7 @@ public static class FollowExtensions
     /// <param name="from">The value to start at, in the parameter's unit. The branch ends when it comes back here.</param>
     /// <param name="to">The value to reach, in the parameter's unit; may be smaller than <paramref name="from"/>.</param>
     /// <param name="options">How finely to follow, and where to start.</param>
-    /// <param name="cancellation">Stops the following.</param>
+    /// <param name="cancellationToken">Stops the following.</param>
     /// <returns>The branch with its special points and why it ended.</returns>
     /// <exception cref="ArgumentException">The selector does not return one parameter unchanged, the values are not finite or equal, or an option is out of its range.</exception>
     /// <exception cref="InvalidOperationException">The rates depend on time, or no equilibrium was found at <paramref name="from"/>.</exception>
@@ -31,13 +31,13 @@ public static class FollowExtensions
         double from,
         double to,
         BranchOptions? options = null,
-        CancellationToken cancellation = default)
+        CancellationToken cancellationToken = default)
         where TModel : class, IOdeModel<TModel, TSystem>
         where TSystem : struct, IOdeSystem
     {
         ArgumentNullException.ThrowIfNull(model);
         ArgumentNullException.ThrowIfNull(parameter);
-        return DynamicSystem.Of(model).Follow(ParameterSelector.IndexOf(model, parameter), from, to, options, cancellation);
+        return DynamicSystem.Of(model).Follow(ParameterSelector.IndexOf(model, parameter), from, to, options, cancellationToken);
     }
 
     /// <summary>
@@ -49,7 +49,7 @@ public static class FollowExtensions
     /// <param name="from">The value to start at, in the parameter's unit. The branch ends when it comes back here.</param>
     /// <param name="to">The value to reach, in the parameter's unit; may be smaller than <paramref name="from"/>.</param>
     /// <param name="options">How finely to follow, and where to start.</param>
-    /// <param name="cancellation">Stops the following.</param>
+    /// <param name="cancellationToken">Stops the following.</param>
     /// <returns>The branch with its special points and why it ended.</returns>
     /// <exception cref="ArgumentException">The index or the values are no parameter's, or an option is out of its range.</exception>
     /// <exception cref="InvalidOperationException">The rates depend on time, or no equilibrium was found at <paramref name="from"/>.</exception>
@@ -60,7 +60,7 @@ public static class FollowExtensions
         double from,
         double to,
         BranchOptions? options = null,
-        CancellationToken cancellation = default)
+        CancellationToken cancellationToken = default)
     {
         ArgumentNullException.ThrowIfNull(system);
         ArgumentOutOfRangeException.ThrowIfNegative(parameter);
@@ -72,16 +72,16 @@ public static class FollowExtensions
         BranchOptions.Validate(options, system.StateCount);
         if (system.Description.DependsOnTime)
             throw new InvalidOperationException($"The rates of {system.Description.Name} depend on time: it has no equilibria to follow.");
-        ImmutableArray<double> start = FindStart(system.WithParameter(parameter, from), parameter, options, cancellation);
-        return BranchFollower.Follow(system, parameter, start.AsSpan(), from, to, options, cancellation);
+        ImmutableArray<double> start = FindStart(system.WithParameter(parameter, from), parameter, options, cancellationToken);
+        return BranchFollower.Follow(system, parameter, start.AsSpan(), from, to, options, cancellationToken);
     }
 
     /// <summary>The equilibrium nearest to the start asked for, relative to the searched region.</summary>
     private static ImmutableArray<double> FindStart(
-        DynamicSystem system, int parameter, BranchOptions options, CancellationToken cancellation)
+        DynamicSystem system, int parameter, BranchOptions options, CancellationToken cancellationToken)
     {
         ImmutableArray<double> near = options.Start ?? [.. system.InitialState];
-        EquilibriumSearchResult found = system.FindEquilibria(new EquilibriumSearchOptions { ExtraStarts = [near] }, cancellation);
+        EquilibriumSearchResult found = system.FindEquilibria(new EquilibriumSearchOptions { ExtraStarts = [near] }, cancellationToken);
         SearchRegion region = SearchRegion.Of(system);
         Equilibrium? nearest = found.Equilibria
             .Where(static equilibrium => !equilibrium.IsSliding)

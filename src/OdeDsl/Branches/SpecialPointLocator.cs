@@ -51,6 +51,9 @@ internal sealed class SpecialPointLocator(EquilibriumCurve curve)
             }
         }
 
+        // Where eigenvalues stay on the axis, as at the centre that meets a saddle, no rank changes sign: the counts tell.
+        if (found is [{ Kind: SpecialPointKind.Fold or SpecialPointKind.BranchPoint } only])
+            found[0] = only with { UnstableChange = to.UnstableCount - from.UnstableCount };
         found.Sort(static (a, b) => a.Along.CompareTo(b.Along));
         return found;
     }

@@ -18,6 +18,9 @@ internal sealed class LyapunovEstimator
     private const double DefaultShortTimes = 50_000;
     private const int TransientPieces = 32;
 
+    // Each short time the integration may stretch a tangent wrongly by about its relative tolerance; a margin for several steps.
+    private const double ToleranceMargin = 10;
+
     // Bounds of the number of intervals in one batch: enough for a mean, and an end to the work.
     private const double FewestIntervals = 10;
     private const double MostIntervals = 1e6;
@@ -57,11 +60,12 @@ internal sealed class LyapunovEstimator
         Settle(basis, perBatch, interval);
         double[][] means = new double[options.Batches][];
         double divergence = 0;
+        double floor = ToleranceMargin * options.RelativeTolerance / shortTime;
         for (int batch = 0; batch < means.Length; batch++)
             means[batch] = Batch(basis, perBatch, interval, ref divergence);
         return new LyapunovResult
         {
-            Exponents = [.. Enumerable.Range(0, basis.Count).Select(j => Estimate(means, j)).OrderByDescending(static exponent => exponent.Value)],
+            Exponents = [.. Enumerable.Range(0, basis.Count).Select(j => Estimate(means, j, floor)).OrderByDescending(static exponent => exponent.Value)],
             Duration = duration,
             Batches = options.Batches,
             MeanDivergence = divergence / ((double)perBatch * options.Batches),
@@ -133,11 +137,11 @@ internal sealed class LyapunovEstimator
         return largest > 0 ? largest : 1;
     }
 
-    private static LyapunovExponent Estimate(double[][] means, int index)
+    private static LyapunovExponent Estimate(double[][] means, int index, double floor)
     {
         double mean = means.Average(batch => batch[index]);
         double variance = means.Sum(batch => Math.Pow(batch[index] - mean, 2)) / (means.Length - 1);
         double quantile = StudentT.InvCDF(0, 1, means.Length - 1, 0.975);
-        return new LyapunovExponent(mean, quantile * Math.Sqrt(variance / means.Length));
+        return new LyapunovExponent(mean, Math.Max(floor, quantile * Math.Sqrt(variance / means.Length)));
     }
 }

@@ -280,6 +280,6 @@ public class FollowTests
     {
         using var source = new CancellationTokenSource();
         source.Cancel();
-        Assert.ThrowsAny<OperationCanceledException>(() => new Hysteresis().Follow(form => form.P, from: -3, to: 3, cancellation: source.Token));
+        Assert.ThrowsAny<OperationCanceledException>(() => new Hysteresis().Follow(form => form.P, from: -3, to: 3, cancellationToken: source.Token));
     }
 }

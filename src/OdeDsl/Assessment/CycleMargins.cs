@@ -1,0 +1,95 @@
+using System.Globalization;
+using OdeDsl.Cycles;
+using OdeDsl.Equilibria;
+using OdeDsl.LinearAlgebra;
+using OdeDsl.Modeling;
+
+namespace OdeDsl.Assessment;
+
+/// <summary>
+/// Changes of the set of stable limit cycles when one parameter moves: each is carried along in steps that are halved where it does not
+/// close, until it is lost or a multiplier leaves the unit circle.
+/// </summary>
+internal sealed class CycleMargins(DynamicSystem system, IReadOnlyList<LimitCycle> cycles, int steps, CancellationToken cancellation)
+{
+    // A cycle is given up when it does not close at this share of the first step, and its end is known to that.
+    private const double SmallestStep = 1.0 / 256;
+
+    private const double Growth = 1.5;
+
+    // A stability change is located to this share of the step it was met in.
+    private const double ChangeShare = 1e-6;
+
+    /// <summary>The changes met between the present value and the end of the range: at most one for each stable cycle.</summary>
+    public IEnumerable<MarginCandidate> Between(int parameter, double value, double end)
+    {
+        for (int k = 0; k < cycles.Count; k++)
+        {
+            if (!cycles[k].IsStable) continue;
+            var follower = new CycleFollower(system, parameter, cancellation);
+            string name = AttractorNames.Cycle(k);
+            if (follower.Begin(cycles[k]) is not { } first)
+                yield return new MarginCandidate(MarginEvent.Unknown, value, name, $"{name} could not be followed", "it does not close again at the present value");
+            else if (Follow(follower, first, end, name) is { } change)
+                yield return change;
+        }
+    }
+
+    private MarginCandidate? Follow(CycleFollower follower, TrackedCycle first, double end, string name)
+    {
+        double step = (end - first.Value) / steps;
+        double smallest = SmallestStep * Math.Abs(step);
+        double longest = Math.Abs(step);
+        TrackedCycle last = first;
+        TrackedCycle? before = null;
+        while (last.Value != end)
+        {
+            double value = Math.Abs(end - last.Value) <= Math.Abs(step) ? end : last.Value + step;
+            TrackedCycle? next = follower.Move(last, before, value);
+            if (next is null)
+            {
+                if (Math.Abs(step) <= smallest) return Lost(first, last, value, name);
+                step /= 2;
+                continue;
+            }
+
+            if (next.Stability == Stability.Unstable) return LostStability(follower, last, next, name);
+            (before, last) = (last, next);
+            step = Math.CopySign(Math.Min(Growth * Math.Abs(step), longest), step);
+        }
+
+        return null;
+    }
+
+    private static MarginCandidate Lost(TrackedCycle first, TrackedCycle last, double beyond, string name)
+    {
+        string evidence = string.Create(
+            CultureInfo.InvariantCulture,
+            $"followed in steps up to here, where its extent is {last.SizeRelativeTo(first):P0} and its period {last.Period / first.Period:P0} of the present ones and its largest multiplier has modulus {last.LargestMultiplier:G4}; it does not close at {beyond:G9}");
+        return new MarginCandidate(
+            MarginEvent.CycleLost, last.Value, name, $"{name} is no longer found", evidence, null, Math.Abs(beyond - last.Value));
+    }
+
+    private static MarginCandidate LostStability(CycleFollower follower, TrackedCycle stable, TrackedCycle unstable, string name)
+    {
+        double width = Math.Abs(unstable.Value - stable.Value);
+        TrackedCycle nearest = stable;
+        double value = BracketedRoot.Find(
+            trial =>
+            {
+                if (follower.Move(nearest, null, trial) is not { } cycle) return double.NaN;
+                nearest = cycle;
+                return cycle.LargestMultiplier - 1;
+            },
+            stable.Value,
+            stable.LargestMultiplier - 1,
+            unstable.Value,
+            unstable.LargestMultiplier - 1,
+            ChangeShare * width);
+        string evidence = string.Create(
+            CultureInfo.InvariantCulture,
+            $"its largest multiplier has modulus {stable.LargestMultiplier:G6} at {stable.Value:G9} and {unstable.LargestMultiplier:G6} at {unstable.Value:G9}");
+        return new MarginCandidate(
+            MarginEvent.CycleStabilityLost, value, name, $"{name} loses stability", evidence, null, ChangeShare * width);
+    }
+}
