@@ -48,12 +48,6 @@ internal sealed class DampedNewton
         jacobian = new double[n * n];
     }
 
-    /// <summary>The factored Jacobian at the last point a Newton step was computed.</summary>
-    public MinimumNormSolver Solver => solver;
-
-    /// <summary>The number of Newton steps made so far by all calls.</summary>
-    public long Iterations { get; private set; }
-
     /// <summary>Moves a point to a root.</summary>
     /// <param name="point">The start; receives the last iterate.</param>
     /// <param name="deflation">Roots to keep away from, or <see langword="null"/>.</param>
@@ -80,11 +74,9 @@ internal sealed class DampedNewton
         return false;
     }
 
-    /// <summary>Computes the plain Newton step at a point.</summary>
-    /// <returns><see langword="false"/> if the equations or their derivatives are not finite there.</returns>
-    public bool ComputeStep(ReadOnlySpan<double> point)
+    // Computes the plain Newton step at a point; false if there is none.
+    private bool ComputeStep(ReadOnlySpan<double> point)
     {
-        Iterations++;
         problem.Evaluate(point, values);
         if (!AllFinite(values)) return false;
         problem.Differentiate(point, jacobian);
@@ -93,9 +85,6 @@ internal sealed class DampedNewton
         for (int i = 0; i < step.Length; i++) step[i] = -step[i];
         return AllFinite(step) && !IsStationary(point);
     }
-
-    /// <summary>The step last computed by <see cref="ComputeStep"/>, relative to the unknowns' local sizes.</summary>
-    public double StepSize(ReadOnlySpan<double> point) => LocalLength(point, step);
 
     // The minimum-norm step of a singular system can vanish where the equations do not: there the equations have no solution nearby.
     private bool IsStationary(ReadOnlySpan<double> point)

@@ -80,7 +80,8 @@ internal sealed class EquilibriumSearch
     private void Search(RootProblem problem, int minimum)
     {
         var newton = new DampedNewton(problem, region);
-        var walk = new EquilibriumSetWalk(problem, newton, region);
+        var nullSpace = new NullSpace(problem);
+        var walk = new EquilibriumSetWalk(problem, nullSpace, newton, region);
         var deflation = new Deflation(region);
         var sequence = new LowDiscrepancySequence(system.StateCount, options.Seed);
         var (unit, start, point) = (new double[system.StateCount], new double[problem.Size], new double[problem.Size]);
@@ -101,11 +102,11 @@ internal sealed class EquilibriumSearch
 
             problem.Begin(start);
             start.CopyTo(point, 0);
-            bool found = newton.Solve(point) && roots.Land(problem, walk, point, deflation, countLanding: true);
+            bool found = newton.Solve(point) && roots.Land(problem, nullSpace, walk, point, deflation, countLanding: true);
             for (int d = 0; d < DeflationsPerStart && deflation.Count > 0; d++)
             {
                 start.CopyTo(point, 0);
-                if (!newton.Solve(point, deflation) || !roots.Land(problem, walk, point, deflation, countLanding: false)) break;
+                if (!newton.Solve(point, deflation) || !roots.Land(problem, nullSpace, walk, point, deflation, countLanding: false)) break;
                 found = true;
             }
 

@@ -7,11 +7,8 @@ namespace OdeDsl.Equilibria;
 /// Newton steps of minimum norm back to the set (Gauss-Newton on an under-determined system, as in numerical continuation: E. L. Allgower
 /// and K. Georg, "Numerical Continuation Methods", 1990, chapter 3).
 /// </summary>
-internal sealed class EquilibriumSetWalk(RootProblem problem, DampedNewton newton, SearchRegion region)
+internal sealed class EquilibriumSetWalk(RootProblem problem, NullSpace nullSpace, DampedNewton newton, SearchRegion region)
 {
-    /// <summary>Singular values below this part of the largest may come from a continuum or a multiple root.</summary>
-    public const double NearlySingular = 1e-6;
-
     /// <summary>The length of a step, in widths.</summary>
     private const double StepLength = 0.02;
 
@@ -23,19 +20,6 @@ internal sealed class EquilibriumSetWalk(RootProblem problem, DampedNewton newto
 
     /// <summary>Halvings of the last step that locate the end of a line.</summary>
     private const int EndBisections = 45;
-
-    /// <summary>The null directions at a root, as steps of one width; empty if the root is regular.</summary>
-    public double[][] NullDirections(ReadOnlySpan<double> root)
-    {
-        if (!newton.ComputeStep(root) || newton.Solver.SmallestSingularRatio() > NearlySingular) return [];
-        double[][] directions = newton.Solver.NullVectors(NearlySingular);
-        foreach (double[] direction in directions)
-        {
-            for (int i = 0; i < direction.Length; i++) direction[i] *= problem.Scale[i];
-        }
-
-        return directions;
-    }
 
     /// <summary>The continuum a root belongs to, or <see langword="null"/> if it has no neighbours along its null directions.</summary>
     public EquilibriumSet? SetThrough(ReadOnlySpan<double> root, double[][] nullDirections)
@@ -71,7 +55,7 @@ internal sealed class EquilibriumSetWalk(RootProblem problem, DampedNewton newto
             }
 
             points.Add(next);
-            double[][] directions = NullDirections(next);
+            double[][] directions = nullSpace.Directions(next);
             if (directions.Length != 1) return points;
             double along = 0;
             for (int i = 0; i < here.Length; i++) along += (next[i] - here[i]) * directions[0][i] / (problem.Scale[i] * problem.Scale[i]);

@@ -43,8 +43,10 @@ internal sealed class MinimumNormSolver
     public bool NearlySingular => decomposition is not null;
 
     /// <summary>Factors a matrix given by rows.</summary>
+    /// <param name="matrix">The matrix.</param>
+    /// <param name="rowSizes">The size of each row in scaled unknowns; empty: the largest entry of each row.</param>
     /// <returns><see langword="false"/> if an entry is not finite.</returns>
-    public bool Factor(ReadOnlySpan<double> matrix)
+    public bool Factor(ReadOnlySpan<double> matrix, ReadOnlySpan<double> rowSizes = default)
     {
         for (int i = 0; i < n; i++)
         {
@@ -57,6 +59,7 @@ internal sealed class MinimumNormSolver
                 largest = Math.Max(largest, Math.Abs(value));
             }
 
+            if (!rowSizes.IsEmpty) largest = rowSizes[i];
             rowScale[i] = largest > 0 ? 1 / largest : 1;
             for (int j = 0; j < n; j++) scaled[(i * n) + j] *= rowScale[i];
         }

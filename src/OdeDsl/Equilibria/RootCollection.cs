@@ -14,12 +14,6 @@ internal sealed class RootCollection(SearchRegion region)
     /// <summary>A member of a continuum this close to a walked line, in widths, belongs to it: chords of the walk are that exact.</summary>
     private const double OnLine = 0.01;
 
-    /// <summary>Half the distance, in widths, within which two roots cannot be told from one double root.</summary>
-    private const double DoubleRootReach = 1e-7;
-
-    /// <summary>A scaled Jacobian this close to singular is singular up to rounding.</summary>
-    private const double SingularToRounding = 1e-13;
-
     private readonly List<Root> roots = [];
     private readonly List<double[]> rejected = [];
 
@@ -28,7 +22,7 @@ internal sealed class RootCollection(SearchRegion region)
 
     /// <summary>Takes a root; the deflation learns isolated roots that it did not know.</summary>
     /// <returns>Whether a new equilibrium was found.</returns>
-    public bool Land(RootProblem problem, EquilibriumSetWalk walk, double[] point, Deflation deflation, bool countLanding)
+    public bool Land(RootProblem problem, NullSpace nullSpace, EquilibriumSetWalk walk, double[] point, Deflation deflation, bool countLanding)
     {
         Span<double> state = point.AsSpan(0, region.Count);
         region.Wrap(state);
@@ -41,7 +35,7 @@ internal sealed class RootCollection(SearchRegion region)
             return false;
         }
 
-        double[][] nullDirections = walk.NullDirections(point);
+        double[][] nullDirections = nullSpace.Directions(point);
         if (Find(state, nullDirections.Length > 0) is Root known)
         {
             if (countLanding) known.Landings++;
@@ -50,7 +44,7 @@ internal sealed class RootCollection(SearchRegion region)
         }
 
         EquilibriumSet? set = nullDirections.Length > 0 ? walk.SetThrough(point, nullDirections) : null;
-        int nullity = set?.Dimension ?? (nullDirections.Length > 0 && IsMultiple(problem, point, nullDirections) ? nullDirections.Length : 0);
+        int nullity = set?.Dimension ?? (nullSpace.IsMultiple(point, nullDirections) ? nullDirections.Length : 0);
         var root = new Root(state.ToArray(), nullity > 0, set, problem.Describe(point, nullity, set));
         if (countLanding) root.Landings++;
         if (set is null && root.Deflations.Add(deflation)) deflation.Add(root.State);
@@ -107,24 +101,6 @@ internal sealed class RootCollection(SearchRegion region)
     private bool IsEnd(EquilibriumSet set, double[] state)
     {
         return set.Points.Any(point => region.LocalDistance(point.AsSpan(), state) <= SameDegenerate);
-    }
-
-    // A multiple root: the determinant changes sign within the reach, or the Jacobian is singular up to rounding.
-    private static bool IsMultiple(RootProblem problem, double[] point, double[][] nullDirections)
-    {
-        var jacobian = new double[problem.Size * problem.Size];
-        var solver = new MinimumNormSolver(problem.Scale);
-        problem.Differentiate(point, jacobian);
-        if (!solver.Factor(jacobian) || solver.SmallestSingularRatio() <= SingularToRounding) return true;
-        int SignAt(double[] direction, double distance)
-        {
-            double[] moved = [.. point];
-            for (int i = 0; i < moved.Length; i++) moved[i] += distance * direction[i];
-            problem.Differentiate(moved, jacobian);
-            return solver.Factor(jacobian) ? solver.DeterminantSign : 0;
-        }
-
-        return nullDirections.Any(direction => SignAt(direction, DoubleRootReach) != SignAt(direction, -DoubleRootReach));
     }
 
     private sealed class Root(double[] state, bool isDegenerate, EquilibriumSet? set, Equilibrium equilibrium)
