@@ -3,20 +3,42 @@ using OdeDsl.Modeling;
 namespace OdeDsl.Integration;
 
 /// <summary>
-/// A system in motion: steppers, the locked regime, and what happens between steps. Reusable; nothing is allocated once a method has
-/// been used. Callers own the loop over steps.
+/// A system in motion. Each step runs within one locked regime and ends where a guard of the regime is met; there the regime changes, or the
+/// motion begins or ends to slide. Reusable; nothing is allocated per step once a method has been used. Callers own the loop
+/// over steps.
 /// </summary>
 internal sealed class Motion
 {
+    /// <summary>Meetings at one time, to within rounding, after which the motion is taken to accumulate; per switch as many again.</summary>
+    private const int MeetingsAtOneTime = 64;
+
+    /// <summary>Times this many units of rounding apart count as one.</summary>
+    private const double SameTime = 16;
+
+    /// <summary>The part of the tolerances within which a state counts as lying on a surface.</summary>
+    private const double OnSurface = 1e-3;
+
+    /// <summary>Corrections of a meeting's time on the step that ends there.</summary>
+    private const int LandingCorrections = 3;
+
     private readonly DynamicSystem system;
     private readonly IntegrationOptions options;
     private readonly int tangentCount;
+    private readonly double[] absolute;
     private readonly ErrorNorm norm;
     private readonly double[] regime;
-    private readonly SlidingSurface sliding = new();
+    private readonly SlidingSurface sliding;
+    private readonly GuardSet guards;
+    private readonly CrossingSearch search;
+    private readonly CrossingRules rules;
+    private readonly SurfaceProjection projection;
+    private readonly double[] guardValues;
     private Stepper? explicitStepper;
     private Stepper? implicitStepper;
-    private Section? section;
+    private bool unsettled;
+    private int released;
+    private double meetingTime;
+    private int meetings;
 
     public Motion(DynamicSystem system, IntegrationOptions options, int tangentCount)
     {
@@ -24,8 +46,15 @@ internal sealed class Motion
         this.system = system;
         this.options = options;
         this.tangentCount = tangentCount;
-        norm = new ErrorNorm(options.RelativeTolerance, options.AbsoluteTolerances(system.Description), tangentCount);
+        absolute = options.AbsoluteTolerances(system.Description);
+        norm = new ErrorNorm(options.RelativeTolerance, absolute, tangentCount);
         regime = new double[system.SwitchCount];
+        sliding = new SlidingSurface(system, regime, Array.ConvertAll(absolute, value => value / options.RelativeTolerance));
+        guards = new GuardSet(system, regime, sliding);
+        search = new CrossingSearch(guards, system.StateCount);
+        rules = new CrossingRules(system, regime, sliding);
+        projection = new SurfaceProjection(system, regime, absolute, options.RelativeTolerance * OnSurface, OnSurface);
+        guardValues = new double[guards.Count];
         Current = options.Method == IntegrationMethod.RadauIIA5 ? Implicit : Explicit;
     }
 
@@ -40,6 +69,9 @@ internal sealed class Motion
     /// <summary>The state reached, then the tangents one after the other.</summary>
     public ReadOnlySpan<double> Position => Current.End.AsSpan(0, Current.Dimension);
 
+    /// <summary>The meetings with surfaces during the last step, those at its start included.</summary>
+    public List<Crossing> NewCrossings { get; } = [];
+
     /// <summary>Whether the last step ended on the watched section.</summary>
     public bool ReachedSection { get; private set; }
 
@@ -50,23 +82,181 @@ internal sealed class Motion
 
     private Stepper Implicit => implicitStepper ??= MakeStepper(IntegrationMethod.RadauIIA5);
 
+    private ReadOnlySpan<double> State => Current.End.AsSpan(0, system.StateCount);
+
     /// <summary>Sets the motion at a point.</summary>
     /// <param name="time">The time.</param>
     /// <param name="position">The state, then the tangents one after the other.</param>
-    /// <param name="watched">A section to stop at, or <see langword="null"/>.</param>
-    public void Begin(double time, ReadOnlySpan<double> position, Section? watched = null)
+    /// <param name="section">A section to stop at, or <see langword="null"/>.</param>
+    public void Begin(double time, ReadOnlySpan<double> position, Section? section = null)
     {
-        section = watched;
         system.Regime(time, position[..system.StateCount], regime);
+        sliding.End();
+        released = -1;
+        meetings = 0;
+        unsettled = guards.Any;
+        (Slid, ReachedSection) = (false, false);
+        guards.Section = section;
+        if (section is { } watched)
+        {
+            double value = watched.Value(position[..system.StateCount]);
+            double near = 0;
+            for (int i = 0; i < absolute.Length; i++)
+                near += Math.Abs(watched.Normal[i]) * (absolute[i] + options.RelativeTolerance * Math.Abs(position[i]));
+            guards.StartsOnSection = Math.Abs(value) <= OnSurface * near;
+            guards.SectionSide = watched.Direction != 0 ? -Math.Sign(watched.Direction) : guards.StartsOnSection ? 0 : Math.Sign(value);
+        }
+
         Current.Begin(time, position, options.InitialStep ?? 0);
     }
 
     /// <summary>Takes one step.</summary>
-    /// <param name="limit">Where to stop at the latest.</param>
+    /// <param name="limit">Where to stop at the latest; not the present time.</param>
     public StepStatus Step(double limit)
     {
-        if (options.Method == IntegrationMethod.Automatic && Current.SuggestsChange) ChangeMethod();
-        return Current.Step(limit);
+        NewCrossings.Clear();
+        guards.Direction = limit < Time ? -1 : 1;
+        while (true)
+        {
+            if (unsettled)
+            {
+                StepStatus settled = Settle();
+                if (settled != StepStatus.Accepted) return settled;
+            }
+
+            if (options.Method == IntegrationMethod.Automatic && Current.SuggestsChange) ChangeMethod();
+            StepStatus status = Current.Step(limit);
+            if (status is StepStatus.NotFinite or StepStatus.StepTooSmall && MeetSurfaceAhead()) continue;
+            if (status != StepStatus.Accepted || !guards.Any) return status;
+            bool? found = search.Search(Current);
+            if (found == false) break;
+            if (found == true && !TryLand()) continue;
+            if (found == null)
+            {
+                Current.Undo(shorten: true);
+                continue;
+            }
+
+            Guard guard = guards[search.Found];
+            if (guard.Kind == GuardKind.Section)
+            {
+                ReachedSection = true;
+                break;
+            }
+
+            status = Meet(guard);
+            if (status != StepStatus.Accepted) return status;
+            if (Current.EndTime != Current.StartTime) break;
+        }
+
+        Finish();
+        return StepStatus.Accepted;
+    }
+
+    private void Finish()
+    {
+        unsettled |= search.EndsOnSurface;
+        released = -1;
+        guards.StartsOnSection = false;
+        if (guards.Section is { } section && guards.SectionSide == 0) guards.SectionSide = Math.Sign(section.Value(State));
+        Slid |= sliding.IsActive;
+        if (sliding.IsActive && projection.Apply(sliding.Switch, sliding.Surface, Time, Current.End.AsSpan(0, system.StateCount))) Current.EndMoved();
+    }
+
+    // Lets the motion meet every surface it stands on and runs at, until it can leave.
+    private StepStatus Settle()
+    {
+        unsettled = false;
+        if (system.SwitchCount == 0) return StepStatus.Accepted;
+        while (true)
+        {
+            int index = StandsOn();
+            if (index < 0) return StepStatus.Accepted;
+            StepStatus status = Meet(guards[index]);
+            if (status != StepStatus.Accepted) return status;
+        }
+    }
+
+    private int StandsOn()
+    {
+        guards.Evaluate(Time, State, guardValues);
+        for (int i = 0; i < guards.SectionIndex; i++)
+        {
+            if (!(guardValues[i] <= 0)) continue;
+            Guard guard = guards[i];
+            if (guard.Kind != GuardKind.Surface) return i;
+            if (guard.Switch != released && rules.GuardRate(guard, Time, State, guards.Direction) < 0) return i;
+        }
+
+        return -1;
+    }
+
+    private StepStatus Meet(Guard guard)
+    {
+        bool sameTime = meetings > 0 && Math.Abs(Time - meetingTime) <= SameTime * Ulp(Time);
+        if (!sameTime) (meetingTime, meetings) = (Time, 0);
+        if (++meetings > MeetingsAtOneTime * (1 + system.SwitchCount)) return StepStatus.CrossingsAccumulate;
+        StepStatus status = rules.Meet(guard, Time, Current.End.AsSpan(0, Current.Dimension), guards.Direction, out Crossing? crossing);
+        if (crossing is not { } what) return status;
+        NewCrossings.Add(what);
+        Statistics.Crossings++;
+        if (what.Kind == CrossingKind.SlidingEnded) released = what.Switch;
+        Slid |= what.Kind == CrossingKind.SlidingBegan;
+        Current.FieldChanged();
+        unsettled = true;
+        return status;
+    }
+
+    // Ends the step at the guard found: the step is taken again to end there, and its end corrected until the guard vanishes to rounding.
+    private bool TryLand()
+    {
+        double end = Current.EndTime, time = search.Time;
+        if (Math.Abs(time - Current.StartTime) <= 2 * Ulp(time))
+        {
+            Current.Undo(shorten: false);
+            return true;
+        }
+
+        double lastTime = Current.StartTime, lastValue = 0;
+        for (int correction = 0; ; correction++)
+        {
+            if (time != Current.EndTime && !Current.Retake(time)) return false;
+            guards.Evaluate(time, State, guardValues);
+            double value = guardValues[search.Found];
+            // The secant through the last two ends; the first slope comes from the continuation's root: zero there.
+            double slope = correction == 0 ? GuardSlope() : (value - lastValue) / (time - lastTime);
+            double next = time - value / slope;
+            bool inside = (next - Current.StartTime) * guards.Direction > 0 && (end - next) * guards.Direction >= 0;
+            if (value == 0 || correction >= LandingCorrections || !inside || Math.Abs(next - time) <= 2 * Ulp(time)) return true;
+            (lastTime, lastValue, time) = (time, value, next);
+        }
+    }
+
+    // The slope of the found guard at the end of the step held.
+    private double GuardSlope()
+    {
+        Guard guard = guards[search.Found];
+        if (guard.Kind == GuardKind.Surface) return guards.Direction * rules.GuardRate(guard, Time, State, guards.Direction);
+        double value = guardValues[search.Found], inner = Current.EndTime - (Current.EndTime - Current.StartTime) * 1e-3;
+        return (value - search.ValueAt(inner)) / (Current.EndTime - inner);
+    }
+
+    // Rates that have no value beyond a surface (a root of a quantity that becomes negative) stop every step short of it. Once the surface is
+    // no more than rounding ahead, it is met.
+    private bool MeetSurfaceAhead()
+    {
+        if (system.SwitchCount == 0) return false;
+        guards.Evaluate(Time, State, guardValues);
+        for (int i = 0; i < guards.SectionIndex; i++)
+        {
+            Guard guard = guards[i];
+            if (guard.Kind != GuardKind.Surface || (sliding.IsActive && guard.Switch == sliding.Switch)) continue;
+            double rate = rules.GuardRate(guard, Time, State, guards.Direction);
+            if (!(rate < 0 && guardValues[i] <= -rate * MeetingsAtOneTime * Ulp(Time))) continue;
+            return Meet(guard) == StepStatus.Accepted;
+        }
+
+        return false;
     }
 
     private void ChangeMethod()
@@ -84,4 +274,6 @@ internal sealed class Motion
         stepper.MaximumAttempts = options.MaximumSteps;
         return stepper;
     }
+
+    private static double Ulp(double value) => Math.BitIncrement(Math.Abs(value)) - Math.Abs(value);
 }

@@ -23,6 +23,7 @@ internal static class Simulation
                 StepStatus status = motion.Step(until);
                 if (status != StepStatus.Accepted) throw MotionFailure.Of(status, motion, system.StateCount, run);
                 run.Append(motion.Current);
+                foreach (Crossing crossing in motion.NewCrossings) run.Append(crossing);
                 double done = (motion.Time - options.From) / (until - options.From);
                 if (progress is null || done - reported < ProgressInterval) continue;
                 reported = done;

@@ -130,7 +130,10 @@ internal abstract class Stepper
         MoveOn();
         StepStatus status = Prepare(limit);
         if (status == StepStatus.Accepted) status = TryUntilAccepted(limit);
-        if (status != StepStatus.Accepted) Undo();
+        if (status == StepStatus.Accepted) return status;
+        Undo(shorten: false);
+        // Whoever goes on from here has changed something: the size that failed is no guide.
+        Proposed = 0;
         return status;
     }
 
@@ -151,14 +154,16 @@ internal abstract class Stepper
             return true;
         }
 
-        Undo();
-        Proposed = h / 2;
+        EndTime = endTime;
+        Undo(shorten: true);
         return false;
     }
 
     /// <summary>Undoes the last step: the position is its start again.</summary>
-    public void Undo()
+    /// <param name="shorten">Whether the next step is to be at most half as long.</param>
+    public void Undo(bool shorten)
     {
+        if (shorten) Proposed = (EndTime - StartTime) / 2;
         stepHeld = false;
         EndTime = StartTime;
         Start.CopyTo(End, 0);

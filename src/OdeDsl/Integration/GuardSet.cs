@@ -1,0 +1,93 @@
+using OdeDsl.Modeling;
+
+namespace OdeDsl.Integration;
+
+/// <summary>
+/// All guards of a motion in its locked regime: one per relation, two per whole-number switch, two while sliding, one for a section.
+/// </summary>
+internal sealed class GuardSet
+{
+    /// <summary>The value of a guard that is off: far from zero.</summary>
+    private const double Off = 1;
+
+    private readonly DynamicSystem system;
+    private readonly double[] regime;
+    private readonly SlidingSurface sliding;
+    private readonly SwitchKind[] kinds;
+    private readonly int[] wholeNumbers;
+    private readonly double[] functions;
+    private readonly int slidingStart;
+
+    public GuardSet(DynamicSystem system, double[] regime, SlidingSurface sliding)
+    {
+        this.system = system;
+        this.regime = regime;
+        this.sliding = sliding;
+        kinds = [.. system.Description.Switches.Select(static item => item.Kind)];
+        wholeNumbers = [.. Enumerable.Range(0, kinds.Length).Where(index => kinds[index] == SwitchKind.WholeNumber)];
+        functions = new double[kinds.Length];
+        slidingStart = kinds.Length + wholeNumbers.Length;
+    }
+
+    /// <summary>The number of guards, those that are off included.</summary>
+    public int Count => slidingStart + 3;
+
+    /// <summary>Whether there is anything to watch.</summary>
+    public bool Any => kinds.Length > 0 || Section is not null;
+
+    /// <summary>A section to watch.</summary>
+    public Section? Section { get; set; }
+
+    /// <summary>The side from which the section is to be met: -1: its value is negative before; 1: positive; 0: either, not yet known.</summary>
+    public int SectionSide { get; set; }
+
+    /// <summary>Whether the motion starts on the section, to within the tolerances: it must leave it first.</summary>
+    public bool StartsOnSection { get; set; }
+
+    /// <summary>The position of the section's guard.</summary>
+    public int SectionIndex => slidingStart + 2;
+
+    /// <summary>1 if time runs forwards, otherwise -1.</summary>
+    public int Direction { get; set; } = 1;
+
+    /// <summary>Evaluates all guards at a point.</summary>
+    public void Evaluate(double time, ReadOnlySpan<double> state, Span<double> values)
+    {
+        if (kinds.Length > 0) system.SwitchingFunctions(time, state, regime, functions);
+        for (int i = 0; i < slidingStart; i++)
+        {
+            Guard guard = this[i];
+            bool off = sliding.IsActive && guard.Switch == sliding.Switch;
+            values[i] = off ? Off : guard.Sign * (functions[guard.Switch] - guard.Surface);
+        }
+
+        (values[slidingStart], values[slidingStart + 1], values[slidingStart + 2]) = (Off, Off, Off);
+        if (sliding.IsActive)
+        {
+            (double below, double above) = sliding.Approaches(time, state);
+            values[slidingStart] = Direction * below;
+            values[slidingStart + 1] = -Direction * above;
+        }
+
+        if (Section is { } section) values[slidingStart + 2] = SectionSide * section.Value(state);
+    }
+
+    /// <summary>A guard in the present regime.</summary>
+    public Guard this[int index]
+    {
+        get
+        {
+            if (index == slidingStart) return new Guard(GuardKind.SlidingEndsBelow, sliding.Switch, 0, 0);
+            if (index == slidingStart + 1) return new Guard(GuardKind.SlidingEndsAbove, sliding.Switch, 0, 0);
+            if (index > slidingStart) return new Guard(GuardKind.Section, -1, SectionSide, 0);
+            if (index >= kinds.Length)
+            {
+                int whole = wholeNumbers[index - kinds.Length];
+                return new Guard(GuardKind.Surface, whole, -1, regime[whole] + 1);
+            }
+
+            if (kinds[index] == SwitchKind.WholeNumber) return new Guard(GuardKind.Surface, index, 1, regime[index]);
+            return new Guard(GuardKind.Surface, index, SwitchSide.IsAbove(kinds[index], regime[index]) ? 1 : -1, 0);
+        }
+    }
+}
