@@ -42,9 +42,10 @@ internal sealed class CrossingRules
     /// <param name="time">The time.</param>
     /// <param name="position">The state, then the tangents one after the other; these are changed.</param>
     /// <param name="direction">1 if time runs forwards, otherwise -1.</param>
+    /// <param name="forced">Whether the motion cannot stay on its side, whatever the rates say: they have no value beyond the surface.</param>
     /// <param name="crossing">What happened; <see langword="null"/> if the motion turns out not to leave its side.</param>
     /// <returns>Accepted, or why the motion cannot go on.</returns>
-    public StepStatus Meet(Guard guard, double time, Span<double> position, int direction, out Crossing? crossing)
+    public StepStatus Meet(Guard guard, double time, Span<double> position, int direction, bool forced, out Crossing? crossing)
     {
         crossing = null;
         if (guard.Kind != GuardKind.Surface)
@@ -64,14 +65,16 @@ internal sealed class CrossingRules
         regime[index] = to;
         CurrentRates(time, state, after);
         double leaving = guard.Sign * direction * speed, beyond = guard.Sign * direction * Along(index, after);
-        if (!(leaving < 0))
+        // On the surface the rates of the near side may have no value: the motion that came here cannot go back.
+        bool leaves = leaving < 0 || forced || double.IsNaN(leaving);
+        if (!leaves)
         {
             regime[index] = from;
             return StepStatus.Accepted;
         }
 
         var what = CrossingKind.Passed;
-        if (beyond > 0)
+        if (leaving < 0 && beyond > 0)
         {
             regime[index] = from;
             if (sliding.IsActive) return StepStatus.SlidingOnSeveralSurfaces;
@@ -121,6 +124,8 @@ internal sealed class CrossingRules
 
     private void Carry(int index, double speed, Span<double> position)
     {
+        // Without speed through the surface there is no saltation matrix.
+        if (speed == 0 || !double.IsFinite(speed)) return;
         int n = system.StateCount;
         ReadOnlySpan<double> gradient = gradients.AsSpan(index * n, n);
         for (int start = n; start < position.Length; start += n)

@@ -14,6 +14,12 @@ internal sealed class CrossingSearch
     /// <summary>A dip whose estimated depth ends above this part of the guard's range over the step is not looked into.</summary>
     private const double DipMargin = 0.25;
 
+    /// <summary>Chebyshev coefficients of degree five and six above this part of the range: the guard is not resolved.</summary>
+    private const double LargestTail = 0.02;
+
+    /// <summary>A step of no more than so many units of rounding of the time has no inside: only its end is looked at.</summary>
+    private const double MinuteStep = 1024;
+
     /// <summary>Refinements of a dip's lowest place; halvings towards a start on a surface.</summary>
     private const int Refinements = 40;
 
@@ -50,8 +56,7 @@ internal sealed class CrossingSearch
     public bool EndsOnSurface { get; private set; }
 
     /// <summary>Searches the step that a stepper holds.</summary>
-    /// <returns>True: see <see cref="Found"/>; false: nothing there; null: a guard is not a number inside the step.</returns>
-    public bool? Search(Stepper held)
+    public SearchOutcome Search(Stepper held)
     {
         stepper = held;
         int count = guards.Count;
@@ -60,20 +65,47 @@ internal sealed class CrossingSearch
             Sample(i, samples.AsSpan(i * count, count));
             for (int k = 0; k < count; k++)
             {
-                if (double.IsNaN(samples[i * count + k])) return null;
+                if (double.IsNaN(samples[i * count + k])) return SearchOutcome.Unresolved;
             }
         }
 
         Found = -1;
+        bool isMinute = Math.Abs(held.EndTime - held.StartTime) <= MinuteStep * Ulp(held.EndTime);
         Time = held.EndTime;
         EndsOnSurface = false;
         for (int guard = 0; guard < count; guard++)
         {
             EndsOnSurface |= guard != guards.SectionIndex && Value(guard, Places - 1) <= 0;
-            if (MayCross(guard)) SearchGuard(guard);
+            if (!MayCross(guard)) continue;
+            if (isMinute)
+            {
+                if (StartsArmed(guard) && Value(guard, Places - 1) <= 0) (Found, Time) = (guard, held.EndTime);
+                continue;
+            }
+
+            if (!IsResolved(guard)) return SearchOutcome.Unresolved;
+            SearchGuard(guard);
         }
 
-        return Found >= 0;
+        return Found >= 0 ? SearchOutcome.Found : SearchOutcome.Nothing;
+    }
+
+    // The polynomial through the places shows a guard truly only if its highest Chebyshev coefficients are small; otherwise the step is too
+    // long for this guard. Rounding is left alone.
+    private bool IsResolved(int guard)
+    {
+        double fifth = 0, sixth = 0, lowest = double.PositiveInfinity, highest = double.NegativeInfinity;
+        for (int i = 0; i < Places; i++)
+        {
+            double value = Value(guard, i), weight = i is 0 or Places - 1 ? 0.5 : 1;
+            fifth += weight * value * Math.Cos(Math.PI * 5 * i / (Places - 1));
+            sixth += weight * value * (i % 2 == 0 ? 0.5 : -0.5);
+            lowest = Math.Min(lowest, value);
+            highest = Math.Max(highest, value);
+        }
+
+        double tail = (Math.Abs(fifth) + Math.Abs(sixth)) * 2 / (Places - 1), range = highest - lowest;
+        return tail <= LargestTail * range || range <= guards.Rounding(guard, stepper!.EndTime, stepper.End.AsSpan(0, state.Length));
     }
 
     private void Sample(int place, Span<double> to)
@@ -110,11 +142,13 @@ internal sealed class CrossingSearch
         return lowest <= highest - lowest;
     }
 
+    private bool StartsArmed(int guard) => Value(guard, 0) > 0 && !(guard == guards.SectionIndex && guards.StartsOnSection);
+
     private void SearchGuard(int guard)
     {
         watched = guard;
         Differentiate(guard);
-        bool armed = Value(guard, 0) > 0 && !(guard == guards.SectionIndex && guards.StartsOnSection);
+        bool armed = StartsArmed(guard);
         for (int i = 0; i + 1 < Places; i++)
         {
             if (armed && Place(i) >= Place(Time)) return;

@@ -16,6 +16,7 @@ internal sealed class GuardSet
     private readonly SwitchKind[] kinds;
     private readonly int[] wholeNumbers;
     private readonly double[] functions;
+    private readonly double[] gradients;
     private readonly int slidingStart;
 
     public GuardSet(DynamicSystem system, double[] regime, SlidingSurface sliding)
@@ -26,6 +27,7 @@ internal sealed class GuardSet
         kinds = [.. system.Description.Switches.Select(static item => item.Kind)];
         wholeNumbers = [.. Enumerable.Range(0, kinds.Length).Where(index => kinds[index] == SwitchKind.WholeNumber)];
         functions = new double[kinds.Length];
+        gradients = new double[kinds.Length * system.StateCount];
         slidingStart = kinds.Length + wholeNumbers.Length;
     }
 
@@ -70,6 +72,25 @@ internal sealed class GuardSet
         }
 
         if (Section is { } section) values[slidingStart + 2] = SectionSide * section.Value(state);
+    }
+
+    /// <summary>How far rounding of the state may move a guard's value.</summary>
+    public double Rounding(int index, double time, ReadOnlySpan<double> state)
+    {
+        const double Units = 64 * 2.220446049250313e-16;
+        Guard guard = this[index];
+        double sum = 0;
+        if (guard.Kind == GuardKind.Section)
+        {
+            for (int i = 0; i < state.Length; i++) sum += Math.Abs(Section!.Value.Normal[i] * state[i]);
+        }
+        else if (guard.Kind == GuardKind.Surface)
+        {
+            system.SwitchingJacobian(time, state, regime, gradients);
+            for (int i = 0; i < state.Length; i++) sum += Math.Abs(gradients[guard.Switch * state.Length + i] * state[i]);
+        }
+
+        return Units * sum;
     }
 
     /// <summary>A guard in the present regime.</summary>

@@ -10,7 +10,7 @@ namespace OdeDsl.Integration;
 internal sealed class Motion
 {
     /// <summary>Meetings at one time, to within rounding, after which the motion is taken to accumulate; per switch as many again.</summary>
-    private const int MeetingsAtOneTime = 64;
+    private const int MeetingsAtOneTime = 16;
 
     /// <summary>Times this many units of rounding apart count as one.</summary>
     private const double SameTime = 16;
@@ -20,6 +20,9 @@ internal sealed class Motion
 
     /// <summary>Corrections of a meeting's time on the step that ends there.</summary>
     private const int LandingCorrections = 3;
+
+    /// <summary>Growth per step after a step was too long for a guard to be followed.</summary>
+    private const double GuardedGrowth = 1.2;
 
     private readonly DynamicSystem system;
     private readonly IntegrationOptions options;
@@ -36,7 +39,9 @@ internal sealed class Motion
     private Stepper? explicitStepper;
     private Stepper? implicitStepper;
     private bool unsettled;
+    private bool isStart;
     private int released;
+    private double guardedStep = double.PositiveInfinity;
     private double meetingTime;
     private int meetings;
 
@@ -95,6 +100,8 @@ internal sealed class Motion
         released = -1;
         meetings = 0;
         unsettled = guards.Any;
+        isStart = true;
+        guardedStep = double.PositiveInfinity;
         (Slid, ReachedSection) = (false, false);
         guards.Section = section;
         if (section is { } watched)
@@ -107,6 +114,7 @@ internal sealed class Motion
             guards.SectionSide = watched.Direction != 0 ? -Math.Sign(watched.Direction) : guards.StartsOnSection ? 0 : Math.Sign(value);
         }
 
+        Current.MaximumStep = options.MaximumStep ?? double.PositiveInfinity;
         Current.Begin(time, position, options.InitialStep ?? 0);
     }
 
@@ -128,14 +136,17 @@ internal sealed class Motion
             StepStatus status = Current.Step(limit);
             if (status is StepStatus.NotFinite or StepStatus.StepTooSmall && MeetSurfaceAhead()) continue;
             if (status != StepStatus.Accepted || !guards.Any) return status;
-            bool? found = search.Search(Current);
-            if (found == false) break;
-            if (found == true && !TryLand()) continue;
-            if (found == null)
+            released = -1;
+            SearchOutcome outcome = search.Search(Current);
+            if (outcome == SearchOutcome.Nothing) break;
+            if (outcome == SearchOutcome.Unresolved)
             {
+                LimitSteps(Math.Abs(Current.EndTime - Current.StartTime) / 2);
                 Current.Undo(shorten: true);
                 continue;
             }
+
+            if (!TryLand()) continue;
 
             Guard guard = guards[search.Found];
             if (guard.Kind == GuardKind.Section)
@@ -156,7 +167,7 @@ internal sealed class Motion
     private void Finish()
     {
         unsettled |= search.EndsOnSurface;
-        released = -1;
+        if (double.IsFinite(guardedStep)) LimitSteps(guardedStep * GuardedGrowth);
         guards.StartsOnSection = false;
         if (guards.Section is { } section && guards.SectionSide == 0) guards.SectionSide = Math.Sign(section.Value(State));
         Slid |= sliding.IsActive;
@@ -171,10 +182,15 @@ internal sealed class Motion
         while (true)
         {
             int index = StandsOn();
-            if (index < 0) return StepStatus.Accepted;
+            if (index < 0) break;
             StepStatus status = Meet(guards[index]);
             if (status != StepStatus.Accepted) return status;
         }
+
+        // A start on a surface is put on the side it moves to: not a crossing, unless it slides.
+        if (isStart) NewCrossings.RemoveAll(static crossing => crossing.Kind == CrossingKind.Passed);
+        isStart = false;
+        return StepStatus.Accepted;
     }
 
     private int StandsOn()
@@ -191,12 +207,12 @@ internal sealed class Motion
         return -1;
     }
 
-    private StepStatus Meet(Guard guard)
+    private StepStatus Meet(Guard guard, bool forced = false)
     {
         bool sameTime = meetings > 0 && Math.Abs(Time - meetingTime) <= SameTime * Ulp(Time);
         if (!sameTime) (meetingTime, meetings) = (Time, 0);
         if (++meetings > MeetingsAtOneTime * (1 + system.SwitchCount)) return StepStatus.CrossingsAccumulate;
-        StepStatus status = rules.Meet(guard, Time, Current.End.AsSpan(0, Current.Dimension), guards.Direction, out Crossing? crossing);
+        StepStatus status = rules.Meet(guard, Time, Current.End.AsSpan(0, Current.Dimension), guards.Direction, forced, out Crossing? crossing);
         if (crossing is not { } what) return status;
         NewCrossings.Add(what);
         Statistics.Crossings++;
@@ -252,11 +268,19 @@ internal sealed class Motion
             Guard guard = guards[i];
             if (guard.Kind != GuardKind.Surface || (sliding.IsActive && guard.Switch == sliding.Switch)) continue;
             double rate = rules.GuardRate(guard, Time, State, guards.Direction);
-            if (!(rate < 0 && guardValues[i] <= -rate * MeetingsAtOneTime * Ulp(Time))) continue;
-            return Meet(guard) == StepStatus.Accepted;
+            bool isAhead = rate < 0 && guardValues[i] <= -rate * MeetingsAtOneTime * Ulp(Time);
+            bool isBehind = guardValues[i] <= 0 && !(rate > 0);
+            if (isAhead || isBehind) return Meet(guard, forced: true) == StepStatus.Accepted;
         }
 
         return false;
+    }
+
+    // Steps too long for a guard to be followed are shortened, and grow again slowly.
+    private void LimitSteps(double longest)
+    {
+        guardedStep = longest;
+        Current.MaximumStep = Math.Min(options.MaximumStep ?? double.PositiveInfinity, guardedStep);
     }
 
     private void ChangeMethod()
@@ -264,13 +288,13 @@ internal sealed class Motion
         Stepper before = Current;
         Current = before == explicitStepper ? Implicit : Explicit;
         Current.Begin(before.EndTime, before.End, Math.Abs(before.Proposed));
+        Current.MaximumStep = before.MaximumStep;
         Statistics.MethodChanges++;
     }
 
     private Stepper MakeStepper(IntegrationMethod method)
     {
         Stepper stepper = system.Apply(new StepperFactory(method, regime, sliding, tangentCount, norm, Statistics));
-        stepper.MaximumStep = options.MaximumStep ?? double.PositiveInfinity;
         stepper.MaximumAttempts = options.MaximumSteps;
         return stepper;
     }

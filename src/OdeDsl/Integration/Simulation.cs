@@ -21,9 +21,10 @@ internal static class Simulation
                 if (cancellationToken.IsCancellationRequested)
                     throw MotionFailure.Cancelled(motion, system.StateCount, run, cancellationToken);
                 StepStatus status = motion.Step(until);
-                if (status != StepStatus.Accepted) throw MotionFailure.Of(status, motion, system.StateCount, run);
-                run.Append(motion.Current);
+                // A motion that cannot go on beyond a surface has made its way up to there.
+                if (motion.Time != run.EndTime) run.Append(motion.Current);
                 foreach (Crossing crossing in motion.NewCrossings) run.Append(crossing);
+                if (status != StepStatus.Accepted) throw MotionFailure.Of(status, motion, system.StateCount, run);
                 double done = (motion.Time - options.From) / (until - options.From);
                 if (progress is null || done - reported < ProgressInterval) continue;
                 reported = done;
