@@ -39,7 +39,7 @@ internal sealed class LimitCycleSearch
     private LimitCycleSearchResult Run()
     {
         bool canOscillate = system.StateCount > 1 || region.Periods[0] > 0;
-        if (canOscillate) Forward();
+        Forward();
         if (canOscillate && options.ReverseTime && system.StateCount == 2) Backwards();
         Settle();
         return new LimitCycleSearchResult

@@ -36,8 +36,14 @@ internal sealed class LongRun(
     /// <summary>Closing is tried where the best return misses by less than this part of the orbit.</summary>
     private const double WorthClosing = 0.2;
 
+    /// <summary>After so many closings in a row came to nothing, as on irregular motion, only much better returns are tried.</summary>
+    private const int PatientClosings = 16;
+    private const double WorthClosingLater = 0.01;
+
     /// <summary>Steps that are rejected come on top of those accepted; a run is ended by whichever limit comes first.</summary>
     private static readonly SimulationOptions Options = new() { RelativeTolerance = RunTolerance };
+
+    private int vainClosings;
 
     /// <summary>Follows a start.</summary>
     /// <param name="start">The start.</param>
@@ -91,9 +97,11 @@ internal sealed class LongRun(
         int reached = orbits.CycleReachedBy(last, returns.SignedPeriod < 0);
         if (reached >= 0) return (RunOutcome.LimitCycle, reached, OnCycle(reached));
         if (rests.SpiralsIn(returns) is (int focus, string spiral)) return (RunOutcome.Rest, focus, spiral);
-        if (!(returns.Displacement <= WorthClosing)) return null;
+        if (!(returns.Displacement <= (vainClosings < PatientClosings ? WorthClosing : WorthClosingLater))) return null;
+        vainClosings++;
         if (shooter.Close(last, returns.SignedPeriod, returns.Scale) is not ShotOrbit orbit) return null;
         (OrbitVerdict verdict, int index) = judge.Judge(orbit, returns.Scale);
+        if (verdict != OrbitVerdict.Nothing) vainClosings = 0;
         return verdict switch
         {
             OrbitVerdict.FamilyMember => (RunOutcome.ClosedOrbit, index, OnFamily(index)),

@@ -42,8 +42,11 @@ internal sealed class OrbitShooter(DynamicSystem system, SearchRegion region, do
     /// <summary>The displacement for differences of the flow, in scales: the cube root of the integration's accuracy would do as well.</summary>
     private const double Displacement = 1e-4;
 
+    /// <summary>Steps once round at most: many for any smooth orbit, few enough to give up soon where a guess hits a singularity.</summary>
+    private const int MaximumSteps = 20_000;
+
     private readonly int n = system.StateCount;
-    private readonly Flow flow = new(system, new FlowOptions { RelativeTolerance = tolerance });
+    private readonly Flow flow = new(system, new FlowOptions { RelativeTolerance = tolerance, MaximumSteps = MaximumSteps });
 
     /// <summary>The number of orbits that were tried.</summary>
     public int Attempts { get; private set; }
