@@ -12,7 +12,7 @@ public sealed record AssessmentOptions
     public int SampledStarts { get; init; } = 64;
 
     /// <summary>The largest number of integration steps of one run that looks for an attractor; at least 100.</summary>
-    public int MaximumStepsPerRun { get; init; } = 40_000;
+    public int MaximumStepsPerRun { get; init; } = 20_000;
 
     /// <summary>
     /// Whether to look for margins. The range of a parameter reaches to its bounds; where a bound is infinite, to
@@ -25,7 +25,10 @@ public sealed record AssessmentOptions
     /// </summary>
     public double RangeFactor { get; init; } = 10;
 
-    /// <summary>The number of parameter steps with which limit cycles are followed over a range; at least 4.</summary>
+    /// <summary>
+    /// The first step with which limit cycles are followed is the range over this number; at least 4. Steps grow where the going is easy
+    /// and shrink where it is not.
+    /// </summary>
     public int CycleSteps { get; init; } = 20;
 
     /// <summary>The error, relative to the range of each state, that the recommended integration must not exceed; between 1e-10 and 0.1.</summary>

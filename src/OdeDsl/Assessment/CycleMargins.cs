@@ -15,7 +15,9 @@ internal sealed class CycleMargins(DynamicSystem system, IReadOnlyList<LimitCycl
     // A cycle is given up when it does not close at this share of the first step, and its end is known to that.
     private const double SmallestStep = 1.0 / 256;
 
+    // Steps grow where the cycle closes at once, up to this many first steps.
     private const double Growth = 1.5;
+    private const double LongestStep = 4;
 
     // A stability change is located to this share of the step it was met in.
     private const double ChangeShare = 1e-6;
@@ -39,7 +41,7 @@ internal sealed class CycleMargins(DynamicSystem system, IReadOnlyList<LimitCycl
     {
         double step = (end - first.Value) / steps;
         double smallest = SmallestStep * Math.Abs(step);
-        double longest = Math.Abs(step);
+        double longest = LongestStep * Math.Abs(step);
         TrackedCycle last = first;
         TrackedCycle? before = null;
         while (last.Value != end)

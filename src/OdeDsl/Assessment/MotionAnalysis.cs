@@ -13,7 +13,7 @@ internal sealed class MotionAnalysis(
     DynamicSystem system, EquilibriumSearchResult rests, AssessmentOptions options, CancellationToken cancellation)
 {
     // Sampled runs that do not settle are examined by exponents, but not all of them.
-    private const int MostExamined = 3;
+    private const int MostExamined = 2;
 
     // Tangents that separate by less than this power of e over the whole run may do so without being irregular: linear and quadratic
     // growth, as between the turns of a conservative system, stay below it in any run of practicable length.
