@@ -53,7 +53,7 @@ internal sealed class Locker
         Node node = _free[index];
         int a = At(node.First), b = At(node.Second), c = At(node.Third);
         int asWritten = Graph.Intern(node with { First = a, Second = b, Third = c });
-        if (!Varies(index)) return asWritten;
+        if (!Varies(index)) return Quiet.Form(Graph, asWritten);
         return node.Operator switch
         {
             Operator.Less or Operator.LessOrEqual or Operator.Greater or Operator.GreaterOrEqual => Relation(index, node.Operator, a, b, index),

@@ -8,11 +8,10 @@ namespace OdeDsl.Generators.Algebra;
 /// <summary>Everything that is computed for a model, as expressions: what the user wrote, its locked form and the derivatives.</summary>
 internal sealed class ModelEquations
 {
-    private ModelEquations(ExpressionGraph free, Locker locker)
+    private ModelEquations(ExpressionGraph free, ExpressionGraph locked)
     {
         Free = free;
-        Locked = locker.Graph;
-        Switches = locker.Switches;
+        Locked = locked;
     }
 
     /// <summary>The expressions as written: rates, observables and the decisions of the switches.</summary>
@@ -21,7 +20,12 @@ internal sealed class ModelEquations
     /// <summary>The locked expressions and all derivatives.</summary>
     public ExpressionGraph Locked { get; }
 
-    public IReadOnlyList<SwitchingFunction> Switches { get; }
+    public IReadOnlyList<SwitchingFunction> Switches { get; private init; } = [];
+
+    /// <summary>The rates as written, nodes of <see cref="Free"/>; likewise the observables.</summary>
+    public IReadOnlyList<int> Rates { get; private init; } = [];
+
+    public IReadOnlyList<int> Observables { get; private init; } = [];
 
     /// <summary>What each node of <see cref="Free"/> changes with.</summary>
     public Dependence[] FreeDependences { get; private init; } = [];
@@ -54,10 +58,14 @@ internal sealed class ModelEquations
         SparseMatrix byState = derivatives.By(Operator.State, model.States.Count, cancellationToken);
         int[] byTime = derivatives.ByTime(cancellationToken);
         int[] alongDirection = derivatives.AlongDirection(model.States.Count, cancellationToken);
+        SwitchingFunction[] switches = WithQuietDecisions(free, locker.Switches);
         Dependence[] dependences = Dependences.Of(free);
         int count = lockedRates.Length;
-        return new ModelEquations(free, locker)
+        return new ModelEquations(free, locker.Graph)
         {
+            Switches = switches,
+            Rates = BranchGuard.Apply(free, rates),
+            Observables = BranchGuard.Apply(free, [.. model.Observables.Select(static observable => observable.Value)]),
             FreeDependences = dependences,
             DependsOnTime = rates.Any(rate => (dependences[rate] & Dependence.Time) != 0),
             LockedRates = lockedRates,
@@ -68,6 +76,13 @@ internal sealed class ModelEquations
             SwitchingTimeDerivative = [.. byTime.Skip(count)],
             JacobianVectorProduct = [.. alongDirection.Take(count)],
         };
+    }
+
+    /// <summary>A regime is decided for all conditions at once, also for those that the user's code would not come to.</summary>
+    private static SwitchingFunction[] WithQuietDecisions(ExpressionGraph free, IReadOnlyList<SwitchingFunction> switches)
+    {
+        int[] decisions = Quiet.Forms(free, [.. switches.Select(static function => function.Decision)]);
+        return [.. switches.Select((function, i) => function with { Decision = decisions[i] })];
     }
 
     private static SparseMatrix Rows(SparseMatrix matrix, int first, int count)

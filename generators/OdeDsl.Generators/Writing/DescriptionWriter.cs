@@ -7,7 +7,7 @@ using OdeDsl.Generators.Reading;
 namespace OdeDsl.Generators.Writing;
 
 /// <summary>Prints the description of the model as a static property that is made once.</summary>
-internal sealed class DescriptionWriter(SourceWriter writer, ModelDefinition model, ModelEquations equations)
+internal sealed class DescriptionWriter(SourceWriter writer, ModelDefinition model, ModelEquations equations, SwitchTexts texts)
 {
     private const string Namespace = "global::OdeDsl.Modeling.";
 
@@ -54,7 +54,7 @@ internal sealed class DescriptionWriter(SourceWriter writer, ModelDefinition mod
     private string SwitchText(SwitchingFunction function)
     {
         Dependence dependence = equations.FreeDependences[function.Decision];
-        return $"new {Namespace}SwitchDescription({Literals.Text(SwitchTexts.Of(model, equations, function))}, "
+        return $"new {Namespace}SwitchDescription({Literals.Text(texts[function])}, "
             + $"{Namespace}SwitchKind.{function.Kind}, {Bool((dependence & Dependence.State) != 0)}, {Bool((dependence & Dependence.Time) != 0)})";
     }
 

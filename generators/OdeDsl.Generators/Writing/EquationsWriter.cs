@@ -1,3 +1,4 @@
+using System;
 using System.Collections.Generic;
 using System.Linq;
 using System.Threading;
@@ -11,6 +12,8 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
 {
     private static readonly string[] Point = ["state", "parameters"];
     private static readonly string[] LockedPoint = ["state", "parameters", "regime"];
+
+    private readonly SwitchTexts _texts = new(model, equations);
 
     private readonly BodyWriter _body = new(
         writer,
@@ -30,8 +33,8 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
         writer.Line(GeneratedMark.Code);
         writer.Line(GeneratedMark.NotCovered);
         writer.Open($"public readonly struct {name} : global::OdeDsl.Modeling.IOdeSystem");
-        new DescriptionWriter(writer, model, equations).Write();
-        Member(new Quantity("Rates", Point, "rates", model.States.Count, equations.Free, Rates(model.States.Select(static state => state.Rate))));
+        new DescriptionWriter(writer, model, equations, _texts).Write();
+        Member(new Quantity("Rates", Point, "rates", model.States.Count, equations.Free, Rates(equations.Rates)));
         if (equations.Switches.Count > 0)
             Member(new Quantity("Rates", LockedPoint, "rates", model.States.Count, equations.Locked, Rates(equations.LockedRates)));
         else
@@ -74,16 +77,16 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
         _body.Write(quantity, $"public static void {quantity.Method}({Signatures.Parameters(quantity)})");
     }
 
-    private IReadOnlyList<Result> Rates(IEnumerable<int> nodes) => [.. nodes.Select(
+    private Result[] Rates(IEnumerable<int> nodes) => [.. nodes.Select(
         (node, i) => new Result(node, i, Local(i) + "Rate", $"{model.States[i].Property.Name}: {model.States[i].RateText}"))];
 
     private Quantity Observables() => new(
-        "Observables", Point, "values", model.Observables.Count, equations.Free, [.. model.Observables.Select(static (observable, i) =>
-            new Result(observable.Value, i, Identifiers.Local(observable.Name) + "Value", $"{observable.Name}: {observable.Text}"))]);
+        "Observables", Point, "values", model.Observables.Count, equations.Free, [.. model.Observables.Select((observable, i) =>
+            new Result(equations.Observables[i], i, Identifiers.Local(observable.Name) + "Value", $"{observable.Name}: {observable.Text}"))]);
 
     private Quantity Vector(string method, IReadOnlyList<string> inputs, string target, IReadOnlyList<int> nodes) => new(
         method, inputs, target, nodes.Count, equations.Locked, [.. nodes
-            .Select((node, i) => new Result(node, i, target + Literals.Integer(i), ""))
+            .Select((node, i) => new Result(node, i, RowName(method, i) + (target == "product" ? "Product" : "ByTime"), ""))
             .Where(result => !IsZero(result.Node))]);
 
     private Quantity Matrix(string method, string target, SparseMatrix matrix, bool dense)
@@ -95,12 +98,23 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
             string comment = entry.Row != lastRow ? RowText(method, entry.Row) : "";
             lastRow = entry.Row;
             int place = dense ? (entry.Row * matrix.Columns) + entry.Column : results.Count;
-            results.Add(new Result(entry.Node, place, $"d{Literals.Integer(entry.Row)}d{Literals.Integer(entry.Column)}", comment));
+            results.Add(new Result(entry.Node, place, EntryName(method, entry), comment));
         }
 
         int length = dense ? matrix.Rows * matrix.Columns : matrix.Entries.Count;
         return new Quantity(method, LockedPoint, target, length, equations.Locked, results);
     }
+
+    private string EntryName(string method, MatrixEntry entry)
+    {
+        string column = method == "ParameterJacobian"
+            ? model.Parameters[entry.Column].Property.Name
+            : model.States[entry.Column].Property.Name;
+        return $"{RowName(method, entry.Row)}By{Identifiers.Part(column)}";
+    }
+
+    private string RowName(string method, int row) =>
+        method.StartsWith("Switching", StringComparison.Ordinal) ? "switch" + Literals.Integer(row) : Local(row) + "Rate";
 
     private string RowText(string method, int row) => method == "SwitchingJacobian"
         ? "Derivatives of " + TextOf(equations.Switches[row])
@@ -110,5 +124,5 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
 
     private string Local(int state) => Identifiers.Local(model.States[state].Property.Name);
 
-    private string TextOf(SwitchingFunction function) => SwitchTexts.Of(model, equations, function);
+    private string TextOf(SwitchingFunction function) => _texts[function];
 }

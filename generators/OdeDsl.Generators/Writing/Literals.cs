@@ -14,20 +14,48 @@ internal static class Literals
         if (double.IsInfinity(value)) return value > 0 ? "double.PositiveInfinity" : "double.NegativeInfinity";
         if (value == 0) return BitConverter.DoubleToInt64Bits(value) < 0 ? "-0d" : "0d";
 
-        // Whole numbers as people write them: 60d rather than 6E+01d. All of them below 1E+15 print exactly.
-        if (Math.Abs(value) < 1e15 && Math.Floor(value) == value) return value.ToString("F0", CultureInfo.InvariantCulture) + "d";
-
-        // Counting the digits up, instead of the round-trip format, gives the same text on every host.
-        for (int digits = 1; digits < 17; digits++)
-        {
-            string text = value.ToString("G" + digits.ToString(CultureInfo.InvariantCulture), CultureInfo.InvariantCulture);
-            if (double.Parse(text, NumberStyles.Float, CultureInfo.InvariantCulture) == value) return text + "d";
-        }
-
-        return value.ToString("G17", CultureInfo.InvariantCulture) + "d";
+        string sign = value < 0 ? "-" : "";
+        (string digits, int exponent) = ShortestDigits(Math.Abs(value));
+        return sign + Notation(digits, exponent) + "d";
     }
 
     public static string Integer(int value) => value.ToString(CultureInfo.InvariantCulture);
+
+    /// <summary>
+    /// The fewest significant digits that read back as the same number, and the power of ten of the first. Found by halving the range
+    /// of counts (more digits never read back worse) because the round-trip format differs between hosts.
+    /// </summary>
+    private static (string Digits, int Exponent) ShortestDigits(double value)
+    {
+        (int least, int most) = (1, 17);
+        while (least < most)
+        {
+            int middle = (least + most) / 2;
+            if (double.Parse(Scientific(value, middle), NumberStyles.Float, CultureInfo.InvariantCulture) == value) most = middle;
+            else least = middle + 1;
+        }
+
+        string text = Scientific(value, least);
+        int mark = text.IndexOf('E');
+        return (text.Substring(0, mark).Replace(".", ""), int.Parse(text.Substring(mark + 1), NumberStyles.AllowLeadingSign, CultureInfo.InvariantCulture));
+    }
+
+    private static string Scientific(double value, int digits) =>
+        value.ToString("E" + Integer(digits - 1), CultureInfo.InvariantCulture);
+
+    /// <summary>The digits as people write them: with a power of ten only where many zeros would be needed.</summary>
+    private static string Notation(string digits, int exponent)
+    {
+        if (exponent is < -5 or > 15)
+        {
+            string fraction = digits.Length > 1 ? "." + digits.Substring(1) : "";
+            return digits.Substring(0, 1) + fraction + "E" + Integer(exponent);
+        }
+
+        if (exponent < 0) return "0." + new string('0', -exponent - 1) + digits;
+        if (digits.Length <= exponent + 1) return digits.PadRight(exponent + 1, '0');
+        return digits.Substring(0, exponent + 1) + "." + digits.Substring(exponent + 1);
+    }
 
     /// <summary>A string literal.</summary>
     public static string Text(string value)

@@ -5,32 +5,35 @@ using Microsoft.CodeAnalysis;
 using Microsoft.CodeAnalysis.CSharp;
 using OdeDsl.Generators.Reading;
 using OdeDsl.Generators.Writing;
-using OdeDsl.Modeling;
+using OdeDsl.Generators.Tests.Harness;
 
 namespace OdeDsl.Generators.Tests.Emitted;
 
 /// <summary>The emitted code of a model, compiled with every warning an error, loaded and ready to call.</summary>
 internal sealed class EmittedModel
 {
-    private static readonly MetadataReference[] References = [.. ((string)AppContext.GetData("TRUSTED_PLATFORM_ASSEMBLIES")!)
-        .Split(Path.PathSeparator)
-        .Where(static path => Path.GetFileName(path) is var file && (file.StartsWith("System.", StringComparison.Ordinal) || file == "OdeDsl.dll"))
-        .Select(static path => MetadataReference.CreateFromFile(path))];
-
     private EmittedModel(string source, IEmittedCalls calls) => (Source, Calls) = (source, calls);
 
     public string Source { get; }
 
     public IEmittedCalls Calls { get; }
 
-    public static EmittedModel Of(ModelDefinition model, string? userSource = null)
+    public static EmittedModel Of(ModelDefinition model) => OfMany([model])[0];
+
+    /// <summary>Compiles many models at once, which is much faster than one by one.</summary>
+    public static EmittedModel[] OfMany(IReadOnlyList<ModelDefinition> models)
     {
-        string source = ModelWriter.Write(model, CancellationToken.None);
-        Assembly assembly = Compile(source, userSource ?? UserHalf(model));
-        Type type = assembly.GetType(model.Type.MetadataName)!;
+        string[] sources = [.. models.Select(static model => ModelWriter.Write(model, CancellationToken.None))];
+        Assembly assembly = Compile([.. sources, .. models.Select(UserHalf)]);
+        return [.. models.Select((model, i) => new EmittedModel(sources[i], CallsOf(assembly.GetType(model.Type.MetadataName)!)))];
+    }
+
+    /// <summary>The members of the system that belongs to a model class.</summary>
+    public static IEmittedCalls CallsOf(Type type)
+    {
         Type contract = type.GetInterfaces().Single(static face => face.Name.StartsWith("IOdeModel", StringComparison.Ordinal));
         Type calls = typeof(EmittedCalls<,>).MakeGenericType(contract.GetGenericArguments());
-        return new EmittedModel(source, (IEmittedCalls)Activator.CreateInstance(calls)!);
+        return (IEmittedCalls)Activator.CreateInstance(calls)!;
     }
 
     public static Assembly Compile(params string[] sources)
@@ -43,11 +46,11 @@ internal sealed class EmittedModel
             warningLevel: 9999,
             nullableContextOptions: NullableContextOptions.Enable);
         CSharpCompilation compilation = CSharpCompilation.Create(
-            "Emitted", [.. sources.Select(source => CSharpSyntaxTree.ParseText(source, parse, encoding: Encoding.UTF8))], References, options);
+            "Emitted", [.. sources.Select(source => CSharpSyntaxTree.ParseText(source, parse, encoding: Encoding.UTF8))], Compiling.References, options);
         using MemoryStream image = new();
         var result = compilation.Emit(image);
         Diagnostic[] problems = [.. result.Diagnostics.Where(static problem => problem.Severity >= DiagnosticSeverity.Warning)];
-        if (problems.Length > 0) throw new InvalidOperationException(string.Join("\n", problems.Take(5).Select(static p => p.ToString())) + "\n" + sources[0]);
+        if (problems.Length > 0) throw new InvalidOperationException(string.Join("\n", problems.Take(5).Select(static p => p.ToString())) + "\n" + problems[0].Location.SourceTree);
         image.Position = 0;
         return new AssemblyLoadContext(null, isCollectible: true).LoadFromStream(image);
     }

@@ -1,5 +1,4 @@
 using OdeDsl.Generators.Algebra;
-using Xunit;
 
 namespace OdeDsl.Generators.Tests.Emitted;
 
