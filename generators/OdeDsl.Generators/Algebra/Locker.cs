@@ -15,15 +15,16 @@ namespace OdeDsl.Generators.Algebra;
 internal sealed class Locker
 {
     private readonly ExpressionGraph _free;
-    private readonly Dependence[] _dependences;
     private readonly Dictionary<int, int> _locked = [];
+    private readonly Dictionary<int, bool> _varies = [];
     private readonly SwitchTable _switches;
+    private readonly CancellationToken _cancellationToken;
 
-    private Locker(ExpressionGraph free)
+    private Locker(ExpressionGraph free, CancellationToken cancellationToken)
     {
         _free = free;
-        _dependences = Dependences.Of(free);
-        _switches = new SwitchTable(free, Graph);
+        _switches = new SwitchTable(free, Graph, cancellationToken);
+        _cancellationToken = cancellationToken;
     }
 
     public ExpressionGraph Graph { get; } = new();
@@ -38,11 +39,13 @@ internal sealed class Locker
     /// <param name="cancellationToken">Stops the work.</param>
     public static Locker Lock(ExpressionGraph free, IEnumerable<int> roots, CancellationToken cancellationToken)
     {
-        Locker locker = new(free);
+        Locker locker = new(free, cancellationToken);
         foreach (int index in Reach.Of(free, roots))
         {
             cancellationToken.ThrowIfCancellationRequested();
-            locker._locked[index] = locker.Translate(index);
+            int locked = locker.Translate(index);
+            locker._locked[index] = locked;
+            locker.Varies(locked); // Notes it, so that no later question has to look deep.
         }
 
         return locker;
@@ -53,13 +56,13 @@ internal sealed class Locker
         Node node = _free[index];
         int a = At(node.First), b = At(node.Second), c = At(node.Third);
         int asWritten = Graph.Intern(node with { First = a, Second = b, Third = c });
-        if (!Varies(index)) return Quiet.Form(Graph, asWritten);
+        if (!Graph[asWritten].Operands.Any(Varies)) return Quiet.Form(Graph, asWritten);
         return node.Operator switch
         {
-            Operator.Less or Operator.LessOrEqual or Operator.Greater or Operator.GreaterOrEqual => Relation(index, node.Operator, a, b, index),
+            Operator.Less or Operator.LessOrEqual or Operator.Greater or Operator.GreaterOrEqual => _switches.Side(
+                node.Operator, a, b, new SwitchRequest(index, index, IsRelation: true)),
             Operator.Abs => Graph.Ternary(Operator.Conditional, NotNegative(index, node.First), a, Negated(a)),
-            Operator.Sign => Graph.Ternary(
-                Operator.Conditional, Kink(index, Operator.Greater, node.First, Zero), Graph.Constant(1.0), Graph.Constant(-1.0)),
+            Operator.Sign => Sign(index, node.First),
             Operator.Min => Extremum(index, Operator.Less, node.First, node.Second),
             Operator.Max => Extremum(index, Operator.Greater, node.First, node.Second),
             Operator.MinMagnitude => ExtremeMagnitude(index, Operator.Less),
@@ -71,10 +74,10 @@ internal sealed class Locker
                 Graph.Ternary(Operator.Conditional, Kink(index, Operator.Greater, node.First, node.Third), c, a)),
             Operator.CopySign => CopySign(index, a),
             Operator.Floor => Whole(index, a, _free.Unary(Operator.Floor, node.First)),
-            Operator.Ceiling => Following(Whole(index, a, _free.Unary(Operator.Floor, node.First))),
-            Operator.Truncate => Truncated(Whole(index, a, _free.Unary(Operator.Floor, node.First))),
+            Operator.Ceiling => Negated(Whole(index, Negated(a), _free.Unary(Operator.Floor, _free.Unary(Operator.Negate, node.First)))),
+            Operator.Truncate => Truncated(Whole(index, a, _free.Unary(Operator.Floor, node.First)), a),
             Operator.Round or Operator.RoundAwayFromZero => Whole(index, PlusHalf(a), index),
-            Operator.Remainder => MinusMultiple(a, Truncated(Whole(index, Graph.Binary(Operator.Divide, a, b), FloorOfQuotient(index))), b),
+            Operator.Remainder => Remainder(index, a, b),
             Operator.IEEERemainder => MinusMultiple(a, Whole(index, PlusHalf(Graph.Binary(Operator.Divide, a, b)), Quotient(index)), b),
             _ => asWritten,
         };
@@ -94,18 +97,24 @@ internal sealed class Locker
 
     private int LockedOrNone(int free) => free < 0 ? free : LockedOf(free);
 
-    private int Relation(int decision, Operator relation, int a, int b, int source) =>
-        _switches.Side(relation, a, b, new SwitchRequest(decision, source, IsRelation: true));
-
     /// <summary>The side of a kink: which relation decides on the surface itself does not matter, so any switch of that surface will do.</summary>
-    private int Kink(int source, Operator relation, int a, int b, int? decision = null)
+    private int Kink(int source, Operator relation, int a, int b, int? decision = null, bool isRelation = false)
     {
         int condition = decision ?? _free.Binary(relation, a, b);
-        if (!Varies(a) && !Varies(b)) return LockedOf(condition);
-        return _switches.Side(relation, LockedOf(a), LockedOf(b), new SwitchRequest(condition, source, IsRelation: false));
+        return Varies(LockedOf(a)) || Varies(LockedOf(b))
+            ? _switches.Side(relation, LockedOf(a), LockedOf(b), new SwitchRequest(condition, source, isRelation))
+            : LockedOf(condition);
     }
 
     private int NotNegative(int source, int a) => Kink(source, Operator.GreaterOrEqual, a, Zero);
+
+    /// <summary>Sign is 0 on the surface, which only matters where the argument stays zero.</summary>
+    private int Sign(int source, int operand)
+    {
+        int positive = Kink(source, Operator.Greater, operand, Zero);
+        int sign = Graph.Ternary(Operator.Conditional, positive, Graph.Constant(1.0), Graph.Constant(-1.0));
+        return FlatZero.Choose(Graph, LockedOf(operand), Graph.Constant(0.0), sign, _cancellationToken);
+    }
 
     /// <summary>Min and Max return NaN if either operand is: a NaN on the left counts as chosen.</summary>
     private int Extremum(int source, Operator relation, int a, int b)
@@ -132,7 +141,8 @@ internal sealed class Locker
         int positive = NotNegative(source, node.First);
         int size = Graph.Ternary(Operator.Conditional, positive, a, Negated(a));
         int opposite = Graph.Ternary(Operator.Conditional, positive, Negated(a), a);
-        return Graph.Ternary(Operator.Conditional, NotNegative(source, node.Second), size, opposite);
+        int same = Kink(source, Operator.GreaterOrEqual, node.Second, Zero, isRelation: true);
+        return Graph.Ternary(Operator.Conditional, same, size, opposite);
     }
 
     private int Negated(int a) => Graph.Unary(Operator.Negate, a);
@@ -142,11 +152,22 @@ internal sealed class Locker
     private int Whole(int source, int value, int decision) =>
         _switches.WholeNumber(value, new SwitchRequest(decision, source, IsRelation: false));
 
-    /// <summary>n + 1 as −(−1 − n), so that the number after −1 is −0 as <c>Math.Ceiling</c> says.</summary>
-    private int Following(int n) => Negated(Graph.Binary(Operator.Subtract, Graph.Constant(-1.0), n));
+    /// <summary>
+    /// Truncated x from n = ⌊x⌋: n where x is positive or stays whole, else the next number, written −(−1 − n) so that the one after
+    /// −1 is −0 as <c>Math.Truncate</c> says.
+    /// </summary>
+    private int Truncated(int n, int x)
+    {
+        int following = Negated(Graph.Binary(Operator.Subtract, Graph.Constant(-1.0), n));
+        int negative = FlatZero.Choose(Graph, Graph.Binary(Operator.Subtract, x, n), n, following, _cancellationToken);
+        return Graph.Ternary(Operator.Conditional, Graph.Binary(Operator.GreaterOrEqual, n, Graph.Constant(0.0)), n, negative);
+    }
 
-    private int Truncated(int n) => Graph.Ternary(
-        Operator.Conditional, Graph.Binary(Operator.GreaterOrEqual, n, Graph.Constant(0.0)), n, Following(n));
+    private int Remainder(int source, int a, int b)
+    {
+        int quotient = Graph.Binary(Operator.Divide, a, b);
+        return MinusMultiple(a, Truncated(Whole(source, quotient, FloorOfQuotient(source)), quotient), b);
+    }
 
     /// <summary>a − n b with one rounding: exact, because remainders are exact.</summary>
     private int MinusMultiple(int a, int n, int b) => Graph.Ternary(Operator.FusedMultiplyAdd, Negated(n), b, a);
@@ -169,8 +190,16 @@ internal sealed class Locker
         return _free.Ternary(Operator.Conditional, opposite, _free.Binary(Operator.Subtract, quotient, _free.Constant(1.0)), quotient);
     }
 
-    /// <summary>Whether a free node can change during a run.</summary>
-    private bool Varies(int free) => free < _dependences.Length
-        ? (_dependences[free] & (Dependence.State | Dependence.Time)) != 0
-        : _free[free].Operands.Any(Varies);
+    /// <summary>
+    /// Whether a locked expression can change within a regime. What only looks at regime entries and parameters needs no switch of
+    /// its own: it changes when they do.
+    /// </summary>
+    private bool Varies(int locked)
+    {
+        if (_varies.TryGetValue(locked, out bool known)) return known;
+        Node node = Graph[locked];
+        bool varies = node.Operator is Operator.State or Operator.Time || node.Operands.Any(Varies);
+        _varies.Add(locked, varies);
+        return varies;
+    }
 }

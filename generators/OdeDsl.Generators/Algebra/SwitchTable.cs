@@ -1,4 +1,5 @@
 using System.Collections.Generic;
+using System.Threading;
 
 namespace OdeDsl.Generators.Algebra;
 
@@ -10,7 +11,8 @@ internal readonly record struct SwitchRequest(int Decision, int Source, bool IsR
 /// <c>a &gt;= b</c>, <c>Math.Min(a, b)</c> are all decided by a − b. Relations that differ only in where equality belongs share too:
 /// on the surface itself, a set without extent, the first of them decides for all.
 /// </summary>
-internal sealed class SwitchTable(ExpressionGraph free, ExpressionGraph locked)
+/// <remarks>Two switches of one surface would look to an integrator like a corner in which two surfaces meet.</remarks>
+internal sealed class SwitchTable(ExpressionGraph free, ExpressionGraph locked, CancellationToken cancellationToken)
 {
     private readonly List<SwitchingFunction> _functions = [];
     private readonly Dictionary<int, int> _relationOf = [];
@@ -18,19 +20,21 @@ internal sealed class SwitchTable(ExpressionGraph free, ExpressionGraph locked)
 
     public IReadOnlyList<SwitchingFunction> Functions => _functions;
 
+    /// <summary>The switching function of a relation and how a positive value of it reads.</summary>
+    private (int Value, bool IsNegated) SurfaceOf(int a, int b)
+    {
+        int value = Difference(a, b);
+        if (_relationOf.ContainsKey(value)) return (value, false);
+        int opposite = Difference(b, a);
+        bool isNegated = _relationOf.ContainsKey(opposite) || (IsConstant(a) && !IsConstant(b));
+        return isNegated ? (opposite, true) : (value, false);
+    }
+
     /// <summary>The locked form of a relation between two locked expressions.</summary>
     public int Side(Operator relation, int a, int b, SwitchRequest request)
     {
-        bool negated = false;
-        int value = Difference(a, b);
-        if (!_relationOf.ContainsKey(value))
-        {
-            int opposite = Difference(b, a);
-            negated = _relationOf.ContainsKey(opposite) || (IsConstant(a) && !IsConstant(b));
-            if (negated) value = opposite;
-        }
-
-        SwitchKind kind = KindOf(relation, negated);
+        (int value, bool isNegated) = SurfaceOf(a, b);
+        SwitchKind kind = KindOf(relation, isNegated);
         if (!_relationOf.TryGetValue(value, out int index))
         {
             index = Append(new SwitchingFunction(value, kind, request.Decision, request.Source, request.IsRelation));
@@ -40,7 +44,11 @@ internal sealed class SwitchTable(ExpressionGraph free, ExpressionGraph locked)
         bool sameSide = IsPositive(_functions[index].Kind) == IsPositive(kind);
         if (request.IsRelation && !_functions[index].IsRelation) Fix(index, sameSide, kind, request);
         int side = locked.Leaf(Operator.Side, index);
-        return sameSide ? side : locked.Unary(Operator.Not, side);
+        if (!sameSide) side = locked.Unary(Operator.Not, side);
+        bool agreesOnSurface = _functions[index].Kind == (sameSide ? kind : Complement(kind));
+        if (!request.IsRelation || agreesOnSurface) return side;
+        int onSurface = locked.Constant(kind is SwitchKind.NotAbove or SwitchKind.NotBelow);
+        return FlatZero.Choose(locked, value, onSurface, side, cancellationToken);
     }
 
     /// <summary>The regime entry ⌊value⌋.</summary>

@@ -58,7 +58,7 @@ internal sealed class DualInterpreter(ExpressionGraph graph, Interpreter values,
         Operator.Pow => (y == 0 ? 0 : y * Math.Exp((y - 1) * Math.Log(x)), value == 0 ? 0 : value * Math.Log(x), 0),
         Operator.LogBase => (1 / (x * Math.Log(y)), -Math.Log(x) / Math.Log(y) / Math.Log(y) / y, 0),
         Operator.Atan2 => (y / (x * x + y * y), -x / (x * x + y * y), 0),
-        Operator.CopySign => (x == 0 || y == 0 ? double.NaN : Math.Sign(x) * Math.Sign(y), 0, 0),
+        Operator.CopySign => (x == 0 || y == 0 ? double.NaN : SignOf(x) * SignOf(y), 0, 0),
         Operator.Min => Chosen(x < y, x == y),
         Operator.Max => Chosen(x > y, x == y),
         Operator.MinMagnitude => Chosen(Math.Abs(x) < Math.Abs(y), Math.Abs(x) == Math.Abs(y)),
@@ -70,6 +70,8 @@ internal sealed class DualInterpreter(ExpressionGraph graph, Interpreter values,
 
     private static (double X, double Y, double Z) Chosen(bool first, bool tie) =>
         tie ? (double.NaN, double.NaN, 0) : first ? (1, 0, 0) : (0, 1, 0);
+
+    private static double SignOf(double x) => x < 0 ? -1 : 1;
 
     private static double Slope(Operator operation, double value, double x) => operation switch
     {
@@ -92,7 +94,7 @@ internal sealed class DualInterpreter(ExpressionGraph graph, Interpreter values,
         Operator.Asinh => 1 / Math.Cosh(value),
         Operator.Acosh => 1 / Math.Sinh(value),
         Operator.Atanh => Math.Cosh(value) * Math.Cosh(value),
-        Operator.Abs => x == 0 ? double.NaN : Math.Sign(x),
+        Operator.Abs => x == 0 ? double.NaN : SignOf(x),
         Operator.Sign or Operator.Floor or Operator.Ceiling or Operator.Truncate or Operator.Round or Operator.RoundAwayFromZero => 0,
         _ => throw new NotSupportedException(operation.ToString()),
     };
