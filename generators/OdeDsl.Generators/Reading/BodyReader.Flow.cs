@@ -53,7 +53,7 @@ internal sealed partial class BodyReader
     }
 
     /// <summary>Whether no execution goes on from here.</summary>
-    private bool IsOver(Flow flow) => flow.Returned == _conditions.True || flow.Broken == _conditions.True;
+    private bool IsOver(Flow flow) => _conditions.Or(flow.Returned, flow.Broken) == _conditions.True;
 
     private ImmutableDictionary<ISymbol, Value> Join(
         int condition, ImmutableDictionary<ISymbol, Value> first, ImmutableDictionary<ISymbol, Value> second)

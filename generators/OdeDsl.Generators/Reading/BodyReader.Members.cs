@@ -93,6 +93,8 @@ internal sealed partial class BodyReader
         if (!HasSource(member)) return WithoutSource(operation, member);
         ISymbol? behind = _initializing.FirstOrDefault(outer => !IsSetBefore(member, outer));
         if (behind is not null) return Problem(Descriptors.StaticOrder, operation, member.Name, behind.Name);
+        if (_initializing.Count > 0 && Constructors.InitializersMention(member.ContainingType, _initializing[_initializing.Count - 1], _cancellation))
+            return Problem(Descriptors.StaticOrder, operation, Name(member), Name(_initializing[_initializing.Count - 1]));
         if (Constructors.Mention(member, _cancellation)) return Problem(Descriptors.ConstructorSetsValue, operation, member.Name);
         CallKey key = new(member, EquatableArray<Value>.Empty);
         if (_known.TryGetValue(key, out Value? known)) return known;

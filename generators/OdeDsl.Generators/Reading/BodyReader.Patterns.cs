@@ -43,9 +43,8 @@ internal sealed partial class BodyReader
         Section(operation, input, UserText.Of(operation.Value.Syntax), 0);
 
         // Executions that broke out go on after the switch, together with those that ran to its end.
-        var variables = _flow.Broken == _conditions.True ? _flow.AfterBreak
-            : _flow.Broken == _conditions.False ? _flow.Variables
-            : IsOver(_flow) ? _flow.Variables
+        var variables = _flow.Broken == _conditions.False ? _flow.Variables
+            : IsOver(_flow) ? _flow.AfterBreak
             : Join(_flow.Broken, _flow.AfterBreak, _flow.Variables);
         _flow = _flow with { Variables = variables, Broken = before.Broken, AfterBreak = before.AfterBreak };
     }

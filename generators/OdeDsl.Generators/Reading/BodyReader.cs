@@ -163,10 +163,15 @@ internal sealed partial class BodyReader
 
     private UnknownValue Unsupported(IOperation operation)
     {
+        if (UsesUnknown(operation)) return UnknownValue.Instance;
         if (operation.Type is IErrorTypeSymbol) return Unresolved(operation);
         (string what, string instead) = Unreadable.Describe(operation);
         return Problem(Descriptors.ExpressionNotSupported, operation, what, instead);
     }
+
+    /// <summary>Whether the operation fails only because of a variable whose own problem is told already.</summary>
+    private bool UsesUnknown(IOperation operation) => operation.DescendantsAndSelf().OfType<ILocalReferenceOperation>()
+        .Any(local => _flow.Variables.TryGetValue(local.Local, out Value? value) && value is UnknownValue);
 
     private sealed record CallKey(ISymbol Member, EquatableArray<Value> Arguments);
 }

@@ -23,6 +23,7 @@ internal sealed class Conditions(ExpressionGraph graph)
     {
         if (first == False || second == False) return False;
         if (first == True || first == second) return second;
+        if (AreOpposite(first, second)) return False;
         return second == True ? first : graph.Binary(Operator.And, first, second);
     }
 
@@ -30,8 +31,11 @@ internal sealed class Conditions(ExpressionGraph graph)
     {
         if (first == True || second == True) return True;
         if (first == False || first == second) return second;
+        if (AreOpposite(first, second)) return True;
         return second == False ? first : graph.Binary(Operator.Or, first, second);
     }
+
+    private bool AreOpposite(int first, int second) => Not(first) == second;
 
     public int Equal(int first, int second) => Choose(first, second, Not(second));
 

@@ -24,6 +24,19 @@ internal static class Constructors
             .OfType<IdentifierNameSyntax>()
             .Any(name => name.Identifier.ValueText == member.Name);
 
+    /// <summary>
+    /// Whether static initializers of <paramref name="type"/> mention the type whose initializer reads from it. Which of the two types
+    /// is set first, and what the other then finds, depends on which one the program touches first.
+    /// </summary>
+    public static bool InitializersMention(INamedTypeSymbol type, ISymbol reader, CancellationToken cancellation) =>
+        !SymbolEqualityComparer.Default.Equals(type.OriginalDefinition, reader.ContainingType.OriginalDefinition)
+        && type.GetMembers()
+            .Where(static member => member is IFieldSymbol { IsStatic: true, IsConst: false } or IPropertySymbol { IsStatic: true })
+            .SelectMany(static member => member.DeclaringSyntaxReferences)
+            .SelectMany(reference => reference.GetSyntax(cancellation).DescendantNodes())
+            .OfType<IdentifierNameSyntax>()
+            .Any(name => name.Identifier.ValueText == reader.ContainingType.Name);
+
     private static IEnumerable<SyntaxNode> Setters(MemberDeclarationSyntax member) => member switch
     {
         ConstructorDeclarationSyntax constructor => [constructor],

@@ -35,6 +35,8 @@ public sealed class BodyProblemTests
     [InlineData("[|(object)X|] is double d ? d : 0")]
     [InlineData("[|X is double|] ? 1 : 0")]
     [InlineData("[|new int[3]|].Length")]
+    [InlineData("[|X.Cube|] + 1; } static class E { extension(double x) { public double Cube => x * x * x; }")]
+    [InlineData("[|X.Cube()|] + 1; } static class E { extension(double x) { public double Cube() => x * x * x; }")]
     [InlineData("[|this[0]|]; double this[int i] => i")]
     [InlineData("[|Swap(X)|]; ref double Swap(double x) => throw null!")]
     [InlineData("[|default(DateTime)|].Year")]
@@ -46,6 +48,16 @@ public sealed class BodyProblemTests
     [InlineData("Math.Max([|stackalloc double[1]|].Length, X)")]
     [InlineData("(double)[|(dynamic)X|]")]
     public void An_expression_that_is_not_supported(string expression) => Marked.ExpectOne("ODE0061", Marked.Equation(expression));
+
+    [Theory]
+    [InlineData("var a = [|new double[2]|]; return a[0] + a.Length + a[1];")]
+    [InlineData("[|var (a, b) = (X, Y)|]; return a + b;")]
+    [InlineData("if ([|(object)X|] is double d) return d; return 1;")]
+    [InlineData("var a = [|new { V = 1.0 }|]; return a.V * 2;")]
+    [InlineData("ref double [|r = ref x|]; return r; } static double x; double Other() { return 1;")]
+    [InlineData("Func<double, double> f = [|v => v * v|]; return f(X) + f(Y);")]
+    [InlineData("double? n = [|X|]; return n ?? 0;")]
+    public void A_local_of_a_kind_that_is_not_supported_is_told_once(string statements) => Marked.ExpectOne("ODE0061", Marked.Body(statements));
 
     [Theory]
     [InlineData("X is [|{ }|] ? 1 : 0")]
@@ -206,6 +218,12 @@ public sealed class BodyProblemTests
     public void A_static_member_read_before_it_is_set(string expression) => Marked.ExpectOne("ODE0078", Marked.Equation(expression));
 
     [Fact]
+    public void A_static_member_of_a_type_that_looks_back() => Marked.ExpectOne(
+        "ODE0078",
+        Marked.Equation("A * X; static readonly double A = [|Other.B|] + 1"),
+        "static class Other { public static readonly double B = 2, C = Model.D; } partial class Model { public static readonly double D = 1; }");
+
+    [Fact]
     public void A_static_member_of_another_part() => Marked.ExpectOne(
         "ODE0078",
         Marked.Equation("A * X; static readonly double A = [|B|] + 1"),
@@ -236,6 +254,11 @@ public sealed class BodyProblemTests
     {
         // Deep enough for our reader, not for the compiler's parser, which has limits of its own.
         string helpers = string.Join("\n", Enumerable.Range(0, 6000).Select(static i => $"double H{i} => H{i + 1} + 1;"));
-        Marked.ExpectOne("ODE0075", Marked.Model($"[Rate(nameof(X))] double [|XRate|] => H0;\n{helpers}\ndouble H6000 => X;"));
+        string source = Marked.Model($"[Rate(nameof(X))] double [|XRate|] => H0;\n{helpers}\ndouble H6000 => X;");
+        Exception? failure = null;
+        Thread small = new(() => failure = Record.Exception(() => Marked.ExpectOne("ODE0075", source)), maxStackSize: 1 << 20);
+        small.Start();
+        small.Join();
+        Assert.Null(failure);
     }
 }
