@@ -36,6 +36,7 @@ internal sealed class Motion
     private readonly CrossingRules rules;
     private readonly SurfaceProjection projection;
     private readonly double[] guardValues;
+    private readonly double[] rates;
     private Stepper? explicitStepper;
     private Stepper? implicitStepper;
     private bool unsettled;
@@ -60,6 +61,7 @@ internal sealed class Motion
         rules = new CrossingRules(system, regime, sliding);
         projection = new SurfaceProjection(system, regime, absolute, options.RelativeTolerance * OnSurface, OnSurface);
         guardValues = new double[guards.Count];
+        rates = new double[system.StateCount];
         Current = options.Method == IntegrationMethod.RadauIIA5 ? Implicit : Explicit;
     }
 
@@ -104,16 +106,7 @@ internal sealed class Motion
         guardedStep = double.PositiveInfinity;
         (Slid, ReachedSection) = (false, false);
         guards.Section = section;
-        if (section is { } watched)
-        {
-            double value = watched.Value(position[..system.StateCount]);
-            double near = 0;
-            for (int i = 0; i < absolute.Length; i++)
-                near += Math.Abs(watched.Normal[i]) * (absolute[i] + options.RelativeTolerance * Math.Abs(position[i]));
-            guards.StartsOnSection = Math.Abs(value) <= OnSurface * near;
-            guards.SectionSide = watched.Direction != 0 ? -Math.Sign(watched.Direction) : guards.StartsOnSection ? 0 : Math.Sign(value);
-        }
-
+        if (section is { } watched) PlaceSection(watched, time, position[..system.StateCount]);
         Current.MaximumStep = options.MaximumStep ?? double.PositiveInfinity;
         Current.Begin(time, position, options.InitialStep ?? 0);
     }
@@ -162,6 +155,21 @@ internal sealed class Motion
 
         Finish();
         return StepStatus.Accepted;
+    }
+
+    // A start within a small part of the tolerances, or within rounding of the time, of a section lies on it.
+    private void PlaceSection(Section section, double time, ReadOnlySpan<double> state)
+    {
+        system.Rates(time, state, regime, rates);
+        double value = section.Value(state), near = 0, speed = 0;
+        for (int i = 0; i < state.Length; i++)
+        {
+            near += Math.Abs(section.Normal[i]) * (absolute[i] + options.RelativeTolerance * Math.Abs(state[i]));
+            speed += section.Normal[i] * rates[i];
+        }
+
+        guards.StartsOnSection = Math.Abs(value) <= OnSurface * near + SameTime * Ulp(time) * Math.Abs(speed);
+        guards.SectionSide = section.Direction != 0 ? -Math.Sign(section.Direction) : guards.StartsOnSection ? 0 : Math.Sign(value);
     }
 
     private void Finish()

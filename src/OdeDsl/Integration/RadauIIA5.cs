@@ -136,7 +136,9 @@ internal sealed class RadauIIA5<TField> : Stepper
         factoredSize = 0;
         foreach (double entry in jacobian)
         {
-            if (!double.IsFinite(entry)) return StepStatus.NotFinite;
+            if (double.IsFinite(entry)) continue;
+            jacobianIsCurrent = jacobianServes = false;
+            return StepStatus.NotFinite;
         }
 
         if (!equations.Factor(jacobian, h)) return StepStatus.SingularMatrix;

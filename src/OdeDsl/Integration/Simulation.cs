@@ -26,7 +26,7 @@ internal static class Simulation
                 foreach (Crossing crossing in motion.NewCrossings) run.Append(crossing);
                 if (status != StepStatus.Accepted) throw MotionFailure.Of(status, motion, system.StateCount, run);
                 double done = (motion.Time - options.From) / (until - options.From);
-                if (progress is null || done - reported < ProgressInterval) continue;
+                if (progress is null || (done - reported < ProgressInterval && motion.Time != until)) continue;
                 reported = done;
                 progress.Report(done);
             }

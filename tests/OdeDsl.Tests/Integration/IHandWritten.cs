@@ -4,21 +4,24 @@ namespace OdeDsl.Tests.Integration;
 
 /// <summary>
 /// Equations written by hand for a test, without conditions: a system states its description and rates, and gets a Jacobian by central
-/// differences. No parameters, no observables.
+/// differences. No observables.
 /// </summary>
 internal interface IHandWritten<TSelf> : IOdeSystem
     where TSelf : struct, IHandWritten<TSelf>
 {
-    static abstract void F(double time, ReadOnlySpan<double> x, Span<double> dx);
+    static abstract void F(double time, ReadOnlySpan<double> x, ReadOnlySpan<double> p, Span<double> dx);
 
-    static ModelDescription Describe(string name, params double[] initial) => new()
+    static ModelDescription Describe(string name, params double[] initial) => Describe(name, initial, []);
+
+    static ModelDescription Describe(string name, double[] initial, double[] parameters) => new()
     {
         Name = name,
         States = [.. initial.Select((value, i) =>
             new StateDescription("X" + i, "", value, double.NegativeInfinity, double.PositiveInfinity, null, ""))],
-        Parameters = [],
+        Parameters = [.. parameters.Select((value, i) =>
+            new ParameterDescription("P" + i, "", value, double.NegativeInfinity, double.PositiveInfinity))],
         StateSparsity = Dense(initial.Length, initial.Length),
-        ParameterSparsity = Dense(initial.Length, 0),
+        ParameterSparsity = Dense(initial.Length, parameters.Length),
         DependsOnTime = true,
     };
 
@@ -29,11 +32,11 @@ internal interface IHandWritten<TSelf> : IOdeSystem
         [.. Enumerable.Range(0, rows * columns).Select(entry => entry % columns)]);
 
     static void IOdeSystem.Rates(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> rates) =>
-        TSelf.F(time, state, rates);
+        TSelf.F(time, state, parameters, rates);
 
     static void IOdeSystem.Rates(
         double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> rates) =>
-        TSelf.F(time, state, rates);
+        TSelf.F(time, state, parameters, rates);
 
     static void IOdeSystem.StateJacobian(
         double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian)
@@ -44,9 +47,9 @@ internal interface IHandWritten<TSelf> : IOdeSystem
         {
             double h = 1e-6 * Math.Max(1, Math.Abs(x[j]));
             x[j] = state[j] + h;
-            TSelf.F(time, x, plus);
+            TSelf.F(time, x, parameters, plus);
             x[j] = state[j] - h;
-            TSelf.F(time, x, minus);
+            TSelf.F(time, x, parameters, minus);
             x[j] = state[j];
             for (int i = 0; i < n; i++) jacobian[i * n + j] = (plus[i] - minus[i]) / (2 * h);
         }

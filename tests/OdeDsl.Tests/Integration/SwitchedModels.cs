@@ -79,3 +79,24 @@ internal sealed partial class TwoSurfaces
     [Rate(nameof(X))] private double XRate => -Math.Sign(X);
     [Rate(nameof(Y))] private double YRate => -Math.Sign(Y);
 }
+
+/// <summary>Three conditions that change together at t = 1; from there y' = 1 + 2 + 3.</summary>
+[OdeModel]
+internal sealed partial class SimultaneousSwitches
+{
+    [State(Initial = 0)] public partial double X { get; set; }
+    [State(Initial = 0)] public partial double Y { get; set; }
+    [Rate(nameof(X))] private double XRate => 1;
+    [Rate(nameof(Y))] private double YRate(double time) => (X > 1 ? 1 : 0) + (2 * X > 2 ? 2 : 0) + (time >= 1 ? 3 : 0);
+}
+
+/// <summary>A planar motion whose rates jump across a circle and across a kink.</summary>
+[OdeModel]
+internal sealed partial class CircularFence
+{
+    [State(Initial = 0.2)] public partial double X { get; set; }
+    [State(Initial = 0.1)] public partial double Y { get; set; }
+    private bool IsInside => X * X + Y * Y < 1;
+    [Rate(nameof(X))] private double XRate => IsInside ? 1 + Y : 0.8 * Y + 0.1;
+    [Rate(nameof(Y))] private double YRate => (IsInside ? 0.3 : -X) + 0.2 * Math.Abs(Y - 0.5);
+}
