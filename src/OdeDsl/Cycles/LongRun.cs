@@ -33,17 +33,12 @@ internal sealed class LongRun(
     /// <summary>Windows at most, however few steps each needs.</summary>
     private const int MaximumWindows = 40;
 
-    /// <summary>Closing is tried where the best return misses by less than this part of the orbit.</summary>
-    private const double WorthClosing = 0.2;
-
-    /// <summary>After so many closings in a row came to nothing, as on irregular motion, only much better returns are tried.</summary>
-    private const int PatientClosings = 16;
-    private const double WorthClosingLater = 0.01;
+    /// <summary>A window with this many returns is long enough; longer ones are not made, and only a few more are looked at.</summary>
+    private const int ManyReturns = 50;
+    private const int WindowsWithManyReturns = 6;
 
     /// <summary>Steps that are rejected come on top of those accepted; a run is ended by whichever limit comes first.</summary>
     private static readonly SimulationOptions Options = new() { RelativeTolerance = RunTolerance };
-
-    private int vainClosings;
 
     /// <summary>Follows a start.</summary>
     /// <param name="start">The start.</param>
@@ -53,7 +48,8 @@ internal sealed class LongRun(
         double[] state = [.. start];
         double elapsed = 0, horizon = FirstHorizon / FastestRate(start), displacement = double.PositiveInfinity;
         long steps = FirstWindow, left = maximumSteps;
-        for (int window = 0; window < MaximumWindows && left > 0; window++)
+        int longWindows = 0;
+        for (int window = 0; window < MaximumWindows && longWindows < WindowsWithManyReturns && left > 0; window++)
         {
             cancellation.ThrowIfCancellationRequested();
             (Trajectory? run, IntegrationException? failure) = Window(state, direction * horizon, Math.Min(steps, left));
@@ -74,10 +70,15 @@ internal sealed class LongRun(
             {
                 displacement = returns.Displacement;
                 if (Conclude(returns) is (RunOutcome outcome, int index, string text)) return End(outcome, index, text);
+                if (returns.States.Count >= ManyReturns) longWindows++;
+                else if (complete) horizon *= HorizonGrowth;
+            }
+            else if (complete)
+            {
+                horizon *= HorizonGrowth;
             }
 
-            if (complete) horizon *= HorizonGrowth;
-            else steps *= 2;
+            if (!complete) steps *= 2;
             region.Wrap(state);
         }
 
@@ -97,11 +98,9 @@ internal sealed class LongRun(
         int reached = orbits.CycleReachedBy(last, returns.SignedPeriod < 0);
         if (reached >= 0) return (RunOutcome.LimitCycle, reached, OnCycle(reached));
         if (rests.SpiralsIn(returns) is (int focus, string spiral)) return (RunOutcome.Rest, focus, spiral);
-        if (!(returns.Displacement <= (vainClosings < PatientClosings ? WorthClosing : WorthClosingLater))) return null;
-        vainClosings++;
+        if (!returns.NearlyCloses) return null;
         if (shooter.Close(last, returns.SignedPeriod, returns.Scale) is not ShotOrbit orbit) return null;
         (OrbitVerdict verdict, int index) = judge.Judge(orbit, returns.Scale);
-        if (verdict != OrbitVerdict.Nothing) vainClosings = 0;
         return verdict switch
         {
             OrbitVerdict.FamilyMember => (RunOutcome.ClosedOrbit, index, OnFamily(index)),

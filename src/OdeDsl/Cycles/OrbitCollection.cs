@@ -77,14 +77,14 @@ internal sealed class OrbitCollection(DynamicSystem system, SearchRegion region,
     public int FamilyOf(ShotOrbit orbit, OrbitTrace trace)
     {
         ImmutableArray<int> enclosed = Enclosed(orbit, trace);
-        return families.FindIndex(family => family.Matches(orbit.Winding, enclosed));
+        return families.FindIndex(family => family.Matches(orbit.ForwardWinding, enclosed));
     }
 
     /// <summary>Begins a family.</summary>
     /// <returns>Its index.</returns>
     public int AddFamily(ShotOrbit orbit, OrbitTrace trace, double secondMultiplierError, string evidence)
     {
-        families.Add(new Family(orbit.Winding, Enclosed(orbit, trace), secondMultiplierError, evidence));
+        families.Add(new Family(orbit.ForwardWinding, Enclosed(orbit, trace), secondMultiplierError, evidence));
         return families.Count - 1;
     }
 

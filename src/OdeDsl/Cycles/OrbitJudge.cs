@@ -32,7 +32,7 @@ internal sealed class OrbitJudge(
     private const double Collapsed = 0.02;
 
     /// <summary>Fractions of the period up to this one are tried as the minimal period.</summary>
-    private const int LongestMultiple = 16;
+    private const int LongestMultiple = 100;
 
     /// <summary>The orbit closes at a fraction of the period if it returns within this part of its extents.</summary>
     private const double FractionCloses = 1e-5;
@@ -75,7 +75,7 @@ internal sealed class OrbitJudge(
         TrivialMultiplierError = multipliers.TrivialError,
         MultiplierMethod = orbit.Slides ? MultiplierMethod.ReturnMapDifferences : MultiplierMethod.VariationalEquations,
         Stability = multipliers.Stability,
-        Winding = [.. orbit.Winding.Select(turns => orbit.SignedPeriod < 0 ? -turns : turns)],
+        Winding = [.. orbit.ForwardWinding],
         Minimum = trace.Minimum,
         Maximum = trace.Maximum,
         Residual = orbit.Residual,
@@ -120,7 +120,7 @@ internal sealed class OrbitJudge(
                 apart = Math.Max(apart, Math.Abs(region.Difference(i, state[i], orbit.State[i])) / trace.Scale[i]);
             if (!(apart <= FractionCloses)) continue;
             if (shooter.Close(orbit.State, orbit.SignedPeriod / multiple, trace.Scale) is ShotOrbit shorter && Trace(shorter) is OrbitTrace once)
-                return (shorter, once);
+                return Minimal(shorter, once);
         }
 
         return (orbit, trace);

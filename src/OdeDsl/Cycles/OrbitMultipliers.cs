@@ -20,6 +20,12 @@ internal sealed class OrbitMultipliers
     /// <summary>Multipliers are trusted to this many times the error seen in the trivial one.</summary>
     private const double ErrorMargin = 10;
 
+    /// <summary>
+    /// Beside a double cycle a residual r leaves a multiplier off by a few √r: the residual is quadratic in the distance from the cycle, the
+    /// multiplier's deviation from 1 linear.
+    /// </summary>
+    private const double DoubleCycleMargin = 50;
+
     /// <summary>A multiplier this close to 1 may belong to a family; the family's neighbours decide.</summary>
     private const double FamilyCandidate = 1e-4;
 
@@ -47,7 +53,7 @@ internal sealed class OrbitMultipliers
         // Backwards in time the monodromy matrix is the inverse.
         if (orbit.SignedPeriod < 0) (trivial, others) = (1 / trivial, Array.ConvertAll(others, static value => 1 / value));
         All = [trivial, .. others.OrderByDescending(Complex.Abs).ThenByDescending(static value => value.Imaginary)];
-        double slack = Math.Max(UnitFloor, ErrorMargin * TrivialError);
+        double slack = Math.Max(UnitFloor, Math.Max(ErrorMargin * TrivialError, DoubleCycleMargin * Math.Sqrt(orbit.Residual)));
         double largest = others.Length > 0 ? others.Max(Complex.Abs) : 0;
         Stability = largest < 1 - slack ? Stability.Stable : largest > 1 + slack ? Stability.Unstable : Stability.Undecided;
     }

@@ -12,8 +12,12 @@ namespace OdeDsl.Cycles;
 /// </summary>
 internal sealed class OrbitShooter(DynamicSystem system, SearchRegion region, double tolerance, CancellationToken cancellation)
 {
-    /// <summary>Quadratic convergence needs about five; a double cycle halves its error each time.</summary>
+    /// <summary>Quadratic convergence needs about five; a double cycle quarters its residual each time.</summary>
     private const int MaximumIterations = 20;
+
+    /// <summary>Corrections that leave more than this part of the residual are slow; few of them are made.</summary>
+    private const double SlowCorrection = 0.5;
+    private const int MaximumSlowCorrections = 3;
 
     /// <summary>Halvings of a correction before it is given up.</summary>
     private const int MaximumHalvings = 5;
@@ -60,11 +64,13 @@ internal sealed class OrbitShooter(DynamicSystem system, SearchRegion region, do
     {
         Attempts++;
         ShotOrbit? orbit = Shoot(guess.ToArray(), signedPeriod, scale);
-        for (int iteration = 0; iteration < MaximumIterations && orbit is not null; iteration++)
+        int slow = 0;
+        for (int iteration = 0; iteration < MaximumIterations && slow <= MaximumSlowCorrections && orbit is not null; iteration++)
         {
             bool closed = orbit.Residual <= ClosingMargin * tolerance;
             ShotOrbit? next = Correct(orbit, signedPeriod);
             if (closed) return next is not null && next.Residual < orbit.Residual ? next : orbit;
+            if (next?.Residual > SlowCorrection * orbit.Residual) slow++;
             orbit = next;
         }
 

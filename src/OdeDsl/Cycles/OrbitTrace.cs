@@ -7,7 +7,7 @@ namespace OdeDsl.Cycles;
 /// <summary>A closed orbit followed once round: where it lies, and the extrema of its states.</summary>
 internal sealed class OrbitTrace
 {
-    /// <summary>Samples of each integration step.</summary>
+    /// <summary>Samples of each integration step at least.</summary>
     private const int SamplesPerStep = 8;
 
     /// <summary>Bounds of a state's scale where the orbit hardly moves in it: parts of its value and of the region.</summary>
@@ -21,7 +21,7 @@ internal sealed class OrbitTrace
     {
         this.region = region;
         Run = run;
-        samples = Samples(run);
+        samples = Samples(run, region);
         int n = run.StateCount;
         var (minimum, maximum) = (new double[n], new double[n]);
         Scale = new double[n];
@@ -64,14 +64,15 @@ internal sealed class OrbitTrace
         return smallest;
     }
 
-    private static double[][] Samples(Trajectory run)
+    private static double[][] Samples(Trajectory run, SearchRegion region)
     {
         ReadOnlySpan<double> nodes = run.Times;
         var states = new List<double[]> { run.At(nodes[0]) };
         for (int k = 1; k < nodes.Length; k++)
         {
             double step = nodes[k] - nodes[k - 1];
-            for (int s = 1; s < SamplesPerStep; s++) states.Add(run.At(nodes[k - 1] + (step * s / SamplesPerStep)));
+            int parts = region.Cuts(run.StateAtNode(k - 1), run.StateAtNode(k), SamplesPerStep);
+            for (int s = 1; s < parts; s++) states.Add(run.At(nodes[k - 1] + (step * s / parts)));
             states.Add(run.At(nodes[k]));
         }
 

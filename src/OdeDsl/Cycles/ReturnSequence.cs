@@ -15,13 +15,19 @@ internal sealed class ReturnSequence
     /// <summary>Passages further from the section's point than this part of the orbit's extents are other strands.</summary>
     private const double Nearness = 0.3;
 
+    /// <summary>Closing is tried where the last return misses by less than this part of the orbit; later windows bring slow ones nearer.</summary>
+    private const double WorthClosing = 0.03;
+
+    /// <summary>Returns this good are as good as the long run's tolerance lets them be.</summary>
+    private const double Closed = 1e-5;
+
     /// <summary>A run that moves less than this part of the region does not oscillate visibly.</summary>
     private const double Still = 1e-7;
 
     /// <summary>Returns may close after this many passages of the section.</summary>
     private const int MaximumLag = 8;
 
-    /// <summary>Intervals of each step on which a passage is looked for.</summary>
+    /// <summary>Intervals of each step, at least, on which a passage is looked for.</summary>
     private const int IntervalsPerStep = 4;
 
     /// <summary>Bisections that locate a passage to rounding of the time.</summary>
@@ -61,6 +67,12 @@ internal sealed class ReturnSequence
 
     /// <summary>How far the last return is from the one <see cref="Lag"/> passages earlier, in parts of the extents.</summary>
     public double Displacement { get; private set; } = double.PositiveInfinity;
+
+    /// <summary>
+    /// Whether it is worth closing an orbit here: the run nearly repeats itself, and did not do so much better one passage earlier, as
+    /// irregular motion does when it leaves an unstable orbit that it met by chance.
+    /// </summary>
+    public bool NearlyCloses => Displacement <= WorthClosing && (Displacement <= Closed || Displacement <= LagPreference * EarlierDisplacement());
 
     /// <summary>The time between these two, signed like the run.</summary>
     public double SignedPeriod => Times[^1] - Times[^(1 + Lag)];
@@ -128,9 +140,10 @@ internal sealed class ReturnSequence
         double before = nodes[0], valueBefore = Value(run.StateAtNode(0));
         for (int k = 1; k < nodes.Length; k++)
         {
-            for (int s = 1; s <= IntervalsPerStep; s++)
+            int parts = region.Cuts(run.StateAtNode(k - 1), run.StateAtNode(k), IntervalsPerStep);
+            for (int s = 1; s <= parts; s++)
             {
-                double time = s == IntervalsPerStep ? nodes[k] : nodes[k - 1] + ((nodes[k] - nodes[k - 1]) * s / IntervalsPerStep);
+                double time = s == parts ? nodes[k] : nodes[k - 1] + ((nodes[k] - nodes[k - 1]) * s / parts);
                 double value = ValueAt(time);
                 if (valueBefore < 0 && value >= 0) AddIfNear(before, time);
                 (before, valueBefore) = (time, value);
@@ -162,6 +175,9 @@ internal sealed class ReturnSequence
         Lag = 1 + Array.FindIndex(displacements, displacement => displacement <= LagPreference * best);
         Displacement = displacements[Lag - 1];
     }
+
+    private double EarlierDisplacement() =>
+        States.Count > Lag + 1 ? Distance(States[^2], States[^(2 + Lag)]) : double.PositiveInfinity;
 
     private double ValueAt(double time)
     {

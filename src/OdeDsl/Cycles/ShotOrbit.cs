@@ -12,8 +12,11 @@ internal sealed record ShotOrbit
     /// <summary>The scale of each state: about the orbit's extent.</summary>
     public required double[] Scale { get; init; }
 
-    /// <summary>Whole turns of each angle.</summary>
+    /// <summary>Whole turns of each angle in <see cref="SignedPeriod"/>.</summary>
     public required int[] Winding { get; init; }
+
+    /// <summary>Whole turns of each angle in one period of time running forward.</summary>
+    public int[] ForwardWinding => SignedPeriod < 0 ? Array.ConvertAll(Winding, static turns => -turns) : Winding;
 
     /// <summary>The derivative of the state once round by the state, scaled, by rows.</summary>
     public required double[] Monodromy { get; init; }

@@ -25,6 +25,11 @@ internal sealed class SearchRegion
     /// <summary>The same where the model gives no bounds and the width is only a guess.</summary>
     private const double RunawayUnbounded = 1e4;
 
+    private const int PartsPerTurn = 8;
+
+    /// <summary>A step over more turns than this can follow is not resolved.</summary>
+    private const int MostCuts = 1000;
+
     private readonly double[] trueLower;
     private readonly double[] trueUpper;
     private readonly double[] period;
@@ -136,6 +141,18 @@ internal sealed class SearchRegion
         }
 
         return largest;
+    }
+
+    /// <summary>Into how many parts to cut a step so that no angle turns more than an eighth of its period in one.</summary>
+    public int Cuts(ReadOnlySpan<double> from, ReadOnlySpan<double> to, int fewest)
+    {
+        double turns = 0;
+        for (int i = 0; i < Count; i++)
+        {
+            if (period[i] > 0) turns = Math.Max(turns, Math.Abs(to[i] - from[i]) / period[i]);
+        }
+
+        return (int)Math.Clamp(PartsPerTurn * turns, fewest, MostCuts);
     }
 
     /// <summary>Whether a motion has left for good: angles never do.</summary>
