@@ -108,6 +108,8 @@ internal sealed class Motion
         guards.Section = section;
         if (section is { } watched) PlaceSection(watched, time, position[..system.StateCount]);
         Current.MaximumStep = options.MaximumStep ?? double.PositiveInfinity;
+        // Counters run on from one run to the next; the permission is for this run.
+        Current.MaximumAttempts = Statistics.AcceptedSteps + Statistics.RejectedSteps + options.MaximumSteps;
         Current.Begin(time, position, options.InitialStep ?? 0);
     }
 
@@ -296,16 +298,12 @@ internal sealed class Motion
         Stepper before = Current;
         Current = before == explicitStepper ? Implicit : Explicit;
         Current.Begin(before.EndTime, before.End, Math.Abs(before.Proposed));
-        Current.MaximumStep = before.MaximumStep;
+        (Current.MaximumStep, Current.MaximumAttempts) = (before.MaximumStep, before.MaximumAttempts);
         Statistics.MethodChanges++;
     }
 
-    private Stepper MakeStepper(IntegrationMethod method)
-    {
-        Stepper stepper = system.Apply(new StepperFactory(method, regime, sliding, tangentCount, norm, Statistics));
-        stepper.MaximumAttempts = options.MaximumSteps;
-        return stepper;
-    }
+    private Stepper MakeStepper(IntegrationMethod method) =>
+        system.Apply(new StepperFactory(method, regime, sliding, tangentCount, norm, Statistics));
 
     private static double Ulp(double value) => Math.BitIncrement(Math.Abs(value)) - Math.Abs(value);
 }
