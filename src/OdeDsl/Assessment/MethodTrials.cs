@@ -33,7 +33,7 @@ internal sealed class MethodTrials(DynamicSystem system, AssessmentOptions optio
     /// <param name="report">Receives the share done, 0 to 1.</param>
     public MethodAnswer Measure(double duration, Action<double> report)
     {
-        if (Reference(ref duration) is not { } reference) return NothingToMeasure(duration);
+        if (!(duration > 0) || Reference(ref duration) is not { } reference) return NothingToMeasure(duration);
         double[][] exact = reference.Sample(Samples);
         double[] ranges = Ranges(exact);
         double uncertainty = Uncertainty(duration, exact, ranges);
