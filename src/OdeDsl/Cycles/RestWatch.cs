@@ -42,8 +42,18 @@ internal sealed class RestWatch(DynamicSystem system, SearchRegion region, Immut
                 return (k, Invariant($"settles at equilibrium {k + 1}."));
         }
 
-        if (region.Distance(end, middle) <= Still) return Unlisted(end);
-        return null;
+        return IsStill(run, end) ? Unlisted(end) : null;
+    }
+
+    // All of the later half counts: a cycle that meets surfaces has steps that end at the very same places turn after turn.
+    private bool IsStill(Trajectory run, ReadOnlySpan<double> end)
+    {
+        for (int node = run.Times.Length / 2; node < run.Times.Length; node++)
+        {
+            if (!(region.Distance(end, run.StateAtNode(node)) <= Still)) return false;
+        }
+
+        return true;
     }
 
     /// <summary>

@@ -10,6 +10,11 @@ namespace OdeDsl.Integration;
 /// </summary>
 internal sealed class ErrorNorm
 {
+    /// <summary>
+    /// A tangent shorter than this, in extents, has died out: it needs no relative accuracy, and its tolerance must not underflow to zero.
+    /// </summary>
+    private const double ShortestTangent = 1e-250;
+
     private readonly int stateCount;
     private readonly int dimension;
     private readonly double[] extents;
@@ -96,8 +101,7 @@ internal sealed class ErrorNorm
         {
             double length = 0;
             for (int i = 0; i < stateCount; i++) length = Math.Max(length, Math.Abs(y[start + i]) / extents[i]);
-            // A zero tangent stays zero; any tolerance serves.
-            if (length == 0) length = 1 / extents[0];
+            length = Math.Max(length, ShortestTangent);
             for (int i = 0; i < stateCount; i++) Absolute[start + i] = Relative * length * extents[i];
         }
     }
