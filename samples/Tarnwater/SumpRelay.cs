@@ -50,7 +50,7 @@ public sealed partial class SumpRelay
     public partial double HighContact { get; set; }
 
     /// <summary>Time constant of the contactor.</summary>
-    [Parameter(0.5, Lower = 0.05, Upper = 20, Unit = "s")]
+    [Parameter(2, Lower = 0.05, Upper = 20, Unit = "s")]
     public partial double PullInTime { get; set; }
 
     /// <summary>Where contacts and latch draw the armature: 0 or 1.</summary>
