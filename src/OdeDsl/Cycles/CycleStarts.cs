@@ -14,6 +14,12 @@ internal static class CycleStarts
     /// <summary>Starts beside equilibria at most.</summary>
     private const int MostBesideEquilibria = 16;
 
+    /// <summary>Components of an eigenvector this small beside its largest are rounding.</summary>
+    private const double NegligibleComponent = 1e-12;
+
+    /// <summary>Starts further outside the region than this part of it are none: a negative concentration leads nowhere.</summary>
+    private const double Outside = 1e-12;
+
     /// <summary>The distance of starts beside a cycle, in parts of its extents.</summary>
     private const double BesideCycle = 0.05;
 
@@ -38,6 +44,7 @@ internal static class CycleStarts
     public static IEnumerable<double[]> BesideEquilibria(SearchRegion region, IEnumerable<Equilibrium> equilibria, int direction) =>
         equilibria.Where(equilibrium => equilibrium.Set is null && !equilibrium.IsSliding && Repels(equilibrium, direction))
             .SelectMany(equilibrium => Beside(region, equilibrium, direction))
+            .Where(start => region.Excess(start) <= Outside)
             .Take(MostBesideEquilibria);
 
     /// <summary>Starts on both sides of a cycle in the plane.</summary>
@@ -79,6 +86,9 @@ internal static class CycleStarts
         double size = vector.InfinityNorm();
         bool turns = modes.EigenValues[strongest].Imaginary != 0;
         foreach (double side in turns ? (double[])[Departure] : [-Departure, Departure])
-            yield return [.. equilibrium.State.Select((value, i) => value + (side * vector[i] / size * region.Width[i]))];
+            yield return [.. equilibrium.State.Select((value, i) => value + (side * Clean(vector[i] / size) * region.Width[i]))];
     }
+
+    // Components that are zero up to rounding would push a start off an invariant plane, to the wrong side as likely as not.
+    private static double Clean(double component) => Math.Abs(component) <= NegligibleComponent ? 0 : component;
 }

@@ -92,17 +92,22 @@ internal sealed class LimitCycleSearch
     private string Text()
     {
         var text = new StringBuilder();
-        int forward = runs.Count(static run => !run.IsReversed), backwards = runs.Count - forward;
-        text.Append(CultureInfo.InvariantCulture, $"{forward} long runs");
-        if (backwards > 0) text.Append(CultureInfo.InvariantCulture, $" and {backwards} in reversed time");
-        text.Append(": ").AppendJoin(", ", runs.GroupBy(static run => run.Outcome).OrderBy(static group => group.Key).Select(Count)).Append(". ");
+        text.Append(CultureInfo.InvariantCulture, $"{Outcomes("long runs", runs.Where(static run => !run.IsReversed))}. ");
+        if (runs.Exists(static run => run.IsReversed))
+            text.Append(CultureInfo.InvariantCulture, $"{Outcomes("runs in reversed time", runs.Where(static run => run.IsReversed))}. ");
         int stable = orbits.Cycles.Count(static found => found.Cycle.IsStable);
         if (orbits.Cycles.Count == 0) text.Append("No limit cycle was found. ");
-        else text.Append(CultureInfo.InvariantCulture, $"{orbits.Cycles.Count} limit cycles were found, {stable} of them stable. ");
+        else text.Append(CultureInfo.InvariantCulture, $"Limit cycles found: {orbits.Cycles.Count}, of them stable: {stable}. ");
         foreach (OrbitFamily family in orbits.Families)
             text.Append("Closed orbits form a continuous family, no limit cycle: ").Append(family.Evidence).Append(' ');
         text.Append("Cycles that none of these runs approaches may exist all the same");
         return text.Append(system.StateCount > 2 ? ", unstable ones above all." : ".").ToString();
+    }
+
+    private static string Outcomes(string what, IEnumerable<SearchRun> some)
+    {
+        IEnumerable<string> counts = some.GroupBy(static run => run.Outcome).OrderBy(static group => group.Key).Select(Count);
+        return string.Create(CultureInfo.InvariantCulture, $"{some.Count()} {what}: {string.Join(", ", counts)}");
     }
 
     private static string Count(IGrouping<RunOutcome, SearchRun> group)

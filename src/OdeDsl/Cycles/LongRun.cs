@@ -121,10 +121,11 @@ internal sealed class LongRun(
         }
     }
 
+    // The message's own time counts from the start of a window; the run's duration says more.
     private static SearchRun EndOfFailure(IntegrationException failure, Func<RunOutcome, int, string, SearchRun> end) =>
         failure.Reason is IntegrationFailure.StepTooSmall or IntegrationFailure.NotFinite
-            ? end(RunOutcome.Runaway, -1, "grows or leaves the domain of the equations until the integration fails: " + failure.Message)
-            : end(RunOutcome.Failed, -1, failure.Message);
+            ? end(RunOutcome.Runaway, -1, Invariant($"grows, or leaves the domain of the equations, until the integration fails ({failure.Reason})."))
+            : end(RunOutcome.Failed, -1, Invariant($"cannot be integrated further ({failure.Reason})."));
 
     // The norm of the Jacobian in scaled states.
     private double FastestRate(double[] state)

@@ -84,8 +84,15 @@ internal sealed class RestWatch(DynamicSystem system, SearchRegion region, Immut
         ? equilibrium.Stability == Stability.Stable || equilibrium.UnstableCount < equilibrium.Eigenvalues.Length
         : equilibrium.Stability == Stability.Unstable;
 
-    private (int Index, string Text)? Unlisted(ReadOnlySpan<double> end)
+    // Held still although nothing attracts there as far as is known.
+    private (int Index, string Text) Unlisted(ReadOnlySpan<double> end)
     {
+        for (int k = 0; k < equilibria.Length; k++)
+        {
+            if (DistanceTo(equilibria[k], end) <= Near)
+                return (k, Invariant($"stays at equilibrium {k + 1}, which repels other motions: this one started where it is attracted."));
+        }
+
         double[] refined = end.ToArray();
         bool vanishes = EquilibriumAnalysis.TryRefine(system, refined, out _) && region.Distance(refined, end) <= Near;
         return (-1, vanishes ? "settles at an equilibrium that the search had not found." : "stays at a state held by switching surfaces.");

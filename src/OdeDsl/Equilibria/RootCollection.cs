@@ -26,6 +26,7 @@ internal sealed class RootCollection(SearchRegion region)
     {
         Span<double> state = point.AsSpan(0, region.Count);
         region.Wrap(state);
+        region.Tidy(state);
         if (!problem.Accepts(point))
         {
             if (countLanding) Rejected++;

@@ -27,6 +27,9 @@ internal sealed class SearchRegion
 
     private const int PartsPerTurn = 8;
 
+    /// <summary>The accuracy of a root, in widths, that rounding allows at best.</summary>
+    private const double RoundingPart = 1e-15;
+
     /// <summary>A step over more turns than this can follow is not resolved.</summary>
     private const int MostCuts = 1000;
 
@@ -88,6 +91,18 @@ internal sealed class SearchRegion
             if (wrapped < trueLower[i] - slack) wrapped += p * Math.Ceiling((trueLower[i] - slack - wrapped) / p);
             else if (wrapped > trueUpper[i] + slack) wrapped -= p * Math.Ceiling((wrapped - trueUpper[i] - slack) / p);
             state[i] = wrapped;
+        }
+    }
+
+    /// <summary>Puts values that are zero or on a bound up to rounding exactly there.</summary>
+    public void Tidy(Span<double> state)
+    {
+        for (int i = 0; i < Count; i++)
+        {
+            double near = RoundingPart * Width[i];
+            if (Math.Abs(state[i] - trueLower[i]) <= near) state[i] = trueLower[i];
+            else if (Math.Abs(state[i] - trueUpper[i]) <= near) state[i] = trueUpper[i];
+            else if (Math.Abs(state[i]) <= near) state[i] = 0;
         }
     }
 

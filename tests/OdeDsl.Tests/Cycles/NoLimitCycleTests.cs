@@ -142,6 +142,19 @@ public class NoLimitCycleTests
     }
 
     [Fact]
+    public void Starts_lie_within_the_bounds_and_a_motion_held_at_a_saddle_is_said_to_be()
+    {
+        // Without predators prey grow: the run beside the origin along the prey's axis leaves; beside the origin along the predators' axis
+        // nothing repels. Negative numbers of animals are outside the bounds.
+        LimitCycleSearchResult found = new LotkaVolterra { Prey = 0, Predator = 2 }.FindLimitCycles(new LimitCycleSearchOptions { SpreadStarts = 2 });
+        Assert.All(found.Runs, run => Assert.All(run.Start, value => Assert.InRange(value, 0, 10)));
+        SearchRun first = found.Runs[0];
+        Assert.Equal(RunOutcome.Rest, first.Outcome);
+        Assert.Equal([0.0, 0.0], found.Equilibria[first.Index].State.AsSpan().ToArray());
+        Assert.Contains("repels", first.Text, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void A_single_state_that_is_no_angle_is_known_not_to_oscillate()
     {
         LimitCycleSearchResult found = new Equilibria.NoRest().FindLimitCycles();
