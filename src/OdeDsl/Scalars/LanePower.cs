@@ -50,7 +50,7 @@ internal static class LanePower
     }
 
     // With s = (m − 1) / (m + 1), |s| ≤ 0.172: ln m = 2 s + 2 s³/3 + 2 s⁵/5 + ... (Abramowitz and Stegun 1964, 4.1.27). The first two
-    // terms are carried in two doubles; the third is below 2e-4 of the sum, so its rounding adds 2⁻⁶⁵.
+    // terms are carried in two doubles; the third is below 2e-4 of the sum, so its rounding adds 2⁻⁶⁵ only.
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     private static (TLanes High, TLanes Low) Logarithm<TLanes>(TLanes x)
         where TLanes : struct, ILanes<TLanes>
@@ -81,7 +81,8 @@ internal static class LanePower
         TLanes factorLow = TLanes.FusedMultiplyAdd(TLanes.Constant(TwoThirds), square, -factor)
             + (TwoThirds * squareLow) + (TwoThirdsLow * square);
         TLanes cubic = s * factor;
-        TLanes cubicLow = TLanes.FusedMultiplyAdd(s, factor, -cubic) + (s * factorLow) + (sLow * factor) + (s * ((square * square) * tail));
+        TLanes cubicLow = TLanes.FusedMultiplyAdd(s, factor, -cubic)
+            + (s * factorLow) + (sLow * factor) + (s * ((square * square) * tail));
 
         // exponent ln 2 + 2 s + cubic, largest first, each sum with its rounding.
         (TLanes sum, TLanes sumLow) = FastTwoSum(2.0 * s, cubic);
