@@ -5,9 +5,24 @@ using System.Threading;
 namespace OdeDsl.Generators.Algebra;
 
 /// <summary>The derivatives of a list of expressions, by states, parameters, time, or along a direction in state space.</summary>
-internal sealed class DerivativeTable(ExpressionGraph graph, IReadOnlyList<int> roots)
+internal sealed class DerivativeTable
 {
-    private readonly Differentiator _differentiator = new(graph, roots);
+    private readonly ExpressionGraph _graph;
+    private readonly IReadOnlyList<int> _roots;
+    private readonly Differentiator _differentiator;
+    private readonly Dictionary<int, List<int>> _rowsOf = [];
+
+    public DerivativeTable(ExpressionGraph graph, IReadOnlyList<int> roots)
+    {
+        _graph = graph;
+        _roots = roots;
+        _differentiator = new Differentiator(graph, roots);
+        for (int row = 0; row < roots.Count; row++)
+        {
+            if (!_rowsOf.TryGetValue(roots[row], out List<int>? rows)) _rowsOf.Add(roots[row], rows = []);
+            rows.Add(row);
+        }
+    }
 
     /// <summary>The matrix of derivatives by all states or by all parameters.</summary>
     public SparseMatrix By(Operator leaf, int count, CancellationToken cancellationToken)
@@ -15,27 +30,28 @@ internal sealed class DerivativeTable(ExpressionGraph graph, IReadOnlyList<int> 
         List<MatrixEntry> entries = [];
         for (int column = 0; column < count; column++)
         {
-            Dictionary<int, int> derivatives = _differentiator.Along([new(graph.Leaf(leaf, column), _differentiator.One)], cancellationToken);
-            for (int row = 0; row < roots.Count; row++)
+            Dictionary<int, int> derivatives = _differentiator.Along([new(_graph.Leaf(leaf, column), _differentiator.One)], cancellationToken);
+            foreach (KeyValuePair<int, int> derivative in derivatives)
             {
-                if (derivatives.TryGetValue(roots[row], out int derivative)) entries.Add(new MatrixEntry(row, column, derivative));
+                if (!_rowsOf.TryGetValue(derivative.Key, out List<int>? rows)) continue;
+                entries.AddRange(rows.Select(row => new MatrixEntry(row, column, derivative.Value)));
             }
         }
 
-        return new SparseMatrix(roots.Count, count, [.. entries.OrderBy(static entry => entry.Row).ThenBy(static entry => entry.Column)]);
+        return new SparseMatrix(_roots.Count, count, [.. entries.OrderBy(static entry => entry.Row).ThenBy(static entry => entry.Column)]);
     }
 
     public int[] ByTime(CancellationToken cancellationToken) =>
-        Along([new(graph.Leaf(Operator.Time), _differentiator.One)], cancellationToken);
+        Along([new(_graph.Leaf(Operator.Time), _differentiator.One)], cancellationToken);
 
     public int[] AlongDirection(int stateCount, CancellationToken cancellationToken) => Along(
         [.. Enumerable.Range(0, stateCount).Select(
-            i => new KeyValuePair<int, int>(graph.Leaf(Operator.State, i), graph.Leaf(Operator.Direction, i)))],
+            i => new KeyValuePair<int, int>(_graph.Leaf(Operator.State, i), _graph.Leaf(Operator.Direction, i)))],
         cancellationToken);
 
     private int[] Along(KeyValuePair<int, int>[] seeds, CancellationToken cancellationToken)
     {
         Dictionary<int, int> derivatives = _differentiator.Along(seeds, cancellationToken);
-        return [.. roots.Select(root => derivatives.TryGetValue(root, out int derivative) ? derivative : _differentiator.Zero)];
+        return [.. _roots.Select(root => derivatives.TryGetValue(root, out int derivative) ? derivative : _differentiator.Zero)];
     }
 }

@@ -44,7 +44,8 @@ internal sealed class Simplifier(ExpressionGraph graph)
         Node node = graph[a];
         if (node.Operator == Operator.Constant) return graph.Constant(IsZero(a) ? 0.0 : -node.Constant);
         if (node.Operator == Operator.Negate) return node.First;
-        if (node.Operator == Operator.Subtract) return graph.Binary(Operator.Subtract, node.Second, node.First);
+        if (node.Operator == Operator.Subtract && graph.Contains(new Node(Operator.Subtract, node.Second, node.First, -1, 0)))
+            return graph.Binary(Operator.Subtract, node.Second, node.First);
         if (node.Operator is Operator.Multiply && Is(node.First, Operator.Constant))
             return Multiply(graph.Constant(-graph[node.First].Constant), node.Second);
         return graph.Unary(Operator.Negate, a);
@@ -72,6 +73,12 @@ internal sealed class Simplifier(ExpressionGraph graph)
         if (Is(b, Operator.Constant) && graph[b].Constant == 1.0) return a;
         if (Is(a, Operator.Negate)) return Negate(Divide(graph[a].First, b));
         if (Is(b, Operator.Negate)) return Negate(Divide(a, graph[b].First));
+        if (IsScaled(a) && IsScaled(b) && IsSafe(graph[graph[a].First].Constant / graph[graph[b].First].Constant))
+        {
+            double factor = graph[graph[a].First].Constant / graph[graph[b].First].Constant;
+            return Divide(Scale(graph.Constant(factor), graph[a].Second), graph[b].Second);
+        }
+
         return graph.Binary(Operator.Divide, a, b);
     }
 

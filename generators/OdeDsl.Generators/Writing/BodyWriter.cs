@@ -96,7 +96,7 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
         WriteSlices(quantity, [.. part.Leaves.Select(index => quantity.Graph[index])]);
         if (part.ScratchLength > 0) writer.Line($"scratch = scratch[..{Literals.Integer(part.ScratchLength)}];");
         if (isWhole && quantity.Results.Count < quantity.Length) writer.Line($"{quantity.Target}.Clear();");
-        NameScope scope = names.NewScope();
+        NameScope scope = ModelNames.NewScopeOfArguments();
         Dictionary<int, string> known = [];
         foreach (KeyValuePair<int, int> slot in part.Loads)
         {

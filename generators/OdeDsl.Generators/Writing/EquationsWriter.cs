@@ -13,6 +13,9 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
     private static readonly string[] Point = ["state", "parameters"];
     private static readonly string[] LockedPoint = ["state", "parameters", "regime"];
 
+    /// <summary>Entries up to which the dense state Jacobian is printed on its own, about the size of a method.</summary>
+    private const int LargestDenseEntryCount = 400;
+
     private readonly SwitchTexts _texts = new(model, equations);
 
     private readonly BodyWriter _body = new(
@@ -39,8 +42,7 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
             Member(new Quantity("Rates", LockedPoint, "rates", model.States.Count, equations.Locked, Rates(equations.LockedRates)));
         else
             WriteUnlockedRates();
-        Member(Matrix("StateJacobian", "jacobian", equations.StateJacobian, dense: true));
-        Member(Matrix("StateJacobianValues", "values", equations.StateJacobian, dense: false));
+        WriteStateJacobian();
         Member(Matrix("ParameterJacobian", "jacobian", equations.ParameterJacobian, dense: true));
         Member(Vector("TimeDerivative", LockedPoint, "derivative", equations.TimeDerivative));
         Member(Vector("JacobianVectorProduct", [.. LockedPoint, "direction"], "product", equations.JacobianVectorProduct));
@@ -56,6 +58,28 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
         writer.Line("/// <inheritdoc/>");
         writer.Line("/// <remarks>No condition of this model changes during a run: the regime is empty and not read.</remarks>");
         writer.Line($"public static void Rates({Signatures.Parameters(locked)}) => Rates(time, state, parameters, rates);");
+    }
+
+    /// <summary>The dense form of a large Jacobian is spread out from its entries: twice the code would cost more than that pass.</summary>
+    private void WriteStateJacobian()
+    {
+        Quantity dense = Matrix("StateJacobian", "jacobian", equations.StateJacobian, dense: true);
+        if (equations.StateJacobian.Entries.Count <= LargestDenseEntryCount)
+        {
+            Member(dense);
+        }
+        else
+        {
+            int length = equations.StateJacobian.Entries.Count;
+            writer.Line();
+            writer.Line("/// <inheritdoc/>");
+            writer.Open($"public static void StateJacobian({Signatures.Parameters(dense)})");
+            writer.Line($"StateJacobianValues(time, state, parameters, regime, jacobian[..{Literals.Integer(length)}]);");
+            writer.Line("Description.StateSparsity.Expand(jacobian);");
+            writer.Close();
+        }
+
+        Member(Matrix("StateJacobianValues", "values", equations.StateJacobian, dense: false));
     }
 
     private void WriteSwitching()

@@ -54,8 +54,11 @@ internal sealed class ModelNames
         _ => "time",
     };
 
-    /// <summary>A scope for the further locals of one method.</summary>
+    /// <summary>A scope for the further locals of a method that reads the model's numbers into locals.</summary>
     public NameScope NewScope() => new(_taken);
+
+    /// <summary>A scope for the locals of a method that only has its arguments.</summary>
+    public static NameScope NewScopeOfArguments() => new(Arguments);
 
     private string Claim(NameScope scope, string wanted)
     {

@@ -59,4 +59,32 @@ public sealed class SparsityPattern
 
         return false;
     }
+
+    /// <summary>Spreads the values of the entries over the whole matrix, in place and without allocation.</summary>
+    /// <param name="matrix">
+    /// On entry <see cref="EntryCount"/> values at the front, in the order of the pattern; on return rows × columns values by rows, zeros
+    /// included. What lies behind is left alone.
+    /// </param>
+    /// <exception cref="ArgumentOutOfRangeException">The vector is shorter than rows × columns.</exception>
+    public void Expand(Span<double> matrix)
+    {
+        matrix = matrix[..checked(RowCount * ColumnCount)];
+        ReadOnlySpan<int> starts = RowStarts.AsSpan(), columns = Columns.AsSpan();
+        int end = matrix.Length;
+
+        // From the back: an entry's place in the matrix is never before its place in the list, so nothing unread is overwritten.
+        for (int row = RowCount - 1; row >= 0; row--)
+        {
+            for (int entry = starts[row + 1] - 1; entry >= starts[row]; entry--)
+            {
+                int place = (row * ColumnCount) + columns[entry];
+                double value = matrix[entry];
+                matrix[(place + 1)..end].Clear();
+                matrix[place] = value;
+                end = place;
+            }
+        }
+
+        matrix[..end].Clear();
+    }
 }
