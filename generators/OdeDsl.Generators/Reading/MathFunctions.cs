@@ -95,5 +95,5 @@ internal static class MathFunctions
 
     /// <summary>Whether a function has a kink or a jump, so that its place must be named to people.</summary>
     public static bool HasKink(Operator operation) =>
-        operation is Operator.IEEERemainder or (>= Operator.Abs and <= Operator.RoundAwayFromZero);
+        operation is Operator.CopySign or Operator.IEEERemainder or (>= Operator.Abs and <= Operator.RoundAwayFromZero);
 }

@@ -21,7 +21,7 @@ internal static class ModelWriter
             writer.Line();
         }
 
-        NameScope members = new(model.TakenNames.Concat(model.Type.Types.Select(static type => type.Name.TrimStart('@'))));
+        NameScope members = new(model.TakenNames.Concat(model.Type.Types.SelectMany(NamesOf)));
         string equationsName = members.Claim("Equations");
         string modelName = FullName(model.Type);
         ModelMembersWriter memberWriter = new(writer, model, members);
@@ -49,6 +49,10 @@ internal static class ModelWriter
         #pragma warning disable CS0612, CS0618
 
         """;
+
+    /// <summary>The names that a type declaration itself takes: its own and those of its type parameters.</summary>
+    private static IEnumerable<string> NamesOf(TypeLink type) =>
+        type.TypeParameters.Split('<', '>', ',').Append(type.Name).Select(static name => name.Trim().TrimStart('@'));
 
     private static string FullName(TypeChain chain) =>
         "global::" + (chain.Namespace.Length > 0 ? chain.Namespace + "." : "")

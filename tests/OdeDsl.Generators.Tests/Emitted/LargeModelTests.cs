@@ -27,7 +27,7 @@ public sealed class LargeModelTests
 
         double[] jacobian = emitted.Calls.StateJacobian(0, state, parameters, regime);
         double[] product = emitted.Calls.JacobianVectorProduct(0, state, parameters, regime, state);
-        Assert.Equal(3 * count + count, emitted.Calls.Description.StateSparsity.EntryCount, 3 * count * 0.1);
+        Assert.InRange(emitted.Calls.Description.StateSparsity.EntryCount, 3 * count, 4 * count); // itself, two neighbours, one far
         DualInterpreter along = new(graph, values, node => node.Operator == Operator.State ? state[node.Index] : 0);
         for (int row = 0; row < count; row++) Close(along[model.States[row].Rate], product[row]);
         for (int column = 0; column < count; column++)

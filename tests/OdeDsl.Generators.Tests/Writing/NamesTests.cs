@@ -11,7 +11,7 @@ public sealed class NamesTests
     private static readonly string[] Awkward =
     [
         "rates", "State", "state", "Level", "level", "Level2", "time", "Math", "System", "global", "double", "class", "field", "value", "V1", "v1",
-        "Scratch", "regime", "Jacobian", "Side0", "LevelRate", "Equations2", "var", "yield", "await", "when", "Überdruck", "名",
+        "Scratch", "regime", "Jacobian", "Side0", "LevelRate", "Equations2", "_level", "var", "yield", "await", "when", "Überdruck", "名",
     ];
 
     [Fact]
