@@ -1,0 +1,42 @@
+using System.Reflection;
+using System.Runtime.Loader;
+using System.Text.RegularExpressions;
+using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.CSharp;
+using OdeDsl.Generators.Tests.Harness;
+
+namespace OdeDsl.Generators.Tests.Docs;
+
+/// <summary>The code that the README shows compiles as it stands, and runs.</summary>
+public sealed partial class ReadmeTests
+{
+    [Fact]
+    public void The_code_of_the_readme_compiles_without_a_warning_and_runs()
+    {
+        string readme = File.ReadAllText(Path.Combine(Root(), "README.md")).ReplaceLineEndings("\n");
+        string[] blocks = [.. CodeBlock().Matches(readme).Select(static match => match.Groups[1].Value)];
+        Assert.Equal(2, blocks.Length);
+
+        // What a new console project brings along: System, and the second block as its program.
+        CSharpCompilation program = Compiling.Compile("global using System;", blocks[0], "using OdeDsl;\n" + blocks[1])
+            .WithOptions(new(OutputKind.ConsoleApplication, nullableContextOptions: NullableContextOptions.Enable));
+        GeneratorRun run = Compiling.Run(program).WithoutProblems();
+        Assert.DoesNotContain(run.Output.GetDiagnostics(), static diagnostic => diagnostic.Severity >= DiagnosticSeverity.Warning);
+
+        using MemoryStream image = new();
+        Assert.True(run.Output.Emit(image).Success);
+        image.Position = 0;
+        Assembly assembly = new AssemblyLoadContext(null, isCollectible: true).LoadFromStream(image);
+        assembly.EntryPoint!.Invoke(null, [Array.Empty<string>()]);
+    }
+
+    [GeneratedRegex("```csharp\n(.*?)```", RegexOptions.Singleline)]
+    private static partial Regex CodeBlock();
+
+    private static string Root()
+    {
+        string? folder = AppContext.BaseDirectory;
+        while (folder is not null && !File.Exists(Path.Combine(folder, "OdeDsl.sln"))) folder = Path.GetDirectoryName(folder);
+        return folder ?? throw new InvalidOperationException("The repository is not found above the tests.");
+    }
+}
