@@ -65,14 +65,14 @@ public sealed partial class SludgeBasin
 
     private double Digestion => BacteriaGrowth * Feed / (BacteriaHalfFeed + Feed) * Bacteria;
 
-    private double Grazing => CiliateGrowth * Bacteria / (CiliateHalfFood + Bacteria) * Ciliates;
+    private double Uptake => CiliateGrowth * Bacteria / (CiliateHalfFood + Bacteria) * Ciliates;
 
     [Rate(nameof(Feed))]
     private double FeedRate => Dilution * (InflowFeed - Feed) - Digestion / BacteriaYield;
 
     [Rate(nameof(Bacteria))]
-    private double BacteriaRate => Digestion - Grazing / CiliateYield - Dilution * Bacteria;
+    private double BacteriaRate => Digestion - Uptake / CiliateYield - Dilution * Bacteria;
 
     [Rate(nameof(Ciliates))]
-    private double CiliatesRate => Grazing - Dilution * Ciliates;
+    private double CiliatesRate => Uptake - Dilution * Ciliates;
 }

@@ -48,8 +48,8 @@ internal static class ModelSection
             string time = description.TimeUnit;
             Page.Table(
                 markup,
-                "Rests, with the slowest mode of the motion about them",
-                ["Rest", "Kind", .. description.States.Select(static state => "#" + UnitText.Labelled(state.Name, state.Unit)), "#" + UnitText.Labelled("Time constant", time), "#" + UnitText.Labelled("Period", time), "#Damping ratio", "#Largest rate left"],
+                "Rests, with the leading mode of the motion about each: the fastest to grow, or else the slowest to decay",
+                ["Rest", "Kind", .. description.States.Select(static state => "#" + UnitText.Labelled(state.Name, state.Unit)), "#" + UnitText.Labelled("Changes by e in", time), "#" + UnitText.Labelled("Period", time), "#Damping ratio", "#Largest rate left"],
                 assessment.Rests.Equilibria.Select((rest, i) => RestRow(rest, i)));
         }
 
@@ -58,13 +58,13 @@ internal static class ModelSection
 
     private static IReadOnlyList<string> RestRow(Equilibrium rest, int index)
     {
-        LinearMode? mode = rest.Modes.FirstOrDefault();
+        LinearMode? mode = rest.LeadingMode;
         return
         [
             Words.Rest(index),
             Words.Kind(rest),
             .. rest.State.Select(static value => NumberText.Format(value)),
-            mode is null ? "–" : NumberText.Format(mode.TimeConstant, 3),
+            Words.FactorTime(mode, static value => NumberText.Format(value, 3)),
             mode is { Oscillates: true } ? NumberText.Format(mode.Period, 3) : "–",
             mode is { Oscillates: true } ? NumberText.Format(mode.DampingRatio, 3) : "–",
             NumberText.Format(rest.Residual, 2),

@@ -43,9 +43,9 @@ internal static class MotionsPart
     private static string Range(LimitCycle cycle, StateDescription state, int index)
     {
         bool turns = state.AnglePeriod is not null && cycle.Winding[index] != 0;
-        return turns
-            ? Words.Count(Math.Abs(cycle.Winding[index]), "turn") + (cycle.Winding[index] < 0 ? " backwards" : "")
-            : $"{NumberText.Format(cycle.Minimum[index])} … {NumberText.Format(cycle.Maximum[index])}";
+        if (turns) return Words.Count(Math.Abs(cycle.Winding[index]), "turn") + (cycle.Winding[index] < 0 ? " backwards" : "");
+        (double minimum, double maximum) = NumberText.WithoutNoise(cycle.Minimum[index], cycle.Maximum[index]);
+        return $"{NumberText.Format(minimum)} … {NumberText.Format(maximum)}";
     }
 
     private static string LargestMultiplier(LimitCycle cycle) =>

@@ -62,7 +62,7 @@ internal sealed class AssessmentPrinter
     private static Table Rests(ModelAssessment assessment)
     {
         ModelDescription description = assessment.Description;
-        Table table = Grid(["Rest", "Kind", .. description.States.Select(static state => Heading(state.Name, state.Unit)), Heading("Time constant", description.TimeUnit)]);
+        Table table = Grid(["Rest", "Kind", .. description.States.Select(static state => Heading(state.Name, state.Unit)), Heading("Changes by e in", description.TimeUnit)]);
         foreach ((int index, Equilibrium rest) in assessment.Rests.Equilibria.Index())
         {
             Add(
@@ -71,7 +71,7 @@ internal sealed class AssessmentPrinter
                     Words.Rest(index),
                     Words.Kind(rest),
                     .. rest.State.Select(static value => NumberText.Plain(value)),
-                    rest.Modes.IsEmpty ? "-" : NumberText.Plain(rest.Modes[0].TimeConstant),
+                    Words.FactorTime(rest.LeadingMode, static value => NumberText.Plain(value)),
                 ]);
         }
 
@@ -92,12 +92,14 @@ internal sealed class AssessmentPrinter
                     NumberText.Plain(cycle.Period, 6),
                     .. description.States.Select((_, i) => cycle.Winding[i] != 0
                         ? string.Create(CultureInfo.InvariantCulture, $"{cycle.Winding[i]:+0;-0} turns")
-                        : $"{NumberText.Plain(cycle.Minimum[i])} to {NumberText.Plain(cycle.Maximum[i])}"),
+                        : Range(NumberText.WithoutNoise(cycle.Minimum[i], cycle.Maximum[i]))),
                 ]);
         }
 
         return table;
     }
+
+    private static string Range((double Minimum, double Maximum) ends) => $"{NumberText.Plain(ends.Minimum)} to {NumberText.Plain(ends.Maximum)}";
 
     private static Table Margins(MarginsAnswer margins)
     {

@@ -12,6 +12,9 @@ internal static class NumberText
     private const double SmallestPositional = 1e-3;
     private const double LargestPositional = 1e5;
 
+    // Ends of ranges come from integration: below this part of the range they tell nothing.
+    private const double NoisePart = 1e-9;
+
     private const string Superscripts = "⁰¹²³⁴⁵⁶⁷⁸⁹";
 
     /// <summary>A number with a true minus sign and powers of ten, for HTML and figures.</summary>
@@ -49,6 +52,13 @@ internal static class NumberText
     /// <summary>A number with its unit in plain letters, for the console.</summary>
     public static string PlainWith(double value, string unit, int digits = Digits) =>
         unit is "" or "1" ? Plain(value, digits) : Plain(value, digits) + " " + unit;
+
+    /// <summary>The ends of a range, without the rounding noise of an end that is zero beside the other.</summary>
+    public static (double Minimum, double Maximum) WithoutNoise(double minimum, double maximum)
+    {
+        double noise = NoisePart * (maximum - minimum);
+        return (Math.Abs(minimum) <= noise ? 0 : minimum, Math.Abs(maximum) <= noise ? 0 : maximum);
+    }
 
     /// <summary>A whole number raised, for exponents.</summary>
     public static string Superscript(int value)

@@ -37,6 +37,16 @@ internal static class Words
         return rest.Set is { } set ? $"{text}, one of a continuum of dimension {set.Dimension}" : text;
     }
 
+    /// <summary>The time in which a mode changes by the factor e, told apart by the direction of the change.</summary>
+    /// <param name="mode">The mode, or <see langword="null"/> if there is none.</param>
+    /// <param name="format">How numbers are written.</param>
+    public static string FactorTime(LinearMode? mode, Func<double, string> format) => mode switch
+    {
+        null => "–",
+        { TimeConstant: >= 0 } => format(mode.TimeConstant),
+        _ => format(-mode.TimeConstant) + ", growing",
+    };
+
     public static string Of(Stability stability) => stability switch
     {
         Stability.Stable => "stable",

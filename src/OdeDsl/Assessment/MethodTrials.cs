@@ -61,7 +61,7 @@ internal sealed class MethodTrials(DynamicSystem system, AssessmentOptions optio
             Duration = duration,
             Reference = string.Create(
                 CultureInfo.InvariantCulture,
-                $"the same motion at the relative tolerance {ReferenceTolerance:G1}; a second method at {CheckTolerance:G1} agrees with it to {uncertainty:E1} of each state's range"),
+                $"the same motion at the relative tolerance {ReferenceTolerance:0E-0}; a second method at {CheckTolerance:0E-0} agrees with it to {uncertainty:0.0E-0} of each state's range"),
             Measurements = measurements,
         };
     }
@@ -207,12 +207,12 @@ internal sealed class MethodTrials(DynamicSystem system, AssessmentOptions optio
             double smallest = measurements.Select(static measurement => measurement.Error).Where(double.IsFinite).DefaultIfEmpty(double.NaN).Min();
             return string.Create(
                 CultureInfo.InvariantCulture,
-                $"No method reached the error {options.WantedError:G2} at the tolerances tried; the smallest error was {smallest:E1}. Ask for tighter tolerances, or for less accuracy.");
+                $"No method reached the error {options.WantedError:G2} at the tolerances tried; the smallest error was {smallest:0.0E-0}. Ask for tighter tolerances, or for less accuracy.");
         }
 
         string chosen = string.Create(
             CultureInfo.InvariantCulture,
-            $"{best.Method} at the relative tolerance {best.RelativeTolerance:G1} is the cheapest setting tried with an error below {options.WantedError:G2}: error {best.Error:E1} of each state's range, {best.Statistics!.AcceptedSteps} steps, {best.Statistics.RateEvaluations} evaluations, work {best.Work:F0}.");
+            $"{best.Method} at the relative tolerance {best.RelativeTolerance:0E-0} is the cheapest setting tried with an error below {options.WantedError:G2}: error {best.Error:0.0E-0} of each state's range, {best.Statistics!.AcceptedSteps} steps, {best.Statistics.RateEvaluations} evaluations, work {best.Work:F0}.");
         MethodMeasurement? other = measurements
             .Where(measurement => measurement.Method != best.Method && measurement.Error <= options.WantedError)
             .MinBy(static measurement => measurement.Work);
@@ -220,7 +220,7 @@ internal sealed class MethodTrials(DynamicSystem system, AssessmentOptions optio
             ? chosen + " No other method reached that error."
             : chosen + string.Create(
                 CultureInfo.InvariantCulture,
-                $" The next, {other.Method} at {other.RelativeTolerance:G1}, takes {other.Work / best.Work:F1} times the work.");
+                $" The next, {other.Method} at {other.RelativeTolerance:0E-0}, takes {other.Work / best.Work:F1} times the work.");
     }
 
     private string TimingRemark(MethodMeasurement? best, List<MethodMeasurement> measurements)
@@ -229,6 +229,6 @@ internal sealed class MethodTrials(DynamicSystem system, AssessmentOptions optio
         MethodMeasurement fastest = measurements.Where(measurement => measurement.Error <= options.WantedError).MinBy(static m => m.WallTime)!;
         return string.Create(
             CultureInfo.InvariantCulture,
-            $"Measured here: {time.TotalMilliseconds:G3} ms and {best.AllocatedBytes / 1024.0:F0} KiB a run; the fastest accurate setting was {fastest.Method} at {fastest.RelativeTolerance:G1} with {fastest.WallTime!.Value.TotalMilliseconds:G3} ms.");
+            $"Measured here: {time.TotalMilliseconds:G3} ms and {best.AllocatedBytes / 1024.0:F0} KiB a run; the fastest accurate setting was {fastest.Method} at {fastest.RelativeTolerance:0E-0} with {fastest.WallTime!.Value.TotalMilliseconds:G3} ms.");
     }
 }

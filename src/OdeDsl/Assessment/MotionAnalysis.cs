@@ -184,7 +184,7 @@ internal sealed class MotionAnalysis(
             : "";
         return string.Create(
             CultureInfo.InvariantCulture,
-            $"{AttractorNames.Rest(index)} is a {rest.Stability.ToString().ToLowerInvariant()} {rest.Kind.ToString().ToLowerInvariant()}{slowest}, residual {rest.Residual:E1}.");
+            $"{AttractorNames.Rest(index)} is a {rest.Stability.ToString().ToLowerInvariant()} {rest.Kind.ToString().ToLowerInvariant()}{slowest}, residual {rest.Residual:0.0E-0}.");
     }
 
     private static string CycleEvidence(LimitCycle cycle)
@@ -194,7 +194,7 @@ internal sealed class MotionAnalysis(
             : "no multiplier but the trivial one";
         return string.Create(
             CultureInfo.InvariantCulture,
-            $"Closed to {cycle.Residual:E1} of its extent; {largest}, the trivial one off by {cycle.TrivialMultiplierError:E1}.");
+            $"Closed to {cycle.Residual:0.0E-0} of its extent; {largest}, the trivial one off by {cycle.TrivialMultiplierError:0.0E-0}.");
     }
 
     private static Outcome[] Outcomes(SearchRun[] sampled, LimitCycleSearchResult search, bool allIrregular) =>

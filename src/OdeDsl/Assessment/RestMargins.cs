@@ -97,7 +97,7 @@ internal sealed class RestMargins(DynamicSystem system, ImmutableArray<Equilibri
         // Seen along the branch stability may be lost while, seen from the present value outward, it is gained.
         bool loses = losesOnTheWay == outward;
         string evidence = string.Create(
-            CultureInfo.InvariantCulture, $"{point.Evidence} (residual {point.Residual:E1}, condition {point.Condition:E1})");
+            CultureInfo.InvariantCulture, $"{point.Evidence} (residual {point.Residual:0.0E-0}, condition {point.Condition:0.0E-0})");
         return point.Kind switch
         {
             SpecialPointKind.Fold => new MarginCandidate(

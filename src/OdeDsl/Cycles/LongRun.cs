@@ -151,7 +151,7 @@ internal sealed class LongRun(
     }
 
     private static string UnsettledText(double displacement) => double.IsFinite(displacement)
-        ? Invariant($"has not settled within the allowed steps; its best return misses by {displacement:e1} of its extent and does not close there.")
+        ? Invariant($"has not settled within the allowed steps; its best return misses by {displacement:0.0E-0} of its extent and does not close there.")
         : "has not settled within the allowed steps and does not return.";
 
     private static string Invariant(FormattableString text) => text.ToString(CultureInfo.InvariantCulture);

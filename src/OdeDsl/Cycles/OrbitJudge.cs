@@ -152,7 +152,7 @@ internal sealed class OrbitJudge(
             ", ", neighbours.Select(static beside => Math.Abs(beside.Orbit.SignedPeriod).ToString("g8", CultureInfo.InvariantCulture)));
         string evidence = string.Create(
             CultureInfo.InvariantCulture,
-            $"The orbit of period {Math.Abs(orbit.SignedPeriod):g8} has a second multiplier within {error:e1} of 1, and {neighbours.Count} neighbours up to 5 % of its size away close as well, with periods {periods}.");
+            $"The orbit of period {Math.Abs(orbit.SignedPeriod):g8} has a second multiplier within {error:0.0E-0} of 1, and {neighbours.Count} neighbours up to 5 % of its size away close as well, with periods {periods}.");
         int family = orbits.AddFamily(orbit, trace, error, evidence);
         orbits.AddMember(family, orbit, trace);
         foreach ((ShotOrbit neighbour, OrbitTrace beside) in neighbours) orbits.AddMember(family, neighbour, beside);

@@ -26,6 +26,12 @@ public sealed record Equilibrium
     /// <summary>The modes, slowest first: one for each real eigenvalue and one for each complex pair.</summary>
     public required ImmutableArray<LinearMode> Modes { get; init; }
 
+    /// <summary>
+    /// The mode that outlives the others: of all eigenvalues the one with the largest real part, so the fastest to grow if one grows, and
+    /// the slowest to decay otherwise; <see langword="null"/> if there is no mode.
+    /// </summary>
+    public LinearMode? LeadingMode => Modes.MaxBy(static mode => mode.Eigenvalue.Real);
+
     /// <summary>How the linearised motion looks.</summary>
     public required EquilibriumKind Kind { get; init; }
 
