@@ -22,7 +22,7 @@ public sealed class ModelGenerator : IIncrementalGenerator
     public void Initialize(IncrementalGeneratorInitializationContext context)
     {
         IncrementalValuesProvider<ModelReading> readings = context.SyntaxProvider
-            .ForAttributeWithMetadataName(Attributes.ModelName, static (node, _) => IsClass(node), static (marked, cancellation) => Read(marked, cancellation))
+            .ForAttributeWithMetadataName(Attributes.ModelFullName, static (node, _) => IsClass(node), Read)
             .WithTrackingName(StepNames.Reading);
 
         IncrementalValuesProvider<ModelDefinition> models = readings
@@ -44,7 +44,8 @@ public sealed class ModelGenerator : IIncrementalGenerator
     private static ModelReading Read(GeneratorAttributeSyntaxContext marked, CancellationToken cancellation)
     {
         TypeDeclarationSyntax declaration = (TypeDeclarationSyntax)marked.TargetNode;
-        return Guarded(declaration, () => ModelReader.Read((INamedTypeSymbol)marked.TargetSymbol, declaration, marked.SemanticModel.Compilation, cancellation));
+        INamedTypeSymbol model = (INamedTypeSymbol)marked.TargetSymbol;
+        return Guarded(declaration, new ModelReader(model, declaration, marked.SemanticModel.Compilation, cancellation).Read);
     }
 
     /// <summary>Turns a fault of ours into a problem of one model: a generator that throws takes the code of all models away.</summary>

@@ -10,7 +10,8 @@ namespace OdeDsl.Generators.Diagnostics;
 [DiagnosticAnalyzer(LanguageNames.CSharp)]
 public sealed class AttributeOutsideModelAnalyzer : DiagnosticAnalyzer
 {
-    public override ImmutableArray<DiagnosticDescriptor> SupportedDiagnostics { get; } = ImmutableArray.Create(Descriptors.AttributeOutsideModel);
+    public override ImmutableArray<DiagnosticDescriptor> SupportedDiagnostics { get; } =
+        ImmutableArray.Create(Descriptors.AttributeOutsideModel);
 
     public override void Initialize(AnalysisContext context)
     {
@@ -22,11 +23,13 @@ public sealed class AttributeOutsideModelAnalyzer : DiagnosticAnalyzer
     private static void Check(SymbolAnalysisContext context)
     {
         ISymbol member = context.Symbol;
-        if (member.ContainingType.GetAttributes().Any(static attribute => Attributes.Is(attribute, "OdeModel"))) return;
+        if (member.ContainingType.GetAttributes().Any(static attribute => Attributes.Is(attribute, Attributes.Model))) return;
         foreach (string name in Attributes.OfMembers)
         {
-            if (Attributes.Find(member, name) is { } mark)
-                context.ReportDiagnostic(Diagnostic.Create(Descriptors.AttributeOutsideModel, Attributes.Place(mark, member), name, member.Name, member.ContainingType.Name));
+            if (Attributes.Find(member, name) is not { } mark) continue;
+            Location place = Attributes.Place(mark, member);
+            context.ReportDiagnostic(
+                Diagnostic.Create(Descriptors.AttributeOutsideModel, place, name, member.Name, member.ContainingType.Name));
         }
     }
 }

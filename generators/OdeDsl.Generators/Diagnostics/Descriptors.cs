@@ -283,7 +283,7 @@ internal static class Descriptors
 
     public static readonly DiagnosticDescriptor NotResolved = new(
         "ODE0074", "A name or an expression cannot be resolved",
-        "'{0}' cannot be resolved; correct it, or if another generator writes the member, write it by hand because generators do not see each other's code",
+        "'{0}' cannot be resolved; correct it, or write it by hand if another generator makes it, which is not visible here",
         Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0074");
 
     public static readonly DiagnosticDescriptor EquationTooDeep = new(

@@ -3,7 +3,7 @@ using Microsoft.CodeAnalysis;
 
 namespace OdeDsl.Generators.Diagnostics;
 
-/// <summary>Collects the problems of one model. The same problem at the same place is told once, however many equations use that place.</summary>
+/// <summary>Collects the problems of one model. The same problem at the same place is told once, however many equations use it.</summary>
 internal sealed class Problems
 {
     private readonly List<Diagnostic> _found = [];

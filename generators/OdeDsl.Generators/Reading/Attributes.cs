@@ -8,7 +8,8 @@ namespace OdeDsl.Generators.Reading;
 internal static class Attributes
 {
     public const string Namespace = "OdeDsl";
-    public const string ModelName = "OdeDsl.OdeModelAttribute";
+    public const string ModelFullName = "OdeDsl.OdeModelAttribute";
+    public const string Model = "OdeModel";
     public const string State = "State";
     public const string Parameter = "Parameter";
     public const string Rate = "Rate";
@@ -22,7 +23,8 @@ internal static class Attributes
         member.GetAttributes().FirstOrDefault(attribute => Is(attribute, shortName));
 
     public static bool Is(AttributeData attribute, string shortName) =>
-        attribute.AttributeClass is { ContainingType: null, ContainingNamespace: { Name: Namespace, ContainingNamespace.IsGlobalNamespace: true } } type
+        attribute.AttributeClass is { ContainingType: null } type
+        && type.ContainingNamespace is { Name: Namespace, ContainingNamespace.IsGlobalNamespace: true }
         && type.Name.Length == shortName.Length + nameof(Attribute).Length
         && type.Name.StartsWith(shortName, StringComparison.Ordinal);
 

@@ -29,9 +29,11 @@ internal sealed partial class BodyReader
         ITypeSymbol? type = operation.Type;
         Value value = (first, second) switch
         {
-            (WholeValue, NumberValue) => Problem(Descriptors.WholeNumberUnknown, operation, UserText.Of(operation.Syntax), type!.ToDisplayString()),
-            (WholeValue a, WholeValue b) => Narrowed(
-                operation, Apply(operation, operation.OperatorKind, a.Choice, b.Choice, Promoted(type!, operation.Value.Type!), operation.IsChecked)),
+            (WholeValue, NumberValue) =>
+                Problem(Descriptors.WholeNumberUnknown, operation, UserText.Of(operation.Syntax), type!.ToDisplayString()),
+            (WholeValue, WholeValue) => Narrowed(
+                operation,
+                Apply(operation, operation.OperatorKind, first, second, Promoted(type!, operation.Value.Type!), operation.IsChecked)),
             _ => Apply(operation, operation.OperatorKind, first, second, type, operation.IsChecked),
         };
         Assign(target, value);
@@ -91,8 +93,7 @@ internal sealed partial class BodyReader
         bool isOwn = variable is not null
             && (_active[_active.Count - 1] is not IMethodSymbol { MethodKind: MethodKind.LocalFunction } function
                 || SymbolEqualityComparer.Default.Equals(variable.ContainingSymbol, function));
-        bool isConstructorParameter = variable is IParameterSymbol { ContainingSymbol: IMethodSymbol { MethodKind: MethodKind.Constructor } };
-        if (isOwn && !isConstructorParameter) return variable;
+        if (isOwn && variable!.ContainingSymbol is not IMethodSymbol { MethodKind: MethodKind.Constructor }) return variable;
         if (target is IInvalidOperation) Unresolved(target);
         else Problem(Descriptors.AssignmentOutside, target, UserText.Of(target.Syntax));
         return null;

@@ -35,7 +35,9 @@ internal sealed partial class BodyReader
             // A local function could change a variable that it also gets by reference.
             if (parameter.RefKind is RefKind.Ref or RefKind.Out || (isLocal && parameter.RefKind != RefKind.None))
             {
-                Problem(Descriptors.ArgumentByReference, argument, UserText.Of(argument.Value.Syntax), operation.TargetMethod.Name, parameter.RefKind.ToString().ToLowerInvariant());
+                string text = UserText.Of(argument.Value.Syntax);
+                string way = parameter.RefKind.ToString().ToLowerInvariant();
+                Problem(Descriptors.ArgumentByReference, argument, text, operation.TargetMethod.Name, way);
                 return null;
             }
 
@@ -75,7 +77,10 @@ internal sealed partial class BodyReader
         bool isLocal = definition is IMethodSymbol { MethodKind: MethodKind.LocalFunction };
         ImmutableDictionary<ISymbol, Value> variables = isLocal ? _flow.Variables : NoVariables;
         if (definition is IMethodSymbol method)
-            variables = variables.SetItems(method.Parameters.Select(parameter => new KeyValuePair<ISymbol, Value>(parameter, arguments[parameter.Ordinal])));
+        {
+            variables = variables.SetItems(
+                method.Parameters.Select(parameter => new KeyValuePair<ISymbol, Value>(parameter, arguments[parameter.Ordinal])));
+        }
 
         Flow before = _flow;
         _active.Add(definition);
@@ -85,7 +90,9 @@ internal sealed partial class BodyReader
             if (Block(body) is { } block) Execute(block);
             if (_flow.Returned == _conditions.True) return _flow.Result!;
             // The compiler reports a body that does not return; this stands for it unless something else is wrong here.
-            return _problems.Found.Count > problemsBefore ? UnknownValue.Instance : Problem(Descriptors.NotResolved, body.GetLocation(), definition.Name);
+            return _problems.Found.Count > problemsBefore
+                ? UnknownValue.Instance
+                : Problem(Descriptors.NotResolved, body.GetLocation(), definition.Name);
         }
         finally
         {
@@ -105,12 +112,15 @@ internal sealed partial class BodyReader
 
     private Value MathCall(IInvocationOperation operation, IMethodSymbol method)
     {
-        bool isWhole = method.Parameters.All(static parameter => WholeNumbers.IsWhole(parameter.Type)) && WholeNumbers.Function(method.Name) is not null;
-        bool isRounding = method is { Name: "Round", Parameters: [{ Type.SpecialType: SpecialType.System_Double }, { Type.Name: "MidpointRounding" }] };
+        bool isWhole = WholeNumbers.Function(method.Name) is not null
+            && method.Parameters.All(static parameter => WholeNumbers.IsWhole(parameter.Type));
+        bool isRounding = method.Name == "Round"
+            && method.Parameters is [{ Type.SpecialType: SpecialType.System_Double }, { Type.Name: "MidpointRounding" }];
         Operator? function = method.IsStatic ? MathFunctions.Find(method) : null;
         if (function is null && !isWhole && !isRounding) return OtherMathCall(operation, method);
 
-        if (Arguments(operation, isLocal: false) is not { } arguments || arguments.Any(static argument => argument is UnknownValue)) return UnknownValue.Instance;
+        if (Arguments(operation, isLocal: false) is not { } arguments) return UnknownValue.Instance;
+        if (arguments.Any(static argument => argument is UnknownValue)) return UnknownValue.Instance;
         if (function is { } known) return MathCall(operation, known, arguments);
         if (isWhole) return WholeCall(operation, method, arguments);
         return arguments[1] is WholeValue { Choice: ChoiceLeaf<BigInteger> mode } && Rounding(mode.Value) is { } rounding

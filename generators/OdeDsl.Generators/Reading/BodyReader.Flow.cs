@@ -1,6 +1,7 @@
 using System;
 using System.Collections.Generic;
 using System.Collections.Immutable;
+using System.Globalization;
 using System.Numerics;
 using Microsoft.CodeAnalysis;
 using OdeDsl.Generators.Diagnostics;
@@ -12,26 +13,24 @@ internal sealed partial class BodyReader
 {
     private Value Fork(int condition, Func<Value> whenTrue, Func<Value> whenFalse)
     {
-        if (condition == _conditions.True) return whenTrue();
-        if (condition == _conditions.False) return whenFalse();
-        IOperation? at = _current;
-        Flow start = _flow;
-        Value first = whenTrue();
-        Flow afterFirst = _flow;
-        _flow = start;
-        Value second = whenFalse();
-        _current = at;
-        _flow = Join(condition, afterFirst, _flow);
-        return Choose(condition, first, second);
+        Value? first = null;
+        Value? second = null;
+        Fork(condition, () => { first = whenTrue(); }, () => { second = whenFalse(); });
+        return first is null ? second! : second is null ? first : Choose(condition, first, second);
     }
 
-    private void Fork(int condition, Action whenTrue, Action whenFalse) =>
-        Fork(condition, () => Done(whenTrue), () => Done(whenFalse));
-
-    private static UnknownValue Done(Action action)
+    /// <summary>Follows the sides that are possible and joins what is known behind them.</summary>
+    private void Fork(int condition, Action whenTrue, Action whenFalse)
     {
-        action();
-        return UnknownValue.Instance;
+        IOperation? at = _current;
+        Flow start = _flow;
+        if (condition != _conditions.False) whenTrue();
+        if (condition == _conditions.True) return;
+        Flow afterFirst = _flow;
+        _flow = start;
+        whenFalse();
+        _current = at;
+        if (condition != _conditions.False) _flow = Join(condition, afterFirst, _flow);
     }
 
     private Flow Join(int condition, Flow first, Flow second)
@@ -39,7 +38,10 @@ internal sealed partial class BodyReader
         if (ReferenceEquals(first, second)) return first;
         ImmutableDictionary<ISymbol, Value> variables =
             IsOver(first) ? second.Variables : IsOver(second) ? first.Variables : Join(condition, first.Variables, second.Variables);
-        Value? result = first.Result is null ? second.Result : second.Result is null ? first.Result : Choose(condition, first.Result, second.Result);
+        Value? result =
+            first.Result is null ? second.Result
+            : second.Result is null ? first.Result
+            : Choose(condition, first.Result, second.Result);
         ImmutableDictionary<ISymbol, Value> afterBreak =
             first.Broken == _conditions.False ? second.AfterBreak
             : second.Broken == _conditions.False ? first.AfterBreak
@@ -49,11 +51,12 @@ internal sealed partial class BodyReader
             _conditions.Choose(condition, first.Returned, second.Returned),
             result,
             _conditions.Choose(condition, first.Broken, second.Broken),
-            afterBreak);
+            afterBreak,
+            first.Outside);
     }
 
     /// <summary>Whether no execution goes on from here.</summary>
-    private bool IsOver(Flow flow) => _conditions.Or(flow.Returned, flow.Broken) == _conditions.True;
+    private bool IsOver(Flow flow) => _conditions.Or(flow.Returned, _conditions.Or(flow.Broken, flow.Outside)) == _conditions.True;
 
     private ImmutableDictionary<ISymbol, Value> Join(
         int condition, ImmutableDictionary<ISymbol, Value> first, ImmutableDictionary<ISymbol, Value> second)
@@ -82,5 +85,6 @@ internal sealed partial class BodyReader
 
     private Value Bounded(Choice<BigInteger> choice) => choice.Count <= Choice.MaximumCount
         ? new WholeValue(choice)
-        : Problem(Descriptors.TooManyCases, _current!, UserText.Of(_current!.Syntax), Choice.MaximumCount.ToString(System.Globalization.CultureInfo.InvariantCulture));
+        : Problem(
+            Descriptors.TooManyCases, _current!, UserText.Of(_current!.Syntax), Choice.MaximumCount.ToString(CultureInfo.InvariantCulture));
 }

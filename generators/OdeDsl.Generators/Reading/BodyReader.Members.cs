@@ -77,7 +77,7 @@ internal sealed partial class BodyReader
 
     private void OfOther(IOperation operation) => Problem(Descriptors.OtherObject, operation, UserText.Of(operation.Syntax));
 
-    /// <summary>The member a use reaches when the object is the model; null, with a problem reported, if a derived class may decide.</summary>
+    /// <summary>The member a use reaches when the object is the model; null, and reported, if derived classes decide.</summary>
     private ISymbol? Reach(ISymbol member, bool isBaseCall, IOperation operation)
     {
         if (isBaseCall || !(member.IsVirtual || member.IsAbstract || member.IsOverride) || member.IsStatic) return member;
@@ -93,8 +93,9 @@ internal sealed partial class BodyReader
         if (!HasSource(member)) return WithoutSource(operation, member);
         ISymbol? behind = _initializing.FirstOrDefault(outer => !IsSetBefore(member, outer));
         if (behind is not null) return Problem(Descriptors.StaticOrder, operation, member.Name, behind.Name);
-        if (_initializing.Count > 0 && Constructors.InitializersMention(member.ContainingType, _initializing[_initializing.Count - 1], _cancellation))
-            return Problem(Descriptors.StaticOrder, operation, Name(member), Name(_initializing[_initializing.Count - 1]));
+        ISymbol? reader = _initializing.LastOrDefault();
+        if (reader is not null && Constructors.InitializersMention(member.ContainingType, reader, _cancellation))
+            return Problem(Descriptors.StaticOrder, operation, Name(member), Name(reader));
         if (Constructors.Mention(member, _cancellation)) return Problem(Descriptors.ConstructorSetsValue, operation, member.Name);
         CallKey key = new(member, EquatableArray<Value>.Empty);
         if (_known.TryGetValue(key, out Value? known)) return known;
@@ -103,12 +104,13 @@ internal sealed partial class BodyReader
         return value;
     }
 
-    private static EqualsValueClauseSyntax? Initializer(ISymbol member) => member.OriginalDefinition.DeclaringSyntaxReferences[0].GetSyntax() switch
-    {
-        VariableDeclaratorSyntax field => field.Initializer,
-        PropertyDeclarationSyntax property => property.Initializer,
-        _ => null,
-    };
+    private EqualsValueClauseSyntax? Initializer(ISymbol member) =>
+        member.OriginalDefinition.DeclaringSyntaxReferences[0].GetSyntax(_cancellation) switch
+        {
+            VariableDeclaratorSyntax field => field.Initializer,
+            PropertyDeclarationSyntax property => property.Initializer,
+            _ => null,
+        };
 
     private Value RunInitializer(ISymbol member, EqualsValueClauseSyntax syntax)
     {
@@ -143,7 +145,9 @@ internal sealed partial class BodyReader
     /// </summary>
     private static bool IsSetBefore(ISymbol member, ISymbol outer)
     {
-        if (!member.IsStatic || !outer.IsStatic || !SymbolEqualityComparer.Default.Equals(member.ContainingType.OriginalDefinition, outer.ContainingType.OriginalDefinition)) return true;
+        INamedTypeSymbol type = member.ContainingType.OriginalDefinition;
+        bool isSameType = SymbolEqualityComparer.Default.Equals(type, outer.ContainingType.OriginalDefinition);
+        if (!member.IsStatic || !outer.IsStatic || !isSameType) return true;
         Location first = member.OriginalDefinition.Locations[0];
         Location second = outer.OriginalDefinition.Locations[0];
         return first.SourceTree == second.SourceTree && first.SourceSpan.Start < second.SourceSpan.Start;

@@ -11,7 +11,7 @@ namespace OdeDsl.Generators.Reading;
 /// <content>Operators and conversions.</content>
 internal sealed partial class BodyReader
 {
-    /// <summary>Follows a chain such as <c>a + b + c</c> from its left end without recursion: sums of thousands of terms are read too.</summary>
+    /// <summary>Follows a chain such as <c>a + b + c</c> from its left end, not by recursion: sums may have thousands of terms.</summary>
     private Value Binary(IBinaryOperation operation)
     {
         if (operation.OperatorMethod is { } method) return UserDefined(operation, method);
@@ -50,17 +50,20 @@ internal sealed partial class BodyReader
         return Apply(operation, operation.OperatorKind, first, second, operation.Type, operation.IsChecked);
     }
 
-    private Value Apply(
-        IOperation operation, BinaryOperatorKind kind, Value first, Value second, ITypeSymbol? type, bool isChecked) => (first, second) switch
+    /// <param name="type">The type in which whole numbers are computed.</param>
+    private Value Apply(IOperation operation, BinaryOperatorKind kind, Value first, Value second, ITypeSymbol? type, bool isChecked)
     {
-        (UnknownValue, _) or (_, UnknownValue) => UnknownValue.Instance,
-        (NumberValue a, NumberValue b) => Apply(operation, kind, a.Node, b.Node),
-        (ConditionValue a, ConditionValue b) => Logic(operation, kind, a.Node, b.Node),
-        (WholeValue a, WholeValue b) => Apply(operation, kind, a.Choice, b.Choice, type, isChecked),
-        (LiteralValue { Constant: float or decimal } literal, _) => Imprecise(operation, literal),
-        (_, LiteralValue { Constant: float or decimal } literal) => Imprecise(operation, literal),
-        _ => Unsupported(operation),
-    };
+        return (first, second) switch
+        {
+            (UnknownValue, _) or (_, UnknownValue) => UnknownValue.Instance,
+            (NumberValue a, NumberValue b) => Apply(operation, kind, a.Node, b.Node),
+            (ConditionValue a, ConditionValue b) => Logic(operation, kind, a.Node, b.Node),
+            (WholeValue a, WholeValue b) => Apply(operation, kind, a.Choice, b.Choice, type, isChecked),
+            (LiteralValue { Constant: float or decimal } literal, _) => Imprecise(operation, literal),
+            (_, LiteralValue { Constant: float or decimal } literal) => Imprecise(operation, literal),
+            _ => Unsupported(operation),
+        };
+    }
 
     private Value Apply(IOperation operation, BinaryOperatorKind kind, int first, int second)
     {
@@ -107,12 +110,18 @@ internal sealed partial class BodyReader
         BinaryOperatorKind.And => new ConditionValue(_conditions.And(first, second)),
         BinaryOperatorKind.Or => new ConditionValue(_conditions.Or(first, second)),
         BinaryOperatorKind.Equals => new ConditionValue(_conditions.Equal(first, second)),
-        BinaryOperatorKind.ExclusiveOr or BinaryOperatorKind.NotEquals => new ConditionValue(_conditions.Not(_conditions.Equal(first, second))),
+        BinaryOperatorKind.ExclusiveOr or BinaryOperatorKind.NotEquals =>
+            new ConditionValue(_conditions.Not(_conditions.Equal(first, second))),
         _ => Unsupported(operation),
     };
 
     private Value Apply(
-        IOperation operation, BinaryOperatorKind kind, Choice<BigInteger> first, Choice<BigInteger> second, ITypeSymbol? type, bool isChecked)
+        IOperation operation,
+        BinaryOperatorKind kind,
+        Choice<BigInteger> first,
+        Choice<BigInteger> second,
+        ITypeSymbol? type,
+        bool isChecked)
     {
         if (WholeNumbers.Relation(kind) is { } relation)
         {
@@ -120,8 +129,10 @@ internal sealed partial class BodyReader
                 .Fold(holds => holds ? _conditions.True : _conditions.False, _conditions.Choose));
         }
 
-        if (type is null || !WholeNumbers.IsWhole(type) || WholeNumbers.Arithmetic(kind, type) is not { } arithmetic) return Unsupported(operation);
-        return Whole(operation, () => first.Combine(second, (a, b) => WholeNumbers.Fit(arithmetic(a, b), type, isChecked || kind == BinaryOperatorKind.Divide)));
+        if (type is null || !WholeNumbers.IsWhole(type)) return Unsupported(operation);
+        if (WholeNumbers.Arithmetic(kind, type) is not { } arithmetic) return Unsupported(operation);
+        isChecked |= kind == BinaryOperatorKind.Divide; // The one quotient that does not fit throws in either context.
+        return Whole(operation, () => first.Combine(second, (a, b) => WholeNumbers.Fit(arithmetic(a, b), type, isChecked)));
     }
 
     /// <summary>Runs integer arithmetic and reports what makes it fail.</summary>
@@ -178,7 +189,11 @@ internal sealed partial class BodyReader
             (_, SpecialType.System_Single or SpecialType.System_Decimal) =>
                 Problem(Descriptors.NotDoublePrecision, operation, UserText.Of(operation.Syntax), target!.ToDisplayString()),
             (ModelValue, _) when operation.Conversion.IsReference && target is { TypeKind: TypeKind.Class } => value,
-            _ => Problem(Descriptors.ExpressionNotSupported, operation, "A conversion to '" + target?.ToDisplayString() + "'", "use double, bool and whole-number constants"),
+            _ => Problem(
+                Descriptors.ExpressionNotSupported,
+                operation,
+                "A conversion to '" + target?.ToDisplayString() + "'",
+                "use double, bool and whole-number constants"),
         };
     }
 

@@ -12,11 +12,13 @@ internal sealed partial class BodyReader
 {
     private Value SwitchExpression(ISwitchExpressionOperation operation)
     {
+        if (operation.Type is IErrorTypeSymbol) return Unresolved(operation);
         Value input = Evaluate(operation.Value);
         if (!operation.IsExhaustive)
         {
-            Location place = operation.Syntax is SwitchExpressionSyntax syntax ? syntax.SwitchKeyword.GetLocation() : operation.Syntax.GetLocation();
-            return Problem(Descriptors.SwitchWithoutMatch, place);
+            return operation.Syntax is SwitchExpressionSyntax syntax
+                ? Problem(Descriptors.SwitchWithoutMatch, syntax.SwitchKeyword.GetLocation())
+                : Problem(Descriptors.SwitchWithoutMatch, operation);
         }
 
         _current = operation;
@@ -39,27 +41,30 @@ internal sealed partial class BodyReader
     {
         Value input = Evaluate(operation.Value);
         Flow before = _flow;
-        _flow = before with { Broken = _conditions.False, AfterBreak = NoVariables };
+        int outside = _conditions.Or(before.Outside, before.Broken);
+        _flow = before with { Broken = _conditions.False, AfterBreak = NoVariables, Outside = outside };
         Section(operation, input, UserText.Of(operation.Value.Syntax), 0);
 
         // Executions that broke out go on after the switch, together with those that ran to its end.
         var variables = _flow.Broken == _conditions.False ? _flow.Variables
             : IsOver(_flow) ? _flow.AfterBreak
             : Join(_flow.Broken, _flow.AfterBreak, _flow.Variables);
-        _flow = _flow with { Variables = variables, Broken = before.Broken, AfterBreak = before.AfterBreak };
+        _flow = _flow with { Variables = variables, Broken = before.Broken, AfterBreak = before.AfterBreak, Outside = before.Outside };
     }
 
     private void Section(ISwitchOperation operation, Value input, string inputText, int index)
     {
         if (index == operation.Cases.Length)
         {
-            ISwitchCaseOperation? otherwise = operation.Cases.FirstOrDefault(static section => section.Clauses.Any(static clause => clause.CaseKind == CaseKind.Default));
+            ISwitchCaseOperation? otherwise = operation.Cases.FirstOrDefault(
+                static section => section.Clauses.Any(static clause => clause.CaseKind == CaseKind.Default));
             if (otherwise is not null) Body(otherwise);
             return;
         }
 
         int matches = _conditions.False;
-        foreach (ICaseClauseOperation clause in operation.Cases[index].Clauses) matches = _conditions.Or(matches, Match(clause, input, inputText));
+        foreach (ICaseClauseOperation clause in operation.Cases[index].Clauses)
+            matches = _conditions.Or(matches, Match(clause, input, inputText));
         Fork(matches, () => Body(operation.Cases[index]), () => Section(operation, input, inputText, index + 1));
 
         void Body(ISwitchCaseOperation section)
@@ -94,8 +99,8 @@ internal sealed partial class BodyReader
                 return (input, bound) switch
                 {
                     (UnknownValue, _) or (_, UnknownValue) => Undecided,
-                    (NumberValue a, NumberValue b) =>
-                        ConditionOf(Relation(pattern, relational.OperatorKind, a.Node, b.Node, inputText + " " + UserText.Of(pattern.Syntax))),
+                    (NumberValue a, NumberValue b) => ConditionOf(
+                        Relation(pattern, relational.OperatorKind, a.Node, b.Node, inputText + " " + UserText.Of(pattern.Syntax))),
                     (WholeValue a, WholeValue b) => ConditionOf(Apply(pattern, relational.OperatorKind, a.Choice, b.Choice, null, false)),
                     _ => NoMatch(pattern),
                 };
@@ -105,14 +110,18 @@ internal sealed partial class BodyReader
                 int first = Match(binary.LeftPattern, input, inputText);
                 int second = Match(binary.RightPattern, input, inputText);
                 return binary.OperatorKind == BinaryOperatorKind.And ? _conditions.And(first, second) : _conditions.Or(first, second);
-            case IDeclarationPatternOperation declaration when declaration.MatchesNull
-                || (declaration.InputType.IsValueType && SymbolEqualityComparer.Default.Equals(declaration.InputType, declaration.MatchedType)):
+            case IDeclarationPatternOperation declaration when MatchesAll(declaration):
                 if (declaration.DeclaredSymbol is { } variable) Assign(variable, input);
                 return _conditions.True;
             default:
                 return NoMatch(pattern);
         }
     }
+
+    /// <summary>Whether the pattern is <c>var x</c>, or names the very type of a number or condition.</summary>
+    private static bool MatchesAll(IDeclarationPatternOperation pattern) =>
+        pattern.MatchesNull
+        || (pattern.InputType.IsValueType && SymbolEqualityComparer.Default.Equals(pattern.InputType, pattern.MatchedType));
 
     private int MatchConstant(IOperation pattern, Value input, Value constant) => (input, constant) switch
     {

@@ -78,15 +78,18 @@ internal sealed partial class BodyReader
         }
     }
 
+    /// <summary>All executions that are still on the way return; those that broke out of a switch before do not.</summary>
     private void Return(Value value)
     {
+        int elsewhere = _conditions.Or(_flow.Broken, _flow.Outside);
         Value result = _flow.Result is null ? value : Choose(_flow.Returned, _flow.Result, value);
-        _flow = _flow with { Returned = _conditions.True, Result = result };
+        _flow = _flow with { Returned = _conditions.Or(_flow.Returned, _conditions.Not(elsewhere)), Result = result };
     }
 
+    /// <summary>All executions that are still on the way leave the switch; those that returned before do not.</summary>
     private void Break()
     {
         var after = _flow.Broken == _conditions.False ? _flow.Variables : Join(_flow.Broken, _flow.AfterBreak, _flow.Variables);
-        _flow = _flow with { Broken = _conditions.True, AfterBreak = after };
+        _flow = _flow with { Broken = _conditions.Or(_flow.Broken, _conditions.Not(_flow.Returned)), AfterBreak = after };
     }
 }

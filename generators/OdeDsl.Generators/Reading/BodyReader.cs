@@ -76,7 +76,8 @@ internal sealed partial class BodyReader
         }
     }
 
-    private Flow Start(ImmutableDictionary<ISymbol, Value> variables) => new(variables, _conditions.False, null, _conditions.False, NoVariables);
+    private Flow Start(ImmutableDictionary<ISymbol, Value> variables) =>
+        new(variables, _conditions.False, null, _conditions.False, NoVariables, _conditions.False);
 
     private Value Evaluate(IOperation operation)
     {
@@ -125,12 +126,13 @@ internal sealed partial class BodyReader
 
     private Value Conditional(IConditionalOperation operation)
     {
+        if (operation.Type is IErrorTypeSymbol) return Unresolved(operation);
         int condition = Condition(operation.Condition);
         _current = operation;
         return Fork(condition, () => Evaluate(operation.WhenTrue), () => Evaluate(operation.WhenFalse!));
     }
 
-    /// <summary>The node of a condition. An unknown condition becomes one that is decided by nothing, so that both its sides are still read.</summary>
+    /// <summary>The node of a condition. An unknown one becomes one that nothing decides, so that both its sides are still read.</summary>
     private int Condition(IOperation operation) => ConditionOf(Evaluate(operation));
 
     private int ConditionOf(Value value) => value is ConditionValue condition ? condition.Node : Undecided;
@@ -157,6 +159,7 @@ internal sealed partial class BodyReader
 
     private UnknownValue Unresolved(IOperation operation)
     {
+        if (UsesUnknown(operation)) return UnknownValue.Instance;
         IOperation smallest = operation.DescendantsAndSelf().LastOrDefault(static inner => inner is IInvalidOperation) ?? operation;
         return Problem(Descriptors.NotResolved, smallest, UserText.Of(smallest.Syntax));
     }

@@ -4,7 +4,7 @@ using System.Collections.Generic;
 
 namespace OdeDsl.Generators.Reading;
 
-/// <summary>An immutable array that compares by content, so that the incremental pipeline can tell equal models apart from changed ones.</summary>
+/// <summary>An immutable array that compares by content, so that the pipeline can tell equal models from changed ones.</summary>
 internal readonly struct EquatableArray<T> : IEquatable<EquatableArray<T>>, IReadOnlyList<T>
     where T : IEquatable<T>
 {

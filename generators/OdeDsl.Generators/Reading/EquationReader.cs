@@ -11,24 +11,27 @@ namespace OdeDsl.Generators.Reading;
 internal sealed class EquationReader(
     INamedTypeSymbol model, PropertyReader properties, Compilation compilation, Problems problems, CancellationToken cancellation)
 {
-    /// <summary>The member that computes the rate, by the state's name. Null where it cannot be read.</summary>
-    public Dictionary<string, ISymbol?> Rates { get; } = [];
+    private readonly Dictionary<string, ISymbol?> _rates = [];
 
     public List<(ISymbol Member, string Unit)> Observables { get; } = [];
+
+    /// <summary>The member that computes the rate of a state, or null where it is missing or cannot be read.</summary>
+    public ISymbol? RateOf(string state) => _rates.TryGetValue(state, out ISymbol? member) ? member : null;
 
     public void Read()
     {
         foreach (ISymbol member in model.GetMembers())
         {
             cancellation.ThrowIfCancellationRequested();
-            if (Attributes.Find(member, Attributes.State) is not null || Attributes.Find(member, Attributes.Parameter) is not null) continue;
+            if (Attributes.Find(member, Attributes.State) is not null) continue;
+            if (Attributes.Find(member, Attributes.Parameter) is not null) continue;
             if (Attributes.Find(member, Attributes.Rate) is { } rate) ReadRate(member, rate);
             if (Attributes.Find(member, Attributes.Observable) is { } observable) ReadObservable(member, observable);
         }
 
         foreach (DeclaredState state in properties.States)
         {
-            if (!Rates.ContainsKey(state.Property.Name))
+            if (!_rates.ContainsKey(state.Property.Name))
                 problems.Report(Descriptors.MissingRate, state.Symbol.Locations[0], state.Property.Name);
         }
     }
@@ -49,10 +52,10 @@ internal sealed class EquationReader(
             problems.Report(Descriptors.RateOfUnknownMember, place, member.Name, name, model.Name);
         else if (!isState)
             problems.Report(Descriptors.RateOfOtherMember, place, member.Name, name);
-        else if (Rates.TryGetValue(name, out ISymbol? first) && first is not null)
+        else if (_rates.TryGetValue(name, out ISymbol? first) && first is not null)
             problems.Report(Descriptors.SecondRate, place, name, first.Name, member.Name);
         else
-            Rates[name] = readable ? member : null;
+            _rates[name] = readable ? member : null;
     }
 
     private void ReadObservable(ISymbol member, AttributeData attribute)
@@ -79,13 +82,14 @@ internal sealed class EquationReader(
         else if (type?.SpecialType != SpecialType.System_Double)
             problems.Report(Descriptors.EquationNotDouble, TypePlace(member) ?? place, role, member.Name, type?.ToDisplayString() ?? "");
         else if (!TakesOnlyTime(member)) problems.Report(Descriptors.EquationArguments, place, role, member.Name);
-        else if (Bodies.Find(member, compilation, cancellation) is null) problems.Report(Descriptors.EquationWithoutBody, place, role, member.Name);
+        else if (Bodies.Find(member, compilation, cancellation) is null)
+            problems.Report(Descriptors.EquationWithoutBody, place, role, member.Name);
         else if (Overriding.CanBeOverridden(member, model)) problems.Report(Descriptors.MemberOverridable, place, member.Name, model.Name);
         else return true;
         return false;
     }
 
-    /// <summary>Whether the member takes nothing, or the time under one of its two usual names: any other number would silently get the time.</summary>
+    /// <summary>Whether the member takes nothing, or the time under a usual name: another number would silently get the time.</summary>
     private static bool TakesOnlyTime(ISymbol member) => member switch
     {
         IMethodSymbol { Parameters: [var parameter] } =>

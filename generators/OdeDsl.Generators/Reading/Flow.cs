@@ -12,9 +12,11 @@ namespace OdeDsl.Generators.Reading;
 /// <param name="Result">What those returned.</param>
 /// <param name="Broken">The executions that have left the innermost switch.</param>
 /// <param name="AfterBreak">The variables of those.</param>
+/// <param name="Outside">The executions that had left a switch around the innermost one when that was entered.</param>
 internal sealed record Flow(
     ImmutableDictionary<ISymbol, Value> Variables,
     int Returned,
     Value? Result,
     int Broken,
-    ImmutableDictionary<ISymbol, Value> AfterBreak);
+    ImmutableDictionary<ISymbol, Value> AfterBreak,
+    int Outside);

@@ -4,7 +4,7 @@ using OdeDsl.Generators.Algebra;
 
 namespace OdeDsl.Generators.Reading;
 
-/// <summary>The functions of System.Math, and those of System.Double that are defined as calls of them, that have a meaning for reals.</summary>
+/// <summary>The functions of reals in System.Math, and those of System.Double that are defined as calls of them.</summary>
 internal static class MathFunctions
 {
     private static readonly Dictionary<string, Operator> Unary = new()
@@ -75,8 +75,9 @@ internal static class MathFunctions
     };
 
     public static bool IsHome(INamedTypeSymbol type) =>
-        type is { SpecialType: SpecialType.System_Double }
-            or { Name: "Math" or "MathF", ContainingType: null, ContainingNamespace: { Name: "System", ContainingNamespace.IsGlobalNamespace: true } };
+        type.SpecialType == SpecialType.System_Double
+        || (type is { Name: "Math" or "MathF", ContainingType: null }
+            && type.ContainingNamespace is { Name: "System", ContainingNamespace.IsGlobalNamespace: true });
 
     /// <summary>The operator of a function of doubles, or null.</summary>
     public static Operator? Find(IMethodSymbol method)
@@ -91,7 +92,7 @@ internal static class MathFunctions
     }
 
     public static string AdviceFor(string name) =>
-        Instead.TryGetValue(name, out string? advice) ? advice : "write the formula with arithmetic and the functions of System.Math on doubles";
+        Instead.TryGetValue(name, out string? advice) ? advice : "write it with arithmetic and the functions of System.Math on doubles";
 
     /// <summary>Whether a function has a kink or a jump, so that its place must be named to people.</summary>
     public static bool HasKink(Operator operation) =>

@@ -35,7 +35,8 @@ internal sealed class PropertyReader(INamedTypeSymbol model, Compilation compila
             AttributeData? state = Attributes.Find(member, Attributes.State);
             AttributeData? parameter = Attributes.Find(member, Attributes.Parameter);
             AttributeData? angle = Attributes.Find(member, Attributes.Angle);
-            if (angle is not null && state is null) problems.Report(Descriptors.AngleWithoutState, Attributes.Place(angle, member), member.Name);
+            if (angle is not null && state is null)
+                problems.Report(Descriptors.AngleWithoutState, Attributes.Place(angle, member), member.Name);
             if (member is not IPropertySymbol property || (state ?? parameter) is null) continue;
             if (!HasOneRole(property))
             {
@@ -129,7 +130,10 @@ internal sealed class PropertyReader(INamedTypeSymbol model, Compilation compila
         else if (overridable is not null) problems.Report(Descriptors.PropertyOverridable, place, role, property.Name, overridable);
         else if (property.GetMethod is null) problems.Report(Descriptors.PropertyWithoutGetter, place, role, property.Name);
         else if (property.Type.SpecialType != SpecialType.System_Double || property.RefKind != RefKind.None)
-            problems.Report(Descriptors.PropertyNotDouble, declaration?.Type.GetLocation() ?? place, role, property.Name, TypeName(property));
+        {
+            Location typePlace = declaration?.Type.GetLocation() ?? place;
+            problems.Report(Descriptors.PropertyNotDouble, typePlace, role, property.Name, TypeName(property));
+        }
         else if (declaration is null || !declaration.Modifiers.Any(SyntaxKind.PartialKeyword))
             problems.Report(Descriptors.PropertyNotPartial, place, role, property.Name);
         else if (Bodies.Find(property, compilation, cancellation) is not null || declaration.Initializer is not null)

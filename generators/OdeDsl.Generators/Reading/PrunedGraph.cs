@@ -5,14 +5,24 @@ using OdeDsl.Generators.Algebra;
 namespace OdeDsl.Generators.Reading;
 
 /// <summary>The part of a graph that its results depend on, in the order in which it was built.</summary>
-internal sealed record PrunedGraph(EquatableArray<Node> Nodes, int[] Roots, Dictionary<int, int> NewIndex)
+internal sealed class PrunedGraph
 {
-    public static PrunedGraph Of(ExpressionGraph graph, int[] roots)
+    private readonly Dictionary<int, int> _newIndex;
+
+    private PrunedGraph(Node[] nodes, int[] results, Dictionary<int, int> newIndex) =>
+        (Nodes, Results, _newIndex) = (new(nodes), results, newIndex);
+
+    public EquatableArray<Node> Nodes { get; }
+
+    /// <summary>The results' nodes, in the order they were asked for.</summary>
+    public int[] Results { get; }
+
+    public static PrunedGraph Of(ExpressionGraph graph, int[] results)
     {
-        HashSet<int> used = [.. roots];
+        HashSet<int> used = [.. results];
         for (int i = graph.Nodes.Count - 1; i >= 0; i--)
         {
-            if (used.Contains(i)) used.UnionWith(Operands(graph[i]));
+            if (used.Contains(i)) used.UnionWith([graph[i].First, graph[i].Second, graph[i].Third]);
         }
 
         Dictionary<int, int> newIndex = new() { [-1] = -1 };
@@ -25,7 +35,7 @@ internal sealed record PrunedGraph(EquatableArray<Node> Nodes, int[] Roots, Dict
             kept.Add(node with { First = newIndex[node.First], Second = newIndex[node.Second], Third = newIndex[node.Third] });
         }
 
-        return new(new(kept.ToArray()), roots.Select(root => newIndex[root]).ToArray(), newIndex);
+        return new([.. kept], results.Select(result => newIndex[result]).ToArray(), newIndex);
     }
 
     /// <summary>
@@ -35,9 +45,14 @@ internal sealed record PrunedGraph(EquatableArray<Node> Nodes, int[] Roots, Dict
     public static PrunedGraph NotANumber(int count)
     {
         ExpressionGraph graph = new();
-        int[] roots = Enumerable.Repeat(graph.Constant(double.NaN), count).ToArray();
-        return new(new(graph.Nodes.ToArray()), roots, []);
+        int[] results = Enumerable.Repeat(graph.Constant(double.NaN), count).ToArray();
+        return new([.. graph.Nodes], results, []);
     }
 
-    private static IEnumerable<int> Operands(Node node) => new[] { node.First, node.Second, node.Third }.Where(static operand => operand >= 0);
+    /// <summary>The texts of the nodes that are left, in their order.</summary>
+    public EquatableArray<ConditionText> Renumber(IReadOnlyDictionary<int, string> texts) => new(texts
+        .Where(pair => _newIndex.ContainsKey(pair.Key))
+        .Select(pair => new ConditionText(_newIndex[pair.Key], pair.Value))
+        .OrderBy(static text => text.Node)
+        .ToArray());
 }

@@ -41,7 +41,7 @@ internal static class Summaries
     {
         string text = trivia.ToFullString().TrimStart();
         if (text.StartsWith("///", StringComparison.Ordinal))
-            return text.Split('\n').Select(static line => line.Trim()).Select(static line => line.StartsWith("///", StringComparison.Ordinal) ? line.Substring(3) : line);
+            return text.Split('\n').Select(static line => line.Trim().TrimStart('/'));
         if (trivia.IsKind(SyntaxKind.MultiLineDocumentationCommentTrivia) || text.StartsWith("/**", StringComparison.Ordinal))
             return text.Trim().TrimEnd('/', '*').Substring(3).Split('\n').Select(static line => line.Trim().TrimStart('*'));
         return [];

@@ -35,11 +35,20 @@ internal sealed class TypeReader(INamedTypeSymbol model, Location place, Problem
     public EquatableArray<string> TakenNames()
     {
         SortedSet<string> names = new(System.StringComparer.Ordinal);
-        for (INamedTypeSymbol? type = model; type is not null; type = type.ContainingType) names.UnionWith(type.TypeParameters.Select(static parameter => parameter.Name));
+        names.UnionWith(TypeParameters().Select(static parameter => parameter.Name));
         for (INamedTypeSymbol? type = model; type is not null; type = type.BaseType) names.UnionWith(type.MemberNames);
         names.UnionWith(model.GetTypeMembers().Select(static type => type.Name));
         names.Add(model.Name);
         return new(names.ToArray());
+    }
+
+    /// <summary>The type parameters of the model and of the types around it.</summary>
+    private IEnumerable<ITypeParameterSymbol> TypeParameters()
+    {
+        for (INamedTypeSymbol? type = model; type is not null; type = type.ContainingType)
+        {
+            foreach (ITypeParameterSymbol parameter in type.TypeParameters) yield return parameter;
+        }
     }
 
     private bool CheckLanguage(LanguageVersion language)
@@ -60,7 +69,7 @@ internal sealed class TypeReader(INamedTypeSymbol model, Location place, Problem
     private bool CheckName()
     {
         ISymbol? taker = model.Name == EquationsName ? model : model.GetMembers(EquationsName).FirstOrDefault();
-        for (INamedTypeSymbol? type = model; type is not null; type = type.ContainingType) taker ??= type.TypeParameters.FirstOrDefault(static parameter => parameter.Name == EquationsName);
+        taker ??= TypeParameters().FirstOrDefault(static parameter => parameter.Name == EquationsName);
         if (taker is null) return true;
         problems.Report(Descriptors.ReservedName, taker.Locations[0], taker.ToDisplayString(), model.Name);
         return false;
@@ -108,7 +117,8 @@ internal sealed class TypeReader(INamedTypeSymbol model, Location place, Problem
     private string MetadataName()
     {
         string name = model.MetadataName;
-        for (INamedTypeSymbol? type = model.ContainingType; type is not null; type = type.ContainingType) name = type.MetadataName + "+" + name;
+        for (INamedTypeSymbol? type = model.ContainingType; type is not null; type = type.ContainingType)
+            name = type.MetadataName + "+" + name;
         return model.ContainingNamespace.IsGlobalNamespace ? name : model.ContainingNamespace.ToDisplayString(PlainNames) + "." + name;
     }
 

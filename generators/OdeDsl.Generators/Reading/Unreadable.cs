@@ -21,9 +21,10 @@ internal static class Unreadable
         IAwaitOperation => ("Waiting for a task", "compute from states, parameters and time only"),
         IAnonymousFunctionOperation or IDelegateCreationOperation or IMethodReferenceOperation =>
             ("A lambda or delegate", "write a local function or a method, and call it"),
-        IInvocationOperation { TargetMethod.MethodKind: MethodKind.DelegateInvoke } => ("Calling a delegate", "call a method or a local function"),
-        IInvocationOperation { TargetMethod.RefKind: not RefKind.None } or IPropertyReferenceOperation { Property.RefKind: not RefKind.None } =>
-            ("A reference", "return a plain double"),
+        IInvocationOperation { TargetMethod.MethodKind: MethodKind.DelegateInvoke } =>
+            ("Calling a delegate", "call a method or a local function"),
+        IInvocationOperation { TargetMethod.RefKind: not RefKind.None } => Reference,
+        IPropertyReferenceOperation { Property.RefKind: not RefKind.None } => Reference,
         IInvocationOperation { TargetMethod.ContainingType: var type } when IsExtensionBlock(type) => Extension,
         IPropertyReferenceOperation { Property.ContainingType: var type } when IsExtensionBlock(type) => Extension,
         ITupleOperation or IDeconstructionAssignmentOperation => ("A tuple", "use separate local variables, or a method for each value"),
@@ -32,13 +33,15 @@ internal static class Unreadable
         IObjectCreationOperation or IAnonymousObjectCreationOperation or IWithOperation or ITypeParameterObjectCreationOperation =>
             ("Creating an object", "compute with doubles"),
         IInterpolatedStringOperation => ("A text", "use numbers and conditions"),
-        ICoalesceOperation or IConditionalAccessOperation or ICoalesceAssignmentOperation => ("A test for null", "use double, which is never null"),
+        ICoalesceOperation or IConditionalAccessOperation or ICoalesceAssignmentOperation =>
+            ("A test for null", "use double, which is never null"),
         IIsTypeOperation or ITypeOfOperation => ("A type test", "compare numbers"),
         IInstanceReferenceOperation => ("This use of an object", "compute with doubles"),
-        _ => ("'" + Shortened(UserText.Of(operation.Syntax)) + "'", "write it with arithmetic, comparisons and functions of System.Math on doubles"),
+        _ => ("'" + Shortened(UserText.Of(operation.Syntax)) + "'",
+            "write it with arithmetic, comparisons and functions of System.Math on doubles"),
     };
 
-    /// <summary>Whether the type is a C# 14 extension block. (The compiler the generator is built against has no name for it yet.)</summary>
+    /// <summary>Whether the type is a C# 14 extension block. (The compiler built against has no name for it yet.)</summary>
     public static bool IsExtensionBlock(INamedTypeSymbol? type) => type is { Name.Length: 0, IsAnonymousType: false, IsTupleType: false };
 
     /// <summary>Where to point: at the keyword of a statement rather than at all it contains.</summary>
@@ -54,6 +57,8 @@ internal static class Unreadable
         LockStatementSyntax guard => guard.LockKeyword.GetLocation(),
         var other => other.GetLocation(),
     };
+
+    private static (string What, string Instead) Reference => ("A reference", "return a plain double");
 
     private static (string What, string Instead) Extension =>
         ("A member of an extension block", "write an extension method with a 'this' parameter");

@@ -49,7 +49,9 @@ internal static class UserText
 
     /// <summary>An identifier as it must be written in code.</summary>
     public static string Escaped(string name) =>
-        SyntaxFacts.GetKeywordKind(name) != SyntaxKind.None || SyntaxFacts.GetContextualKeywordKind(name) != SyntaxKind.None ? "@" + name : name;
+        SyntaxFacts.GetKeywordKind(name) != SyntaxKind.None || SyntaxFacts.GetContextualKeywordKind(name) != SyntaxKind.None
+            ? "@" + name
+            : name;
 
     private static readonly char[] LineEnds = ['\r', '\n', '\u0085', '\u2028', '\u2029'];
 }

@@ -1,5 +1,5 @@
 using System.Collections.Generic;
-using Microsoft.CodeAnalysis.CSharp;
+using OdeDsl.Generators.Reading;
 
 namespace OdeDsl.Generators.Writing;
 
@@ -7,10 +7,7 @@ namespace OdeDsl.Generators.Writing;
 internal static class Identifiers
 {
     /// <summary>The identifier as it must be written: keywords get their <c>@</c>, also those that are keywords only in places.</summary>
-    public static string Escape(string name) =>
-        SyntaxFacts.GetKeywordKind(name) != SyntaxKind.None || SyntaxFacts.GetContextualKeywordKind(name) != SyntaxKind.None
-            ? "@" + name
-            : name;
+    public static string Escape(string name) => UserText.Escaped(name);
 
     /// <summary>The name with a small first letter, as locals have it.</summary>
     public static string Local(string name) => char.ToLowerInvariant(name[0]) + name.Substring(1);

@@ -19,7 +19,7 @@ internal static class ModelText
             foreach (TypeDeclarationSyntax type in tree.GetRoot().DescendantNodes().OfType<TypeDeclarationSyntax>())
             {
                 if (!type.AttributeLists.SelectMany(static list => list.Attributes).Any(static attribute => attribute.Name.ToString().EndsWith("OdeModel", StringComparison.Ordinal))) continue;
-                return ModelReader.Read((INamedTypeSymbol)semantics.GetDeclaredSymbol(type)!, type, compilation, CancellationToken.None);
+                return new ModelReader((INamedTypeSymbol)semantics.GetDeclaredSymbol(type)!, type, compilation, CancellationToken.None).Read();
             }
         }
 

@@ -43,7 +43,11 @@ internal abstract class RunningModel
         {
             bool same = BitConverter.DoubleToInt64Bits(written[i]) == BitConverter.DoubleToInt64Bits(generated[i])
                 || (double.IsNaN(written[i]) && double.IsNaN(generated[i]));
-            Assert.True(same, $"{Names[i]} at t = {time:R}, state ({string.Join("; ", state)}): written {written[i]:R}, generated {generated[i]:R}");
+            string text = i < state.Length ? "" : Description.Observables[i - state.Length].Text;
+            Assert.True(
+                same,
+                $"{Names[i]} at t = {time:R}, state ({string.Join("; ", state)}), parameters ({string.Join("; ", parameters)}): "
+                + $"written {written[i]:R}, generated {generated[i]:R}\n{text}");
         }
     }
 

@@ -137,7 +137,7 @@ public sealed class RobustnessTests
         CSharpCompilation compilation = Compiling.Compile(Valid);
         var type = compilation.SyntaxTrees[0].GetRoot().DescendantNodes().OfType<ClassDeclarationSyntax>().Single();
         INamedTypeSymbol model = compilation.GetSemanticModel(type.SyntaxTree).GetDeclaredSymbol(type)!;
-        Assert.ThrowsAny<OperationCanceledException>(() => ModelReader.Read(model, type, compilation, new CancellationToken(canceled: true)));
+        Assert.ThrowsAny<OperationCanceledException>(new ModelReader(model, type, compilation, new CancellationToken(canceled: true)).Read);
     }
 
     [Fact]
