@@ -21,7 +21,10 @@ public sealed class AttributeOutsideModelTests
 
     [Fact]
     public async Task Marks_inside_a_model_and_other_attributes_are_not_told_of() =>
-        Assert.Empty(await Problems("[OdeModel] partial class Tank { [State] public partial double Level { get; set; } } class Other { [System.Obsolete] int A => 1; }"));
+        Assert.Empty(await Problems("""
+            [OdeModel] partial class Tank { [State] public partial double Level { get; set; } }
+            class Other { [System.Obsolete] int A => 1; }
+            """));
 
     private static Task<System.Collections.Immutable.ImmutableArray<Diagnostic>> Problems(string code) =>
         Compiling.Compile("using OdeDsl;\n" + code).WithAnalyzers([new AttributeOutsideModelAnalyzer()]).GetAnalyzerDiagnosticsAsync();

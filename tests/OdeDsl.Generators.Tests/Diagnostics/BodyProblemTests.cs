@@ -246,8 +246,12 @@ public sealed class BodyProblemTests
     [InlineData("[|F()|]; public virtual double F() => X")]
     [InlineData("[|F|]; public virtual double F => X")]
     [InlineData("[|ToDouble()|]; } public class Base { public virtual double ToDouble() => 1;")]
-    public void A_member_that_can_be_overridden(string expression) => Marked.ExpectOne("ODE0049", Marked.Equation(expression)
-        .Replace("sealed partial class Model", expression.Contains("Base", StringComparison.Ordinal) ? "partial class Model : Base" : "partial class Model", StringComparison.Ordinal));
+    public void A_member_that_can_be_overridden(string expression)
+    {
+        string declaration = expression.Contains("Base", StringComparison.Ordinal) ? "partial class Model : Base" : "partial class Model";
+        string source = Marked.Equation(expression).Replace("sealed partial class Model", declaration, StringComparison.Ordinal);
+        Marked.ExpectOne("ODE0049", source);
+    }
 
     [Fact]
     public void An_expression_nested_too_deeply()

@@ -102,7 +102,8 @@ public sealed class DeclarationProblemTests
     public void A_property_that_cannot_be_a_state_or_parameter(string id, string property)
     {
         // A rate for Z where it is a state, so that the missing rate is no second problem.
-        string rate = property.Contains("State", StringComparison.Ordinal) && !property.Contains("this", StringComparison.Ordinal) ? "[Rate(\"Z\")] double ZRate => 1;" : "";
+        bool isState = property.Contains("State", StringComparison.Ordinal) && !property.Contains("this", StringComparison.Ordinal);
+        string rate = isState ? "[Rate(\"Z\")] double ZRate => 1;" : "";
         Marked.ExpectOne(id, $$"""
             using OdeDsl;
             public class Base { public virtual double Z { get; set; } }

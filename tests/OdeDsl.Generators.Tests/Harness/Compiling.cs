@@ -50,7 +50,8 @@ internal sealed record GeneratorRun(CSharpCompilation Output, GeneratorRunResult
 
     /// <summary>Errors and warnings of the compiler in generated files.</summary>
     public Diagnostic[] InGeneratedFiles => [.. Output.GetDiagnostics().Where(diagnostic =>
-        diagnostic.Severity >= DiagnosticSeverity.Warning && diagnostic.Location.SourceTree is { } tree && Result.GeneratedSources.Any(source => source.SyntaxTree == tree))];
+        diagnostic.Severity >= DiagnosticSeverity.Warning
+        && Result.GeneratedSources.Any(source => source.SyntaxTree == diagnostic.Location.SourceTree))];
 
     public Diagnostic[] Errors => [.. Output.GetDiagnostics().Where(static diagnostic => diagnostic.Severity == DiagnosticSeverity.Error)];
 

@@ -37,7 +37,7 @@ internal static class Marked
         Assert.True(file >= 0, "No mark in the source.");
         int start = marked[file].IndexOf(Opening, StringComparison.Ordinal);
         int end = marked[file].IndexOf(Closing, StringComparison.Ordinal) - Opening.Length;
-        string[] sources = [.. marked.Select(static source => source.Replace(Opening, "", StringComparison.Ordinal).Replace(Closing, "", StringComparison.Ordinal))];
+        string[] sources = [.. marked.Select(Unmarked)];
 
         GeneratorRun run = Compiling.Run(sources);
         Diagnostic problem = Assert.Single(run.Problems);
@@ -48,4 +48,7 @@ internal static class Marked
         Assert.Equal(start, place.Start);
         return problem;
     }
+
+    private static string Unmarked(string source) =>
+        source.Replace(Opening, "", StringComparison.Ordinal).Replace(Closing, "", StringComparison.Ordinal);
 }

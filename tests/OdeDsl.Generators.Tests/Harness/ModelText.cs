@@ -18,8 +18,9 @@ internal static class ModelText
             SemanticModel semantics = compilation.GetSemanticModel(tree);
             foreach (TypeDeclarationSyntax type in tree.GetRoot().DescendantNodes().OfType<TypeDeclarationSyntax>())
             {
-                if (!type.AttributeLists.SelectMany(static list => list.Attributes).Any(static attribute => attribute.Name.ToString().EndsWith("OdeModel", StringComparison.Ordinal))) continue;
-                return new ModelReader((INamedTypeSymbol)semantics.GetDeclaredSymbol(type)!, type, compilation, CancellationToken.None).Read();
+                INamedTypeSymbol symbol = (INamedTypeSymbol)semantics.GetDeclaredSymbol(type)!;
+                if (symbol.GetAttributes().Any(static attribute => Attributes.Is(attribute, Attributes.Model)))
+                    return new ModelReader(symbol, type, compilation, CancellationToken.None).Read();
             }
         }
 

@@ -65,7 +65,8 @@ internal abstract class RunningModel
             _members =
             [
                 .. Description.States.Select(state => all.Single(member => member.GetCustomAttribute<RateAttribute>()?.State == state.Name)),
-                .. Description.Observables.Select(observable => all.Single(member => member.Name == observable.Name && member.GetCustomAttribute<ObservableAttribute>() is not null)),
+                .. Description.Observables.Select(observable => all.Single(member =>
+                    member.Name == observable.Name && member.GetCustomAttribute<ObservableAttribute>() is not null)),
             ];
         }
 

@@ -37,7 +37,10 @@ public sealed class RobustnessTests
         """;
 
     private static readonly string[] Fragments =
-        ["(", ")", "{", "}", "[", "]", ";", ",", ".", "=>", "?", ":", "1", "0.5", "\"a\"", "null", "int", "double", "static", "partial", "X", "this", "=", "++", "switch", "return", "new", "=> 1", "??", "await", "ref", "<T>"];
+    [
+        "(", ")", "{", "}", "[", "]", ";", ",", ".", "=>", "?", ":", "1", "0.5", "\"a\"", "null", "int", "double", "static", "partial",
+        "X", "this", "=", "++", "switch", "return", "new", "=> 1", "??", "await", "ref", "<T>",
+    ];
 
     [Theory]
     [InlineData(1)]
@@ -46,7 +49,8 @@ public sealed class RobustnessTests
     public void No_mutation_of_a_model_makes_the_generator_fail(int seed)
     {
         Random random = new(seed);
-        string[] tokens = [.. CSharpSyntaxTree.ParseText(Valid, Compiling.ParseOptions).GetRoot().DescendantTokens().Select(static token => token.ToFullString())];
+        SyntaxNode root = CSharpSyntaxTree.ParseText(Valid, Compiling.ParseOptions).GetRoot();
+        string[] tokens = [.. root.DescendantTokens().Select(static token => token.ToFullString())];
         for (int i = 0; i < 150; i++)
         {
             List<string> mutated = [.. tokens];
@@ -102,7 +106,18 @@ public sealed class RobustnessTests
     [Fact]
     public void A_problem_can_be_suppressed_by_a_pragma_by_options_and_in_the_project()
     {
-        const string Source = "using OdeDsl;\n[OdeModel] partial class Model\n{\n[State] public partial double X { get; set; }\ndouble gain;\n#pragma warning disable ODE0065\n[Rate(nameof(X))] double XRate => gain;\n#pragma warning restore ODE0065\n}";
+        const string Source = """
+            using OdeDsl;
+            [OdeModel]
+            partial class Model
+            {
+                [State] public partial double X { get; set; }
+                double gain;
+            #pragma warning disable ODE0065
+                [Rate(nameof(X))] double XRate => gain;
+            #pragma warning restore ODE0065
+            }
+            """;
         string open = Source.Replace("#pragma warning disable ODE0065", "", StringComparison.Ordinal);
         Assert.DoesNotContain(Compiling.Run(Source).Problems, static problem => !problem.IsSuppressed);
         Assert.Equal("ODE0065", Assert.Single(Compiling.Run(open).Problems).Id);
@@ -115,7 +130,12 @@ public sealed class RobustnessTests
     [Fact]
     public void A_model_whose_error_is_suppressed_gives_no_numbers_rather_than_wrong_ones()
     {
-        string source = Marked.Model("double gain = 3;\n#pragma warning disable ODE0065\n[Rate(nameof(X))] double XRate => gain * X;\n#pragma warning restore ODE0065");
+        string source = Marked.Model("""
+            double gain = 3;
+            #pragma warning disable ODE0065
+            [Rate(nameof(X))] double XRate => gain * X;
+            #pragma warning restore ODE0065
+            """);
         RunningModel model = RunningModel.Load(Compiling.Run(source));
         Assert.All(model.Generated(0, [1, 2], [3]), static rate => Assert.True(double.IsNaN(rate)));
     }
@@ -143,7 +163,14 @@ public sealed class RobustnessTests
     [Fact]
     public void An_error_in_an_equation_is_the_only_message_of_the_build()
     {
-        const string Use = "class Use { double A(Model m) => m.X + m.P; System.Type T => typeof(Model.Equations); void B(OdeDsl.Modeling.IOdeModel<Model, Model.Equations> m) { } void C(Model m) => B(m); }";
+        const string Use = """
+            class Use
+            {
+                double A(Model m) => m.X + m.P;
+                void B(OdeDsl.Modeling.IOdeModel<Model, Model.Equations> m) { }
+                void C(Model m) => B(m);
+            }
+            """;
         GeneratorRun run = Compiling.Run(Marked.Equation("Math.Round(X, 2)"), Use);
         Assert.Single(run.Problems);
         Assert.Empty(run.Errors);

@@ -242,11 +242,11 @@ public sealed class LanguageTests
         """);
 
     [Fact]
-    public void A_sum_of_twenty_thousand_terms_is_read()
+    public void A_sum_of_thousands_of_terms_is_read()
     {
-        string sum = string.Join(" + ", Enumerable.Range(0, 20_000).Select(static i => i % 2 == 0 ? "X" : $"{i} * Y"));
+        string sum = string.Join(" + ", Enumerable.Range(0, 5_000).Select(static i => i % 2 == 0 ? "X" : $"{i} * Y"));
         var reading = ModelText.Read(Marked.Equation(sum));
         Assert.Empty(reading.Problems);
-        Assert.True(reading.Model!.Nodes.Count > 20_000);
+        Assert.True(reading.Model!.Nodes.Count > 5_000);
     }
 }
