@@ -24,11 +24,11 @@ public sealed partial class SludgeBasin
     public partial double Feed { get; set; }
 
     /// <summary>Bacteria, as chemical oxygen demand.</summary>
-    [State(Initial = 40, Lower = 0, Upper = 160, Unit = "g/m3")]
+    [State(Initial = 40, Lower = 0, Upper = 140, Unit = "g/m3")]
     public partial double Bacteria { get; set; }
 
     /// <summary>Ciliates, as chemical oxygen demand.</summary>
-    [State(Initial = 20, Lower = 0, Upper = 80, Unit = "g/m3")]
+    [State(Initial = 20, Lower = 0, Upper = 50, Unit = "g/m3")]
     public partial double Ciliates { get; set; }
 
     /// <summary>Flow through the basin over its volume.</summary>

@@ -24,11 +24,11 @@ public sealed partial class TieLineMachine
 
     /// <summary>Angle of the rotor ahead of the grid, electrical.</summary>
     [Angle]
-    [State(Initial = 0.6, Lower = -Math.PI, Upper = Math.PI, Unit = "rad")]
+    [State(Initial = 1.6, Lower = -Math.PI, Upper = Math.PI, Unit = "rad")]
     public partial double Angle { get; set; }
 
     /// <summary>Speed of the rotor beyond the grid's, electrical.</summary>
-    [State(Initial = 1.0, Lower = -12, Upper = 24, Unit = "rad/s")]
+    [State(Initial = 4.0, Lower = -12, Upper = 24, Unit = "rad/s")]
     public partial double Slip { get; set; }
 
     /// <summary>Power of the turbine, per unit of the machine's rating.</summary>

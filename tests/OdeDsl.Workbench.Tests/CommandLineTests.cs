@@ -136,6 +136,18 @@ public class CommandLineTests
     }
 
     [Fact]
+    public async Task Figures_are_written_as_files_of_their_own_when_asked_for()
+    {
+        using Hosts.Folder folder = new();
+
+        await Hosts.Run(Program, ["--output", folder.Path, "--figures"]);
+
+        Assert.Contains("model-1-portrait.svg", folder.Names);
+        Assert.All(folder.Names.Where(static name => name.EndsWith(".svg", StringComparison.Ordinal)), name =>
+            Assert.Contains("@font-face", System.Xml.Linq.XElement.Parse(folder.Read(name)).Value, StringComparison.Ordinal));
+    }
+
+    [Fact]
     public async Task Equal_seeds_give_equal_files_apart_from_when_they_were_made()
     {
         using Hosts.Folder folder = new();

@@ -66,6 +66,20 @@ public class FigureTests
     }
 
     [Fact]
+    public void A_point_on_the_seam_is_shown_at_both_ends()
+    {
+        PlanePicture picture = new()
+        {
+            Id = "f", Title = "T", Caption = "C", X = Turn, Y = Slip, Marks = [new PlaneMark(MarkKind.StableRest, new PlanePoint(3 * Math.PI, 0), "rest 1")],
+        };
+
+        string svg = PlaneFigure.Draw(picture).Svg;
+
+        // Two in the plot and one in the legend.
+        Assert.Equal(3, svg.Split("class=\"stable-rest\"").Length - 1);
+    }
+
+    [Fact]
     public void Ticks_stand_at_round_numbers_inside_the_range()
     {
         Assert.Equal(["−40", "−30", "−20", "−10", "0", "10"], Ticks.Linear(-45, 15, 8).Select(static tick => tick.Label));

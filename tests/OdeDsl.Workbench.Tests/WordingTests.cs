@@ -36,6 +36,11 @@ public class WordingTests
     [InlineData("", "")]
     public void Units_are_written_as_people_write_them(string unit, string expected) => Assert.Equal(expected, UnitText.Pretty(unit));
 
+    [Theory]
+    [InlineData("error 8.2E-006 at 1E-06, slip -1.2925E-26 (-4.89 %)", "error 8.2×10⁻⁶ at 10⁻⁶, slip −1.2925×10⁻²⁶ (−4.89 %)")]
+    [InlineData("from -5 to -0.5; a-1, 2026-12-01, rest 2, E5, x1e5y", "from −5 to −0.5; a-1, 2026-12-01, rest 2, E5, x1e5y")]
+    public void Numbers_in_sentences_are_set_like_all_others(string sentence, string expected) => Assert.Equal(expected, NumberText.Typeset(sentence));
+
     [Fact]
     public void A_quantity_without_unit_is_labelled_as_a_pure_number() => Assert.Equal("Conversion (1)", UnitText.Labelled("Conversion", ""));
 

@@ -60,7 +60,7 @@ internal static class MethodFigure
         if (method % 3 == 2)
         {
             markup.Empty(
-                "rect", ("class", kind), ("x", Markup.Coordinate(x - 4)), ("y", Markup.Coordinate(y - 4)), ("width", "8"), ("height", "8"));
+                "rect", ("class", kind), ("x", Markup.Coordinate(x - 6)), ("y", Markup.Coordinate(y - 6)), ("width", "12"), ("height", "12"));
             return;
         }
 
@@ -68,7 +68,7 @@ internal static class MethodFigure
     }
 
     private static void Ring(Markup markup, double x, double y) => markup.Empty(
-        "circle", ("class", "chosen"), ("cx", Markup.Coordinate(x)), ("cy", Markup.Coordinate(y)), ("r", "10"));
+        "circle", ("class", "chosen"), ("cx", Markup.Coordinate(x)), ("cy", Markup.Coordinate(y)), ("r", "11"));
 
     private static Legend LegendFor(IntegrationMethod[] methods, MethodAnswer answer)
     {

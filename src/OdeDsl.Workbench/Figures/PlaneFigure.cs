@@ -112,6 +112,9 @@ internal static class PlaneFigure
         if (!(x >= frame.Left - 1 && x <= frame.Right + 1 && y >= frame.Top - 1 && y <= frame.Bottom + 1)) return;
         Marks.Draw(markup, mark.Kind, x, y);
         Write(markup, frame, mark.Label, x, y - 11);
+        // On the seam of a circle a point is at both ends of the axis.
+        if (frame.X.Period is not null && x <= frame.Left + 1) Marks.Draw(markup, mark.Kind, x + frame.Width, y);
+        if (frame.Y.Period is not null && y >= frame.Bottom - 1) Marks.Draw(markup, mark.Kind, x, y - frame.Height);
     }
 
     private static void DrawLabel(Markup markup, Frame frame, PlaneCurve curve)

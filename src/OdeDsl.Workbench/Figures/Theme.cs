@@ -55,7 +55,7 @@ internal static class Theme
         .figure .wanted{stroke:var(--unsteady);stroke-width:1.6;stroke-dasharray:7 4}
         .figure .method-0{stroke:var(--steady);fill:var(--steady);stroke-width:1.8}
         .figure .method-1{stroke:var(--unsteady);fill:var(--paper);stroke-width:1.8;stroke-dasharray:7 4}
-        .figure .method-2{stroke:var(--level);fill:var(--level);stroke-width:1.8;stroke-dasharray:2 4}
+        .figure .method-2{stroke:var(--level);fill:none;stroke-width:1.8;stroke-dasharray:2 4}
         .figure path.method-0,.figure path.method-1,.figure path.method-2{fill:none}
         .figure .spot{stroke-dasharray:none}
         .figure .chosen{fill:none;stroke:var(--ink);stroke-width:2}
@@ -67,12 +67,13 @@ internal static class Theme
     /// <summary>All rules a figure needs when it stands alone.</summary>
     public static string Alone { get; } = Fonts + Colours + Figures;
 
+    // Without "block" a browser on a machine without any font never begins to read the letters.
     private static string Face(string resource, string weight)
     {
         using Stream stream = typeof(Theme).Assembly.GetManifestResourceStream(resource)
             ?? throw new InvalidOperationException($"The embedded font {resource} is missing from the build.");
         byte[] font = new byte[stream.Length];
         stream.ReadExactly(font);
-        return $"@font-face{{font-family:\"OdeDsl Sans\";font-weight:{weight};src:url(data:font/woff2;base64,{Convert.ToBase64String(font)}) format(\"woff2\")}}\n";
+        return $"@font-face{{font-family:\"OdeDsl Sans\";font-weight:{weight};src:url(data:font/woff2;base64,{Convert.ToBase64String(font)}) format(\"woff2\");font-display:block}}\n";
     }
 }

@@ -16,6 +16,9 @@ internal sealed class AssessCommand
 
     public required AssessmentOptions Options { get; init; }
 
+    /// <summary>Whether each figure also becomes a file of its own.</summary>
+    public required bool WritesFigures { get; init; }
+
     /// <summary>The full path of the folder to write to.</summary>
     public required string Folder { get; init; }
 
@@ -32,7 +35,11 @@ internal sealed class AssessCommand
             Provenance provenance = new(Surroundings.Clock.GetUtcNow(), Options.Seed, Options.SampledStarts, Options.WantedError);
             WholeFiles.Write(
                 Folder,
-                [("report.html", HtmlReport.Write(Title, reports, provenance)), ("assessment.json", AssessmentFile.Write(reports, provenance))]);
+                [
+                    ("report.html", HtmlReport.Write(Title, reports, provenance)),
+                    ("assessment.json", AssessmentFile.Write(reports, provenance)),
+                    .. reports.Where(_ => WritesFigures).SelectMany(static report => report.Figures).Select(static figure => (figure.Id + ".svg", figure.Alone())),
+                ]);
             printer.PrintEnd(reports, Folder);
             return reports.TrueForAll(static report => report.Assessment is not null) ? CommandLine.Done : CommandLine.Failed;
         }

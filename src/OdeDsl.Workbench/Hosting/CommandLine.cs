@@ -68,10 +68,11 @@ internal static class CommandLine
             HelpName = "N",
             DefaultValueFactory = _ => options.Seed,
         };
+        Option<bool> figures = new("--figures") { Description = "Also write each figure as an SVG file of its own." };
         RootCommand root = new($"{title}: assesses each model and writes report.html and assessment.json. "
             + "Exit codes: 0 done, 1 an analysis failed or a file could not be written, 2 bad usage.")
         {
-            output, models, seed,
+            output, models, seed, figures,
         };
         root.SetAction((parsed, cancellation) =>
         {
@@ -81,6 +82,7 @@ internal static class CommandLine
                 Systems = [.. systems.Where(system => wanted.Length == 0 || wanted.Contains(system.Description.Name, StringComparer.OrdinalIgnoreCase))],
                 Title = title,
                 Options = options with { Seed = parsed.GetValue(seed) },
+                WritesFigures = parsed.GetValue(figures),
                 Folder = Path.GetFullPath(parsed.GetValue(output)!),
                 Surroundings = surroundings,
             };

@@ -8,6 +8,7 @@ namespace OdeDsl.Workbench.Portraits;
 internal static class Region
 {
     private const double Margin = 0.05;
+    private const double Negligible = 1e-6;
 
     /// <summary>
     /// The state bounds, widened to hold every rest and cycle found; where a bound is missing, the extent of what was found and of the
@@ -38,13 +39,15 @@ internal static class Region
         double lower = Math.Min(double.IsFinite(state.Lower) ? state.Lower : double.PositiveInfinity, found.Min());
         double upper = Math.Max(double.IsFinite(state.Upper) ? state.Upper : double.NegativeInfinity, found.Max());
         double slack = lower == upper ? Math.Max(1, Math.Abs(lower)) : Margin * (upper - lower);
-        bool isWidened = lower < state.Lower || upper > state.Upper || !double.IsFinite(state.Lower) || !double.IsFinite(state.Upper) || lower == upper;
+        // What lies outside by rounding only does not widen.
+        bool isLowerKept = double.IsFinite(state.Lower) && lower >= state.Lower - Negligible * slack && lower != upper;
+        bool isUpperKept = double.IsFinite(state.Upper) && upper <= state.Upper + Negligible * slack && lower != upper;
         return new Axis
         {
             Name = state.Name,
             Unit = state.Unit,
-            Lower = isWidened && lower != state.Lower ? lower - slack : lower,
-            Upper = isWidened && upper != state.Upper ? upper + slack : upper,
+            Lower = isLowerKept ? state.Lower : lower - slack,
+            Upper = isUpperKept ? state.Upper : upper + slack,
         };
     }
 }

@@ -1,5 +1,6 @@
 using OdeDsl.Assessment;
 using OdeDsl.Equilibria;
+using OdeDsl.Modeling;
 using OdeDsl.Workbench.Wording;
 
 namespace OdeDsl.Workbench.Report;
@@ -13,8 +14,11 @@ internal sealed record Answer(string Question, string Short, string Full);
 /// <summary>The four answers of an assessment in words, for summaries on page and console.</summary>
 internal static class Answers
 {
+    // A rest found to rounding of double numbers misses zero by about this share of the state's range.
+    private const double RoundingShare = 1e-13;
+
     public static IReadOnlyList<Answer> Of(ModelAssessment assessment) =>
-        [Rests(assessment.Rests), Motion(assessment.Motions), Margin(assessment.Margins), Method(assessment.Method)];
+        [Rests(assessment.Rests), Motion(assessment.Motions, assessment.Description.TimeUnit), Margin(assessment.Margins), Method(assessment.Method)];
 
     private static Answer Rests(EquilibriumSearchResult rests)
     {
@@ -23,12 +27,12 @@ internal static class Answers
         return new Answer("Where it rests", rests.Equilibria.Length == 0 ? "none found" : kinds, full);
     }
 
-    private static Answer Motion(MotionsAnswer motions)
+    private static Answer Motion(MotionsAnswer motions, string timeUnit)
     {
         MotionVerdict verdict = motions.Working;
         string goal = verdict.Index is null ? "" : $" ({verdict.Label})";
         string period = verdict.Kind is MotionKind.Oscillates or MotionKind.Rotates && verdict.Index is { } index
-            ? $", period {NumberText.Format(motions.Cycles[index].Period)}"
+            ? $", period {NumberText.With(motions.Cycles[index].Period, timeUnit)}"
             : "";
         return new Answer("Whether it keeps moving", Words.Of(verdict.Kind) + goal + period, verdict.Text);
     }
@@ -47,6 +51,13 @@ internal static class Answers
     /// <summary>The distance in per cent, signed, or a dash if there is none.</summary>
     public static string Percent(MarginEdge edge) =>
         edge.Percent is { } percent ? $"{(percent > 0 ? "+" : "")}{NumberText.Format(percent, 3)}\u00A0%" : "–";
+
+    /// <summary>A coordinate of a rest, with zero for what is no more than rounding beside the state's range.</summary>
+    public static double WithoutRounding(double value, StateDescription state)
+    {
+        double range = state.Upper - state.Lower;
+        return Math.Abs(value) <= RoundingShare * (double.IsFinite(range) ? range : 1) ? 0 : value;
+    }
 
     private static double Size(MarginEdge edge) =>
         edge is { Event: not (MarginEvent.None or MarginEvent.Unknown), Percent: { } percent } ? Math.Abs(percent) : double.PositiveInfinity;

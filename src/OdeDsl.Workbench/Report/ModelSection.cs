@@ -22,9 +22,9 @@ internal static class ModelSection
         }
 
         markup.Open("dl", ("class", "answers"));
-        foreach (Answer answer in Answers.Of(assessment)) markup.Element("dt", answer.Question).Element("dd", answer.Full);
+        foreach (Answer answer in Answers.Of(assessment)) markup.Element("dt", answer.Question).Element("dd", NumberText.Typeset(answer.Full));
         markup.Close().Line();
-        foreach (string remark in assessment.Remarks) markup.Element("p", remark, ("class", "caution")).Line();
+        Page.Paragraphs(markup, assessment.Remarks, "caution");
         foreach (Figure figure in model.Figures.Where(static figure => !IsAppended(figure))) Page.Figure(markup, figure);
         Rests(markup, assessment);
         MotionsPart.Write(markup, assessment);
@@ -50,22 +50,22 @@ internal static class ModelSection
                 markup,
                 "Rests, with the leading mode of the motion about each: the fastest to grow, or else the slowest to decay",
                 ["Rest", "Kind", .. description.States.Select(static state => "#" + UnitText.Labelled(state.Name, state.Unit)), "#" + UnitText.Labelled("Changes by e in", time), "#" + UnitText.Labelled("Period", time), "#Damping ratio", "#Largest rate left"],
-                assessment.Rests.Equilibria.Select((rest, i) => RestRow(rest, i)));
+                assessment.Rests.Equilibria.Select((rest, i) => RestRow(description, rest, i)));
         }
 
         Page.Paragraphs(markup, [assessment.Rests.Completeness], "small quiet");
     }
 
-    private static IReadOnlyList<string> RestRow(Equilibrium rest, int index)
+    private static IReadOnlyList<string> RestRow(ModelDescription description, Equilibrium rest, int index)
     {
         LinearMode? mode = rest.LeadingMode;
         return
         [
             Words.Rest(index),
             Words.Kind(rest),
-            .. rest.State.Select(static value => NumberText.Format(value)),
-            Words.FactorTime(mode, static value => NumberText.Format(value, 3)),
-            mode is { Oscillates: true } ? NumberText.Format(mode.Period, 3) : "–",
+            .. rest.State.Select((value, i) => NumberText.Format(Answers.WithoutRounding(value, description.States[i]))),
+            Words.FactorTime(mode, static value => NumberText.Format(value)),
+            mode is { Oscillates: true } ? NumberText.Format(mode.Period) : "–",
             mode is { Oscillates: true } ? NumberText.Format(mode.DampingRatio, 3) : "–",
             NumberText.Format(rest.Residual, 2),
         ];
@@ -83,8 +83,8 @@ internal static class ModelSection
             [
                 margin.Parameter.Name,
                 NumberText.With(margin.Value, margin.Parameter.Unit),
-                Edge(margin.Down, margin.Parameter.Unit),
-                Edge(margin.Up, margin.Parameter.Unit),
+                Edge(margin.Down, margin.Parameter.Unit, "down to"),
+                Edge(margin.Up, margin.Parameter.Unit, "up to"),
             ]));
         Page.Paragraphs(
             markup,
@@ -96,9 +96,9 @@ internal static class ModelSection
             "small quiet");
     }
 
-    private static string Edge(MarginEdge edge, string unit) => edge.Event switch
+    private static string Edge(MarginEdge edge, string unit, string way) => edge.Event switch
     {
-        MarginEvent.None => $"none down to or up to {NumberText.With(edge.ExploredTo, unit)}",
+        MarginEvent.None => $"none {way} {NumberText.With(edge.ExploredTo, unit)}",
         MarginEvent.Unknown => $"not known beyond {NumberText.With(edge.Value ?? double.NaN, unit)}",
         _ => $"{NumberText.With(edge.Value ?? double.NaN, unit, 6)} ({Answers.Percent(edge)}): {Words.Of(edge.Event)}",
     };

@@ -1,4 +1,5 @@
 using OdeDsl.Workbench.Figures;
+using OdeDsl.Workbench.Wording;
 
 namespace OdeDsl.Workbench.Report;
 
@@ -28,6 +29,7 @@ internal static class Page
         table{border-collapse:collapse;width:100%;font-size:.86rem;overflow-wrap:normal}
         caption{text-align:left;padding:.2rem 0;color:var(--quiet)}
         th,td{text-align:left;vertical-align:top;padding:.35rem .7rem .35rem 0;border-bottom:1px solid var(--rule)}
+        tbody th{white-space:nowrap}
         thead th{border-bottom:2px solid var(--quiet)}
         td.number,th.number{text-align:right;white-space:nowrap;font-variant-numeric:tabular-nums}
         code{font-family:ui-monospace,"OdeDsl Sans",monospace;font-size:.9em}
@@ -76,9 +78,10 @@ internal static class Page
         markup.Element("figcaption", figure.Caption).Close().Line();
     }
 
+    /// <summary>Writes sentences, a paragraph each, with their numbers set for people.</summary>
     public static void Paragraphs(Markup markup, IEnumerable<string> texts, string kind = "")
     {
-        foreach (string text in texts.Where(static text => text.Length > 0)) markup.Element("p", text, ("class", kind)).Line();
+        foreach (string text in texts.Where(static text => text.Length > 0)) markup.Element("p", NumberText.Typeset(text), ("class", kind)).Line();
     }
 
     private static string KindOf(string heading) => heading.StartsWith('#') ? "number" : "text";

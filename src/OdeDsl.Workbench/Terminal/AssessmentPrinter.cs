@@ -70,7 +70,7 @@ internal sealed class AssessmentPrinter
                 [
                     Words.Rest(index),
                     Words.Kind(rest),
-                    .. rest.State.Select(static value => NumberText.Plain(value)),
+                    .. rest.State.Select((value, i) => NumberText.Plain(Answers.WithoutRounding(value, description.States[i]))),
                     Words.FactorTime(rest.LeadingMode, static value => NumberText.Plain(value)),
                 ]);
         }

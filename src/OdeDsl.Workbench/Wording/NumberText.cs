@@ -1,9 +1,10 @@
 using System.Globalization;
+using System.Text.RegularExpressions;
 
 namespace OdeDsl.Workbench.Wording;
 
 /// <summary>Numbers for people: one way for the whole report.</summary>
-internal static class NumberText
+internal static partial class NumberText
 {
     /// <summary>Significant digits of computed numbers in tables, figures and captions.</summary>
     public const int Digits = 4;
@@ -59,6 +60,24 @@ internal static class NumberText
         double noise = NoisePart * (maximum - minimum);
         return (Math.Abs(minimum) <= noise ? 0 : minimum, Math.Abs(maximum) <= noise ? 0 : maximum);
     }
+
+    /// <summary>A sentence with the numbers in it set as <see cref="Format"/> sets them: true minus signs, powers of ten.</summary>
+    public static string Typeset(string sentence)
+    {
+        string powers = PowerOfTen().Replace(sentence, static match =>
+        {
+            string exponent = Superscript(int.Parse(match.Groups["exponent"].ValueSpan, NumberStyles.AllowLeadingSign, CultureInfo.InvariantCulture));
+            string mantissa = match.Groups["mantissa"].Value;
+            return (mantissa == "1" ? "" : mantissa + "×") + "10" + exponent;
+        });
+        return MinusSign().Replace(powers, "−");
+    }
+
+    [GeneratedRegex(@"(?<![\w.])(?<mantissa>\d+(\.\d+)?)[eE](?<exponent>[+-]?\d{1,4})(?![\w.]\w)")]
+    private static partial Regex PowerOfTen();
+
+    [GeneratedRegex(@"(?<![\w.)\]])-(?=\d)")]
+    private static partial Regex MinusSign();
 
     /// <summary>A whole number raised, for exponents.</summary>
     public static string Superscript(int value)

@@ -97,7 +97,7 @@ internal static class Words
 
     /// <summary>The recommended method with its tolerance, or that there is none.</summary>
     public static string Recommendation(MethodAnswer answer) => answer is { Recommended: { } method, RelativeTolerance: { } tolerance }
-        ? $"{Of(method)}, relative tolerance {NumberText.Plain(tolerance, 2)}"
+        ? $"{Of(method)}, relative tolerance {NumberText.Format(tolerance, 2)}"
         : "none reached the wanted accuracy";
 
     /// <summary>A count with its noun: "1 rest", "3 rests".</summary>
