@@ -10,7 +10,16 @@ internal static class WholeFiles
     /// <exception cref="UnauthorizedAccessException">Nothing may be written there.</exception>
     public static void Prepare(string folder)
     {
-        Directory.CreateDirectory(folder);
+        if (File.Exists(folder)) throw new IOException($"'{folder}' is a file; a folder is needed.");
+        try
+        {
+            Directory.CreateDirectory(folder);
+        }
+        catch (FileNotFoundException missing)
+        {
+            throw new IOException($"The folder '{folder}' cannot be made.", missing);
+        }
+
         string probe = TemporaryName(Path.Combine(folder, "probe"));
         File.WriteAllBytes(probe, []);
         File.Delete(probe);

@@ -41,7 +41,7 @@ internal static class Answers
     {
         if (margins.Narrowest is not { } narrowest)
             return new Answer("How far from a change", "none found in the explored ranges", "No change of the attractors was found in the explored range of any parameter.");
-        MarginEdge nearest = Size(narrowest.Down) <= Size(narrowest.Up) ? narrowest.Down : narrowest.Up;
+        MarginEdge nearest = narrowest.Nearest;
         string place = $"{narrowest.Parameter.Name} {Percent(nearest)} ({NumberText.With(nearest.Value ?? double.NaN, narrowest.Parameter.Unit)})";
         return new Answer("How far from a change", $"{place}: {Words.Of(nearest.Event)}", nearest.Text);
     }
@@ -58,7 +58,4 @@ internal static class Answers
         double range = state.Upper - state.Lower;
         return Math.Abs(value) <= RoundingShare * (double.IsFinite(range) ? range : 1) ? 0 : value;
     }
-
-    private static double Size(MarginEdge edge) =>
-        edge is { Event: not (MarginEvent.None or MarginEvent.Unknown), Percent: { } percent } ? Math.Abs(percent) : double.PositiveInfinity;
 }

@@ -36,4 +36,17 @@ public sealed record ModelAssessment
 
     /// <summary>What could not be answered and why, or what deserves attention; a sentence each.</summary>
     public required IReadOnlyList<string> Remarks { get; init; }
+
+    /// <summary>The four answers, a line each.</summary>
+    /// <returns>Lines of text, in invariant culture.</returns>
+    public override string ToString() => string.Join(
+        '\n',
+        [
+            Description.Name,
+            "Where it rests: " + Rests.Completeness,
+            "Whether it keeps moving: " + Motions.Working.Text,
+            "How far from a change: " + (Margins.Narrowest?.Nearest.Text ?? Margins.Completeness),
+            "Which method computes it: " + Method.Reason,
+            .. Remarks,
+        ]);
 }

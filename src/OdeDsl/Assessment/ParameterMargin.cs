@@ -26,6 +26,9 @@ public sealed record ParameterMargin
     /// </summary>
     public double NearestPercent => Math.Min(Size(Down), Size(Up));
 
+    /// <summary>The nearer of the two edges; the lower one if there is no change on either side.</summary>
+    public MarginEdge Nearest => Size(Down) <= Size(Up) ? Down : Up;
+
     private static double Size(MarginEdge edge) =>
         edge is { Event: not (MarginEvent.None or MarginEvent.Unknown), Percent: { } percent } ? Math.Abs(percent) : double.PositiveInfinity;
 }

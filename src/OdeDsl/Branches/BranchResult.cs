@@ -1,3 +1,4 @@
+using System.Globalization;
 using OdeDsl.Modeling;
 
 namespace OdeDsl.Branches;
@@ -37,6 +38,16 @@ public sealed record BranchResult
 
     /// <summary>The parameter that moved.</summary>
     public ParameterDescription Parameter => Description.Parameters[ParameterIndex];
+
+    /// <summary>The branch in a few lines: where it went, its special points, why it ended.</summary>
+    /// <returns>Lines of text, in invariant culture.</returns>
+    public override string ToString() => string.Join(
+        '\n',
+        [
+            string.Create(CultureInfo.InvariantCulture, $"{Description.Name}: {Points.Count} equilibria along {Parameter.Name}, from {From:G6} towards {To:G6} {Parameter.Unit}").TrimEnd(),
+            .. SpecialPoints.Select(point => string.Create(CultureInfo.InvariantCulture, $"{point.Kind} at {point.Parameter:G8} {Parameter.Unit}").TrimEnd()),
+            EndText,
+        ]);
 
     /// <summary>The special points of one kind, in the order of the branch.</summary>
     /// <param name="kind">The kind.</param>

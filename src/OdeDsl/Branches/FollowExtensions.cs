@@ -89,7 +89,9 @@ public static class FollowExtensions
         if (nearest is not null) return nearest.State;
         ParameterDescription moved = system.Description.Parameters[parameter];
         string where = string.Create(CultureInfo.InvariantCulture, $"{moved.Name} = {system.Parameters[parameter]:G6} {moved.Unit}").TrimEnd();
-        throw new InvalidOperationException(
-            $"No equilibrium of {system.Description.Name} was found in the state bounds at {where}. {found.Completeness}");
+        string what = found.Equilibria.IsEmpty
+            ? "No equilibrium was found"
+            : "Only rests that slide along a switching surface were found, which cannot be followed,";
+        throw new InvalidOperationException($"{what} in the state bounds of {system.Description.Name} at {where}. {found.Completeness}");
     }
 }

@@ -5,8 +5,13 @@ namespace OdeDsl.Branches;
 /// <summary>Finds which parameter a selector such as <c>tank =&gt; tank.TankArea</c> reads, by reading copies with distinct marker values.</summary>
 internal static class ParameterSelector
 {
-    // Two sets of markers: a selector that computes something would have to hit the same parameter's marker in both.
-    private static readonly (double First, double Step)[] MarkerSets = [(1.375, 0.8125), (-211.5, -3.28125)];
+    // Several sets of markers, of either sign, small and large, rising and falling: a selector that computes or chooses something would
+    // have to hit the same parameter's marker in all of them.
+    private static readonly (double First, double Step)[] MarkerSets =
+        [(1.375, 0.8125), (-211.5, -3.28125), (1.75e9, 3.5e6), (-2.5e9, 1.25e6), (3e-9, 7e-12), (6.5e6, -1.5e3)];
+
+    // Far below what any condition is about, far above rounding.
+    private const double OwnValueMove = 1e-9;
 
     /// <summary>The index of the selected parameter.</summary>
     /// <exception cref="ArgumentException">The selector does not return one of the model's parameters unchanged.</exception>
@@ -14,8 +19,8 @@ internal static class ParameterSelector
         where TModel : class, IOdeModel<TModel, TSystem>
         where TSystem : struct, IOdeSystem
     {
-        int found = Probe(model, selector, MarkerSets[0]);
-        if (found >= 0 && Probe(model, selector, MarkerSets[1]) == found) return found;
+        int[] found = [.. MarkerSets.Select(markers => Probe(model, selector, markers)).Append(ProbeAtOwnValues(model, selector)).Distinct()];
+        if (found is [>= 0 and int index]) return index;
         string names = string.Join(", ", TSystem.Description.Parameters.Select(static parameter => parameter.Name));
         throw new ArgumentException(
             names.Length == 0
@@ -29,9 +34,27 @@ internal static class ParameterSelector
         where TModel : class, IOdeModel<TModel, TSystem>
         where TSystem : struct, IOdeSystem
     {
-        TModel copy = model.Copy();
         double[] parameters = new double[TSystem.Description.Parameters.Length];
         for (int i = 0; i < parameters.Length; i++) parameters[i] = markers.First + i * markers.Step;
+        return Probe(model, selector, parameters);
+    }
+
+    // The model's own values, each moved by another small part, so that conditions on them hold as they do in the model.
+    private static int ProbeAtOwnValues<TModel, TSystem>(IOdeModel<TModel, TSystem> model, Func<TModel, double> selector)
+        where TModel : class, IOdeModel<TModel, TSystem>
+        where TSystem : struct, IOdeSystem
+    {
+        double[] parameters = new double[TSystem.Description.Parameters.Length];
+        model.ReadParameters(parameters);
+        for (int i = 0; i < parameters.Length; i++) parameters[i] = parameters[i] * (1 + (i + 1) * OwnValueMove) + (i + 1) * OwnValueMove * OwnValueMove;
+        return Probe(model, selector, parameters);
+    }
+
+    private static int Probe<TModel, TSystem>(IOdeModel<TModel, TSystem> model, Func<TModel, double> selector, double[] parameters)
+        where TModel : class, IOdeModel<TModel, TSystem>
+        where TSystem : struct, IOdeSystem
+    {
+        TModel copy = model.Copy();
         copy.WriteParameters(parameters);
         // States are no parameters: a selector that reads one gets a value that equals no marker.
         double[] state = new double[TSystem.Description.States.Length];

@@ -57,10 +57,10 @@ public sealed record EquilibriumSearchResult
                     $"The last new equilibrium was found by start {LastNewStart}; the share of landings still unseen is estimated at {UnseenShare:P1}.");
             string surfaces = SurfacesSearched == 0
                 ? ""
-                : string.Create(CultureInfo.InvariantCulture, $" Rests by sliding were sought on {SurfacesSearched} switching surfaces, one at a time.");
+                : string.Create(CultureInfo.InvariantCulture, $" Rests by sliding were sought on {SurfacesSearched} switching {(SurfacesSearched == 1 ? "surface" : "surfaces")}, one at a time.");
             return string.Create(
                 CultureInfo.InvariantCulture,
-                $"{Starts} starts {regimes}: {Landed} ended on {Equilibria.Length} equilibria inside the bounds. {last}{surfaces} This is evidence, not a proof that there are no others.");
+                $"{Starts} starts {regimes}: {Landed} ended on {Equilibria.Length} {(Equilibria.Length == 1 ? "equilibrium" : "equilibria")} inside the bounds. {last}{surfaces} This is evidence, not a proof that there are no others.");
         }
     }
 }

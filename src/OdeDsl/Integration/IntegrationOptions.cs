@@ -63,6 +63,12 @@ public abstract record IntegrationOptions
                 $"Double precision cannot serve a relative tolerance below {SmallestRelativeTolerance:g3}; choose a larger one.");
         }
 
+        if (RelativeTolerance >= 1)
+        {
+            throw new ArgumentOutOfRangeException(
+                nameof(RelativeTolerance), RelativeTolerance, "A relative tolerance of one or more permits errors as large as the state; choose a smaller one.");
+        }
+
         if (AbsoluteTolerance is { } absolute) RequirePositive(absolute, nameof(AbsoluteTolerance));
         if (InitialStep is { } initial) RequirePositive(initial, nameof(InitialStep));
         if (MaximumStep is { } maximum) RequirePositive(maximum, nameof(MaximumStep));

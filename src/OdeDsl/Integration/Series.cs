@@ -1,3 +1,5 @@
+using System.Globalization;
+
 namespace OdeDsl.Integration;
 
 /// <summary>One state or observable along a <see cref="Trajectory"/>. Safe to use from several threads at once.</summary>
@@ -38,6 +40,10 @@ public sealed class Series
 
     /// <summary>The largest value, searched between the steps' ends too, and its time; the first if there are several.</summary>
     public Extremum Maximum => ExtremumSearch.Find(this, sign: -1);
+
+    /// <summary>The name, the unit and the range, in invariant culture.</summary>
+    /// <returns>For example <c>Level: -15.2 to 3.1 m</c>.</returns>
+    public override string ToString() => string.Create(CultureInfo.InvariantCulture, $"{Name}: {Minimum.Value:G6} to {Maximum.Value:G6} {Unit}").TrimEnd();
 
     internal int StepCount => run.Store.NodeCount - 1;
 

@@ -59,6 +59,7 @@ public sealed class Trajectory
     {
         get
         {
+            ArgumentNullException.ThrowIfNull(name);
             ModelDescription description = System.Description;
             int state = description.IndexOfState(name);
             if (state >= 0) return new Series(this, name, description.States[state].Unit, state, -1);
@@ -76,11 +77,14 @@ public sealed class Trajectory
     /// <param name="expression">Supplied by the compiler: the property's text.</param>
     /// <returns>Its course.</returns>
     /// <exception cref="KeyNotFoundException">The text does not end in the name of a state or observable.</exception>
+    /// <exception cref="ArgumentException">The text is an expression that computes something.</exception>
     public Series this[double member, [CallerArgumentExpression(nameof(member))] string expression = ""]
     {
         get
         {
             _ = member;
+            if (!expression.All(static letter => char.IsLetterOrDigit(letter) || letter is '.' or '_' or '@' or '(' or ')' or '?' or '!'))
+                throw new ArgumentException($"Name one state or observable, as in run[model.Level]; '{expression}' computes something.", nameof(member));
             return this[expression[(expression.LastIndexOf('.') + 1)..].TrimStart('@').TrimEnd('(', ')')];
         }
     }
