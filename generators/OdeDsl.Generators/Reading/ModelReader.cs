@@ -92,7 +92,10 @@ internal sealed class ModelReader(
             new(equations.Observables.Select((observable, i) => Define(observable, pruned.Results[rates.Length + i])).ToArray()),
             pruned.Nodes,
             pruned.Renumber(bodies.ConditionTexts),
-            takenNames);
+            takenNames)
+        {
+            TimeUnit = Attributes.Find(model, "OdeModel") is { } mark ? Attributes.Named(mark, "TimeUnit", "") ?? "" : "",
+        };
     }
 
     private static StateDefinition Define(DeclaredState state, int rate, string text) => new(

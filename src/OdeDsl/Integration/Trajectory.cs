@@ -83,7 +83,8 @@ public sealed class Trajectory
         get
         {
             _ = member;
-            if (!expression.All(static letter => char.IsLetterOrDigit(letter) || letter is '.' or '_' or '@' or '(' or ')' or '?' or '!'))
+            string path = expression.StartsWith("new ", StringComparison.Ordinal) ? expression[4..] : expression;
+            if (!path.All(static letter => char.IsLetterOrDigit(letter) || letter is '.' or '_' or '@' or '(' or ')' or '?' or '!'))
                 throw new ArgumentException($"Name one state or observable, as in run[model.Level]; '{expression}' computes something.", nameof(member));
             return this[expression[(expression.LastIndexOf('.') + 1)..].TrimStart('@').TrimEnd('(', ')')];
         }

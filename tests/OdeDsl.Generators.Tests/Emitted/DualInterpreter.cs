@@ -22,6 +22,9 @@ internal readonly record struct Tangent(double Derivative, double Scale, bool De
 /// </summary>
 internal sealed class DualInterpreter(ExpressionGraph graph, Interpreter values, Func<Node, double> seed)
 {
+    /// <summary>Squares and products of larger numbers overflow in one formula and not in another: nothing is compared there.</summary>
+    private const double Huge = 1e100;
+
     private readonly Dictionary<int, Tangent> _tangents = [];
 
     public Tangent this[int index]
@@ -42,7 +45,9 @@ internal sealed class DualInterpreter(ExpressionGraph graph, Interpreter values,
         (double byFirst, double bySecond, double byThird) = Partials(node.Operator, values[index], x, y, z);
         Tangent sum = default(Tangent).Plus(byFirst, this[node.First]);
         if (node.Second >= 0) sum = sum.Plus(bySecond, this[node.Second]);
-        return node.Third >= 0 ? sum.Plus(byThird, this[node.Third]) : sum;
+        if (node.Third >= 0) sum = sum.Plus(byThird, this[node.Third]);
+        bool comparable = Math.Abs(x) < Huge && Math.Abs(y) < Huge && Math.Abs(z) < Huge;
+        return comparable || !sum.Depends ? sum : new(double.NaN, double.NaN, true);
     }
 
     private static (double X, double Y, double Z) Partials(Operator operation, double value, double x, double y, double z) => operation switch

@@ -96,7 +96,7 @@ public class FlowTests
     public void A_section_is_met_once_per_turn_in_its_direction(IntegrationMethod method)
     {
         // x = cos 2t, v = −2 sin 2t: x rises through 0 at t = 3π/4 + kπ, falls at π/4 + kπ.
-        DynamicSystem system = DynamicSystem.Of(new Pendulum());
+        DynamicSystem system = DynamicSystem.Of(new Swing());
         var flow = new Flow(system, new FlowOptions { Method = method, RelativeTolerance = 1e-11 });
         double[] state = system.InitialState.ToArray();
         double time = 0;
@@ -120,7 +120,7 @@ public class FlowTests
     [Fact]
     public void A_section_that_does_not_fit_is_refused()
     {
-        var flow = new Flow(DynamicSystem.Of(new Pendulum()));
+        var flow = new Flow(DynamicSystem.Of(new Swing()));
         double[] state = [1, 0];
         double time = 0;
         Assert.Throws<ArgumentException>(() => flow.AdvanceToSection(state, [], 0, ref time, 1, new Section([1], 0, 1)));

@@ -14,7 +14,7 @@ public class TrajectoryTests
     public void A_run_is_accurate_between_its_steps_too(IntegrationMethod method)
     {
         // x = cos t.
-        Trajectory run = new Pendulum { Stiffness = 1 }.Simulate(until: 20, new SimulationOptions { Method = method, RelativeTolerance = 1e-8 });
+        Trajectory run = new Swing { Stiffness = 1 }.Simulate(until: 20, new SimulationOptions { Method = method, RelativeTolerance = 1e-8 });
         double largest = 0;
         foreach (double time in run.SampleTimes(1001)) largest = Math.Max(largest, Math.Abs(run.At(time)[0] - Math.Cos(time)));
         Assert.True(largest <= 3e-6, $"{largest}");
@@ -24,7 +24,7 @@ public class TrajectoryTests
     [MemberData(nameof(Methods))]
     public void Extrema_are_found_between_the_steps(IntegrationMethod method)
     {
-        Trajectory run = new Pendulum { Stiffness = 1, X = 0, V = 1 }.Simulate(until: 5, new SimulationOptions { Method = method, RelativeTolerance = 1e-9 });
+        Trajectory run = new Swing { Stiffness = 1, X = 0, V = 1 }.Simulate(until: 5, new SimulationOptions { Method = method, RelativeTolerance = 1e-9 });
         Extremum highest = run["X"].Maximum, lowest = run["X"].Minimum;
         Assert.True(Math.Abs(highest.Value - 1) <= 1e-6, $"{highest}");
         Assert.True(Math.Abs(highest.Time - Math.PI / 2) <= 1e-3, $"{highest}");
@@ -39,7 +39,7 @@ public class TrajectoryTests
     [Fact]
     public void Series_are_found_by_property_by_name_and_with_observables()
     {
-        var pendulum = new Pendulum();
+        var pendulum = new Swing();
         Trajectory run = pendulum.Simulate(until: 3);
         Assert.Equal("X", run[pendulum.X].Name);
         Assert.Equal("m", run[pendulum.X].Unit);
@@ -56,17 +56,17 @@ public class TrajectoryTests
     [Fact]
     public void An_unknown_name_is_answered_with_the_known_ones()
     {
-        Trajectory run = new Pendulum().Simulate(until: 1);
+        Trajectory run = new Swing().Simulate(until: 1);
         string message = Assert.Throws<KeyNotFoundException>(() => run["Speed"]).Message;
         Assert.Contains("'Speed'", message, StringComparison.Ordinal);
         Assert.Contains("X, V, Energy, Doubled", message, StringComparison.Ordinal);
-        Assert.Throws<KeyNotFoundException>(() => run[new Pendulum().Stiffness]);
+        Assert.Throws<KeyNotFoundException>(() => run[new Swing().Stiffness]);
     }
 
     [Fact]
     public void Times_outside_the_run_are_refused()
     {
-        Trajectory run = new Pendulum().Simulate(until: 1);
+        Trajectory run = new Swing().Simulate(until: 1);
         foreach (double time in new[] { -1e-9, 1.0000001, double.NaN })
         {
             Assert.Throws<ArgumentOutOfRangeException>(() => run.At(time));
@@ -82,7 +82,7 @@ public class TrajectoryTests
     {
         foreach (double end in new[] { 0.1, 1.0 / 3, 7.77, -2.5 })
         {
-            Trajectory run = new Pendulum().Simulate(end, new SimulationOptions { Method = method });
+            Trajectory run = new Swing().Simulate(end, new SimulationOptions { Method = method });
             Assert.Equal(end, run.EndTime);
             for (int node = 0; node < run.Times.Length; node++) Assert.Equal(run.StateAtNode(node).ToArray(), run.At(run.Times[node]));
         }
@@ -91,7 +91,7 @@ public class TrajectoryTests
     [Fact]
     public void A_run_without_duration_is_its_start()
     {
-        Trajectory run = new Pendulum().Simulate(until: 0);
+        Trajectory run = new Swing().Simulate(until: 0);
         Assert.Equal([1.0, 0], run.FinalState);
         Assert.Equal([1.0, 0], run.At(0));
         Assert.Equal(1, run["X"].Maximum.Value);
@@ -100,7 +100,7 @@ public class TrajectoryTests
     [Fact]
     public void Simulating_does_not_change_the_model()
     {
-        var pendulum = new Pendulum { X = 0.5, Stiffness = 2 };
+        var pendulum = new Swing { X = 0.5, Stiffness = 2 };
         pendulum.Simulate(until: 10);
         Assert.Equal((0.5, 0.0, 2.0), (pendulum.X, pendulum.V, pendulum.Stiffness));
     }
@@ -109,7 +109,7 @@ public class TrajectoryTests
     public void Progress_rises_to_one()
     {
         var seen = new List<double>();
-        new Pendulum().Simulate(until: 50, new SimulationOptions { MaximumStep = 0.2 }, new Recorder(seen));
+        new Swing().Simulate(until: 50, new SimulationOptions { MaximumStep = 0.2 }, new Recorder(seen));
         Assert.Equal(seen.Order(), seen);
         Assert.True(seen.Count is > 50 and <= 101);
         Assert.Equal(1, seen[^1]);
@@ -138,7 +138,7 @@ public class TrajectoryTests
 
 /// <summary>A mass on a spring; x = cos t for stiffness 1.</summary>
 [OdeModel]
-internal sealed partial class Pendulum
+internal sealed partial class Swing
 {
     [State(Initial = 1, Unit = "m")] public partial double X { get; set; }
     [State(Initial = 0, Unit = "m/s")] public partial double V { get; set; }
