@@ -55,6 +55,8 @@ internal sealed class Simplifier(ExpressionGraph graph)
     {
         if (IsZero(a) || IsZero(b)) return Zero;
         if (TryConstants(a, b, out double x, out double y)) return graph.Constant(x * y);
+        if (HasZeroBranch(a)) return Conditional(graph[a].First, Multiply(graph[a].Second, b), Multiply(graph[a].Third, b));
+        if (HasZeroBranch(b)) return Conditional(graph[b].First, Multiply(a, graph[b].Second), Multiply(a, graph[b].Third));
         if (Is(b, Operator.Constant)) (a, b) = (b, a);
         if (Is(a, Operator.Constant)) return Scale(a, b);
         if (Is(a, Operator.Negate)) return Negate(Multiply(graph[a].First, b));
@@ -70,6 +72,7 @@ internal sealed class Simplifier(ExpressionGraph graph)
     {
         if (IsZero(a)) return Zero;
         if (TryConstants(a, b, out double x, out double y)) return graph.Constant(x / y);
+        if (HasZeroBranch(a)) return Conditional(graph[a].First, Divide(graph[a].Second, b), Divide(graph[a].Third, b));
         if (Is(b, Operator.Constant) && graph[b].Constant == 1.0) return a;
         if (Is(a, Operator.Negate)) return Negate(Divide(graph[a].First, b));
         if (Is(b, Operator.Negate)) return Negate(Divide(a, graph[b].First));
@@ -92,6 +95,13 @@ internal sealed class Simplifier(ExpressionGraph graph)
         if (Is(condition, Operator.BooleanConstant)) return graph[condition].Payload != 0 ? a : b;
         return graph.Ternary(Operator.Conditional, condition, a, b);
     }
+
+    /// <summary>
+    /// Whether a choice is zero on one branch. Factors move inside it: where Math.Sqrt(Math.Max(level, 0)) rests on its bound, the
+    /// slope of the root is infinite and its product with a zero would be no number.
+    /// </summary>
+    private bool HasZeroBranch(int index) =>
+        Is(index, Operator.Conditional) && (IsZero(graph[index].Second) || IsZero(graph[index].Third));
 
     public bool IsZero(int index) => Is(index, Operator.Constant) && graph[index].Constant == 0.0;
 
