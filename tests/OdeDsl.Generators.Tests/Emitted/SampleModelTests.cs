@@ -1,0 +1,82 @@
+using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.CSharp;
+using Microsoft.CodeAnalysis.CSharp.Syntax;
+using OdeDsl.Generators.Algebra;
+using OdeDsl.Generators.Reading;
+using OdeDsl.Generators.Tests.Harness;
+
+namespace OdeDsl.Generators.Tests.Emitted;
+
+/// <summary>The demonstration models: emitted Jacobians against forward dual numbers, which know nothing of the symbolic rules.</summary>
+public sealed class SampleModelTests
+{
+    private const double Tolerance = 1e-12;
+    private const int Points = 40;
+
+    public static TheoryData<string> Files => [.. Directory.GetFiles(Path.Combine(Root, "samples", "Tarnwater"), "*.cs")
+        .Where(static file => File.ReadAllText(file).Contains("[OdeModel", StringComparison.Ordinal)).Select(static file => Path.GetFileName(file)).Order()];
+
+    [Theory]
+    [MemberData(nameof(Files))]
+    public void Jacobians_agree_with_dual_numbers_to_twelve_digits(string file)
+    {
+        CSharpCompilation compilation = Compiling.Compile("global using System;", File.ReadAllText(Path.Combine(Root, "samples", "Tarnwater", file)));
+        SyntaxTree tree = compilation.SyntaxTrees[1];
+        ClassDeclarationSyntax declaration = tree.GetRoot().DescendantNodes().OfType<ClassDeclarationSyntax>().Single();
+        INamedTypeSymbol symbol = compilation.GetSemanticModel(tree).GetDeclaredSymbol(declaration)!;
+        ModelDefinition model = new ModelReader(symbol, declaration, compilation, CancellationToken.None).Read().Model!;
+        // Where the harness declares its models.
+        model = model with { Type = new("Models", model.Type.Types, "Models." + symbol.Name) };
+        IEmittedCalls calls = EmittedModel.Of(model).Calls;
+        ExpressionGraph graph = new(model.Nodes);
+        int[] rates = [.. model.States.Select(static state => state.Rate)];
+        Random random = new(7);
+        int compared = 0;
+        for (int point = 0; point < Points; point++)
+        {
+            double[] state = [.. model.States.Select(item => Between(item.LowerBits, item.UpperBits, random))];
+            double[] parameters = [.. model.Parameters.Select(item => Between(item.LowerBits, item.UpperBits, random))];
+            double[] regime = calls.Regime(0, state, parameters);
+            Interpreter values = new(graph, 0, state, parameters);
+            compared += Compare(graph, values, rates, Operator.State, state.Length, calls.StateJacobian(0, state, parameters, regime));
+            compared += Compare(graph, values, rates, Operator.Parameter, parameters.Length, calls.ParameterJacobian(0, state, parameters, regime));
+        }
+
+        Assert.True(compared >= Points * rates.Length, $"only {compared} entries compared");
+    }
+
+    private static int Compare(ExpressionGraph graph, Interpreter values, int[] rates, Operator leaf, int columns, double[] jacobian)
+    {
+        int compared = 0;
+        for (int column = 0; column < columns; column++)
+        {
+            DualInterpreter dual = new(graph, values, node => node.Operator == leaf && node.Index == column ? 1 : 0);
+            for (int row = 0; row < rates.Length; row++)
+            {
+                Tangent expected = dual[rates[row]];
+                if (!double.IsFinite(values[rates[row]]) || !double.IsFinite(expected.Scale)) continue;
+                double error = Math.Abs(jacobian[(row * columns) + column] - expected.Derivative);
+                Assert.True(error <= Tolerance * expected.Scale, $"row {row}, {leaf} {column}: {jacobian[(row * columns) + column]:R} against {expected.Derivative:R}");
+                compared++;
+            }
+        }
+
+        return compared;
+    }
+
+    private static double Between(long lowerBits, long upperBits, Random random)
+    {
+        double lower = BitConverter.Int64BitsToDouble(lowerBits), upper = BitConverter.Int64BitsToDouble(upperBits);
+        return lower + ((upper - lower) * random.NextDouble());
+    }
+
+    private static string Root
+    {
+        get
+        {
+            string? folder = AppContext.BaseDirectory;
+            while (folder is not null && !File.Exists(Path.Combine(folder, "OdeDsl.sln"))) folder = Path.GetDirectoryName(folder);
+            return folder ?? throw new InvalidOperationException("The repository is not found above the tests.");
+        }
+    }
+}
