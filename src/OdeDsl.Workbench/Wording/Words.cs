@@ -82,7 +82,7 @@ internal static class Words
         MarginEvent.BranchPoint => "branch point: stability passes to another rest",
         MarginEvent.SurfaceContact => "a rest meets a switching surface",
         MarginEvent.LeavesBounds => "a rest leaves the state bounds",
-        MarginEvent.CycleLost => "a stable cycle is lost",
+        MarginEvent.CycleLost => "a stable cycle is no longer found",
         MarginEvent.CycleStabilityLost => "a cycle loses stability",
         _ => "not known",
     };
