@@ -1,3 +1,4 @@
+using System;
 using System.Collections.Generic;
 using System.Linq;
 using System.Threading;
@@ -15,20 +16,27 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
     /// <summary>Operations up to which arguments are read into locals; beyond, registers run out and locals only cost.</summary>
     private const int SmallOperationCount = 100;
 
+    /// <summary>Arguments and results up to which each has a local of its own; well below the JIT's limit of 512.</summary>
+    private const int SmallLocalCount = 400;
+
     /// <summary>Places up to which zeros are written one by one.</summary>
     private const int SmallLength = 64;
+
+    /// <summary>Values handed on between methods at most: 128 kB of a thread's stack, which may be as small as 1 MB.</summary>
+    private const int LargestScratch = 16 * 1024;
 
     /// <summary>Prints the lines between the braces of the member, and after it whatever methods it calls.</summary>
     public void Write(Quantity quantity, string signature)
     {
         Schedule schedule = Schedule.Of(quantity.Graph, [.. quantity.Results.Select(static result => result.Node)], cancellationToken);
         IReadOnlyList<MethodPart> parts = MethodCutter.Cut(schedule);
+        bool isSmall = schedule.OperationCount <= SmallOperationCount && schedule.Reached.Count + quantity.Results.Count <= SmallLocalCount;
         writer.Open(signature);
-        if (schedule.OperationCount <= SmallOperationCount) WriteSmall(quantity, schedule);
+        if (isSmall) WriteSmall(quantity, schedule);
         else if (parts.Count == 1) WriteInPlace(quantity, schedule, parts[0], isWhole: true);
         else WriteCalls(quantity, parts);
         writer.Close();
-        if (schedule.OperationCount <= SmallOperationCount || parts.Count == 1) return;
+        if (isSmall || parts.Count == 1) return;
         for (int i = 0; i < parts.Count; i++)
         {
             writer.Line();
@@ -132,6 +140,13 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
         writer.Line($"{quantity.Target} = {quantity.Target}[..{Literals.Integer(quantity.Length)}];");
         if (quantity.Results.Count < quantity.Length) writer.Line($"{quantity.Target}.Clear();");
         int scratch = parts.Max(static part => part.ScratchLength);
+        if (scratch > LargestScratch)
+        {
+            throw new NotSupportedException(
+                $"{Literals.Integer(scratch)} values of {quantity.Method} are needed far from where they are computed, more than the {Literals.Integer(LargestScratch)} "
+                + "that fit on the stack; split the model, or write sums over many states as sums of partial sums");
+        }
+
         if (scratch > 0) writer.Line($"global::System.Span<double> scratch = stackalloc double[{Literals.Integer(scratch)}];");
         for (int i = 0; i < parts.Count; i++)
             writer.Line($"{quantity.PartName}{Literals.Integer(i + 1)}({Signatures.Arguments(quantity, parts[i].ScratchLength > 0)});");

@@ -4,86 +4,50 @@ using OdeDsl.Generators.Reading;
 
 namespace OdeDsl.Generators.Tests.Emitted;
 
-public sealed class RandomModelTests
+public sealed class RandomModelTests(RandomModelBatch batch) : IClassFixture<RandomModelBatch>
 {
     private const double Tolerance = 1e-12;
 
-    private static readonly Gen<Instruction[][]> Batch = RandomModels.Recipe.Array[25];
-
-    private static readonly Gen<double[]> Numbers = Gen.Frequency(
+    private static readonly Gen<double[]> WithSpecials = Gen.Frequency(
         (12, RandomModels.Ordinary), (1, Gen.Const(0.0)), (1, Gen.Const(-0.0)), (1, Gen.OneOf(1.0, -2.0, double.NaN, double.PositiveInfinity, 1e300)))
-        .Array[RandomModels.StateCount + RandomModels.ParameterCount + 1];
+        .Array[Point.Length];
 
-    private static readonly Gen<double[]> Ordinary = RandomModels.Ordinary.Array[RandomModels.StateCount + RandomModels.ParameterCount + 1];
+    private static readonly Gen<double[]> Ordinary = RandomModels.Ordinary.Array[Point.Length];
 
     [Fact]
-    public void Rates_and_observables_equal_an_interpreter_bit_for_bit_and_throw_where_it_throws()
+    public void Rates_and_observables_equal_an_interpreter_bit_for_bit_and_throw_where_it_throws() => batch.ForEach(WithSpecials, 16, static (model, point) =>
     {
-        Gen.Select(Batch, Numbers.Array[12]).Sample(
-            static (recipes, points) =>
-            {
-                ModelDefinition[] models = Build(recipes);
-                EmittedModel[] emitted = EmittedModel.OfMany(models);
-                for (int i = 0; i < models.Length; i++)
-                {
-                    ExpressionGraph graph = new(models[i].Nodes);
-                    foreach (Point point in points.Select(Point.Of))
-                    {
-                        Interpreter interpreter = point.Interpret(graph);
-                        SameOutcome(
-                            () => [.. models[i].States.Select(state => interpreter[state.Rate])],
-                            () => emitted[i].Calls.Rates(point.Time, point.State, point.Parameters));
-                        SameOutcome(
-                            () => [.. models[i].Observables.Select(observable => interpreter[observable.Value])],
-                            () => emitted[i].Calls.Observables(point.Time, point.State, point.Parameters));
-                    }
-                }
-            },
-            iter: 4, threads: 1);
-    }
+        Interpreter interpreter = point.Interpret(new ExpressionGraph(model.Definition.Nodes));
+        SameOutcome(
+            () => [.. model.Definition.States.Select(state => interpreter[state.Rate])],
+            () => model.Calls.Rates(point.Time, point.State, point.Parameters));
+        SameOutcome(
+            () => [.. model.Definition.Observables.Select(observable => interpreter[observable.Value])],
+            () => model.Calls.Observables(point.Time, point.State, point.Parameters));
+    });
 
     [Fact]
     public void Locked_rates_equal_the_rates_as_written_bit_for_bit_in_the_regime_of_the_point()
     {
         int compared = 0;
-        Gen.Select(Batch, Ordinary.Array[12]).Sample(
-            (recipes, points) =>
-            {
-                ModelDefinition[] models = Build(recipes);
-                EmittedModel[] emitted = EmittedModel.OfMany(models);
-                foreach (EmittedModel model in emitted)
-                {
-                    foreach (Point point in points.Select(Point.Of))
-                    {
-                        double[] regime = model.Calls.Regime(point.Time, point.State, point.Parameters);
-                        double[] functions = model.Calls.SwitchingFunctions(point.Time, point.State, point.Parameters, regime);
-                        if (regime.Length == 0 || functions.Any(static g => !double.IsFinite(g) || Math.Abs(g - Math.Round(g)) < 1e-9)) continue;
-                        for (int k = 0; k < regime.Length; k++) Assert.Equal(model.Calls.Description.Switches[k].SideOf(functions[k]), regime[k]);
-                        if (!TryRates(model, point, out double[] rates)) continue;
-                        SameBits(rates, model.Calls.Rates(point.Time, point.State, point.Parameters, regime));
-                        compared++;
-                    }
-                }
-            },
-            iter: 4, threads: 1);
-        Assert.True(compared > 300, $"only {compared} points compared");
+        batch.ForEach(Ordinary, 16, (model, point) =>
+        {
+            double[] regime = model.Calls.Regime(point.Time, point.State, point.Parameters);
+            double[] functions = model.Calls.SwitchingFunctions(point.Time, point.State, point.Parameters, regime);
+            if (regime.Length == 0 || functions.Any(static g => !double.IsFinite(g) || Math.Abs(g - Math.Round(g)) < 1e-9)) return;
+            for (int k = 0; k < regime.Length; k++) Assert.Equal(model.Calls.Description.Switches[k].SideOf(functions[k]), regime[k]);
+            if (!TryRates(model, point, out double[] rates)) return;
+            SameBits(rates, model.Calls.Rates(point.Time, point.State, point.Parameters, regime));
+            compared++;
+        });
+        Assert.True(compared > 200, $"only {compared} points compared");
     }
 
     [Fact]
     public void Derivatives_agree_with_forward_dual_numbers_to_twelve_digits()
     {
         int compared = 0;
-        Gen.Select(Batch, Ordinary.Array[6]).Sample(
-            (recipes, points) =>
-            {
-                ModelDefinition[] models = Build(recipes);
-                EmittedModel[] emitted = EmittedModel.OfMany(models);
-                for (int i = 0; i < models.Length; i++)
-                {
-                    foreach (Point point in points.Select(Point.Of)) compared += CompareDerivatives(models[i], emitted[i].Calls, point);
-                }
-            },
-            iter: 4, threads: 1);
+        batch.ForEach(Ordinary, 12, (model, point) => compared += CompareDerivatives(model.Definition, model.Calls, point));
         Assert.True(compared > 5_000, $"only {compared} entries compared");
     }
 
@@ -91,47 +55,27 @@ public sealed class RandomModelTests
     public void Switching_functions_and_their_derivatives_are_those_of_the_locked_expressions()
     {
         int compared = 0;
-        Gen.Select(Batch, Ordinary.Array[6]).Sample(
-            (recipes, points) =>
-            {
-                ModelDefinition[] models = Build(recipes);
-                EmittedModel[] emitted = EmittedModel.OfMany(models);
-                for (int i = 0; i < models.Length; i++)
-                {
-                    ModelEquations equations = ModelEquations.Of(models[i], CancellationToken.None);
-                    int[] functions = [.. equations.Switches.Select(static function => function.Value)];
-                    foreach (Point point in points.Select(Point.Of))
-                    {
-                        IEmittedCalls calls = emitted[i].Calls;
-                        double[] regime = calls.Regime(point.Time, point.State, point.Parameters);
-                        Interpreter values = point.Interpret(equations.Locked, regime);
-                        SameBits([.. functions.Select(g => values[g])], calls.SwitchingFunctions(point.Time, point.State, point.Parameters, regime));
-                        double[] jacobian = calls.SwitchingJacobian(point.Time, point.State, point.Parameters, regime);
-                        double[] byTime = calls.SwitchingTimeDerivative(point.Time, point.State, point.Parameters, regime);
-                        compared += Compare(equations.Locked, values, functions, Operator.State, RandomModels.StateCount, jacobian)
-                            + Compare(equations.Locked, values, functions, Operator.Time, 1, byTime);
-                    }
-                }
-            },
-            iter: 3, threads: 1);
+        batch.ForEach(Ordinary, 6, (model, point) =>
+        {
+            ExpressionGraph graph = model.Equations.Locked;
+            int[] functions = [.. model.Equations.Switches.Select(static function => function.Value)];
+            double[] regime = model.Calls.Regime(point.Time, point.State, point.Parameters);
+            Interpreter values = point.Interpret(graph, regime);
+            SameBits([.. functions.Select(g => values[g])], model.Calls.SwitchingFunctions(point.Time, point.State, point.Parameters, regime));
+            double[] jacobian = model.Calls.SwitchingJacobian(point.Time, point.State, point.Parameters, regime);
+            double[] byTime = model.Calls.SwitchingTimeDerivative(point.Time, point.State, point.Parameters, regime);
+            compared += Compare(graph, values, functions, Operator.State, RandomModels.StateCount, jacobian)
+                + Compare(graph, values, functions, Operator.Time, 1, byTime);
+        });
         Assert.True(compared > 2_000, $"only {compared} entries compared");
     }
 
     [Fact]
-    public void No_member_allocates()
+    public void No_member_allocates() => batch.ForEach(Ordinary, 1, static (model, point) =>
     {
-        Gen.Select(Batch, Ordinary).Sample(
-            static (recipes, numbers) =>
-            {
-                Point point = Point.Of(numbers);
-                foreach (EmittedModel model in EmittedModel.OfMany(Build(recipes)))
-                {
-                    if (!TryRates(model, point, out _) || !TryObservables(model, point)) continue;
-                    Assert.Equal(0, model.Calls.AllocatedByEveryMember(point.Time, point.State, point.Parameters));
-                }
-            },
-            iter: 1, threads: 1);
-    }
+        if (!TryRates(model, point, out _) || !TryObservables(model, point)) return;
+        Assert.Equal(0, model.Calls.AllocatedByEveryMember(point.Time, point.State, point.Parameters));
+    });
 
     private static int CompareDerivatives(ModelDefinition model, IEmittedCalls calls, Point point)
     {
@@ -195,12 +139,10 @@ public sealed class RandomModelTests
         return dense;
     }
 
-    private static ModelDefinition[] Build(Instruction[][] recipes) => [.. recipes.Select(static (recipe, i) => RandomModels.Build("Random" + i, recipe))];
-
-    private static bool TryRates(EmittedModel model, Point point, out double[] rates) =>
+    private static bool TryRates(RandomModel model, Point point, out double[] rates) =>
         Try(() => model.Calls.Rates(point.Time, point.State, point.Parameters), out rates);
 
-    private static bool TryObservables(EmittedModel model, Point point) =>
+    private static bool TryObservables(RandomModel model, Point point) =>
         Try(() => model.Calls.Observables(point.Time, point.State, point.Parameters), out _);
 
     private static bool Try(Func<double[]> compute, out double[] values)
@@ -232,12 +174,4 @@ public sealed class RandomModelTests
     private static void SameBits(double[] expected, double[] actual) => Assert.Equal(expected.Select(Bits), actual.Select(Bits));
 
     private static string Bits(double value) => double.IsNaN(value) ? "NaN" : $"{value:R} ({BitConverter.DoubleToInt64Bits(value):X16})";
-
-    private readonly record struct Point(double Time, double[] State, double[] Parameters)
-    {
-        public static Point Of(double[] numbers) => new(
-            numbers[0], numbers[1..(RandomModels.StateCount + 1)], numbers[(RandomModels.StateCount + 1)..]);
-
-        public Interpreter Interpret(ExpressionGraph graph, double[]? regime = null) => new(graph, Time, State, Parameters, regime);
-    }
 }
