@@ -40,8 +40,8 @@ public sealed class LargeModelTests
     [Fact]
     public void Text_grows_with_the_model_and_not_faster()
     {
-        int small = ModelWriter.Write(Network.Of(200), CancellationToken.None).Length;
-        int large = ModelWriter.Write(Network.Of(2000), CancellationToken.None).Length;
+        int small = ModelWriter.Write(Network.Of(120), CancellationToken.None).Length;
+        int large = ModelWriter.Write(Network.Of(1200), CancellationToken.None).Length;
         Assert.InRange(large, 9 * small, 11 * small);
     }
 
