@@ -40,6 +40,12 @@ internal static class Bodies
             .Select(BodyOf)
             .FirstOrDefault(static body => body is not null);
 
+    public static bool IsPartial(IPropertySymbol property, CancellationToken cancellation) =>
+        property.OriginalDefinition.DeclaringSyntaxReferences
+            .Select(reference => reference.GetSyntax(cancellation))
+            .OfType<PropertyDeclarationSyntax>()
+            .Any(static declaration => declaration.Modifiers.Any(SyntaxKind.PartialKeyword));
+
     private static SyntaxNode? BodyOf(SyntaxNode declaration) => declaration switch
     {
         PropertyDeclarationSyntax { ExpressionBody: { } arrow } => arrow,

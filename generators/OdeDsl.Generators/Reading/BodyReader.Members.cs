@@ -38,7 +38,8 @@ internal sealed partial class BodyReader
     {
         if (property.RefKind != RefKind.None) return Unsupported(operation);
         if (Bodies.Find(property, _compilation, _cancellation) is not null) return Call(property, []);
-        if (!HasSource(property)) return WithoutSource(operation, property);
+        if (!HasSource(property) || property.IsExtern) return WithoutSource(operation, property);
+        if (Bodies.IsPartial(property, _cancellation)) return Unresolved(operation); // Its other part is made by another generator.
         return property.SetMethod is null && !property.IsAbstract ? Initial(operation, property) : Changeable(operation, property);
     }
 

@@ -134,7 +134,7 @@ internal sealed class PropertyReader(INamedTypeSymbol model, Compilation compila
             Location typePlace = declaration?.Type.GetLocation() ?? place;
             problems.Report(Descriptors.PropertyNotDouble, typePlace, role, property.Name, TypeName(property));
         }
-        else if (declaration is null || !declaration.Modifiers.Any(SyntaxKind.PartialKeyword))
+        else if (declaration is null || !Bodies.IsPartial(property, cancellation))
             problems.Report(Descriptors.PropertyNotPartial, place, role, property.Name);
         else if (Bodies.Find(property, compilation, cancellation) is not null || declaration.Initializer is not null)
             problems.Report(Descriptors.PropertyImplemented, place, role, property.Name);

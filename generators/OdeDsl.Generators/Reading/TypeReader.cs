@@ -68,10 +68,12 @@ internal sealed class TypeReader(INamedTypeSymbol model, Location place, Problem
 
     private bool CheckName()
     {
-        ISymbol? taker = model.Name == EquationsName ? model : model.GetMembers(EquationsName).FirstOrDefault();
+        ISymbol? taker = model.Name == EquationsName ? model : null;
+        for (INamedTypeSymbol? type = model; type is not null; type = type.BaseType) taker ??= type.GetMembers(EquationsName).FirstOrDefault();
         taker ??= TypeParameters().FirstOrDefault(static parameter => parameter.Name == EquationsName);
         if (taker is null) return true;
-        problems.Report(Descriptors.ReservedName, taker.Locations[0], taker.ToDisplayString(), model.Name);
+        Location found = taker.Locations[0].IsInSource ? taker.Locations[0] : place;
+        problems.Report(Descriptors.ReservedName, found, taker.ToDisplayString(), model.Name);
         return false;
     }
 

@@ -184,6 +184,9 @@ public sealed class BodyProblemTests
     [InlineData("[|X.Missing|]")]
     [InlineData("Math.Sin([|Missing|])")]
     [InlineData("[|Math.Sin(X, Y)|]")]
+    [InlineData("[|Made|] * X; private partial double Made { get; }")]
+    [InlineData("X > 0 ? [|Missing|] : Y")]
+    [InlineData("X switch { > 0 => [|Missing|], _ => Y }")]
     public void A_name_that_is_not_resolved(string expression) => Marked.ExpectOne("ODE0074", Marked.Equation(expression));
 
     [Fact]

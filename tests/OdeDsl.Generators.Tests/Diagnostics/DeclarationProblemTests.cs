@@ -36,6 +36,10 @@ public sealed class DeclarationProblemTests
         Marked.ExpectOne("ODE0011", $"using OdeDsl;\n[OdeModel] partial class Model {{ {Members} int [|Equations|] = 1; }}");
 
     [Fact]
+    public void A_base_class_that_takes_the_name_of_the_equations() =>
+        Marked.ExpectOne("ODE0011", $"using OdeDsl;\nclass Base {{ public class [|Equations|]; }} [OdeModel] partial class Model : Base {{ {Members} }}");
+
+    [Fact]
     public void An_attribute_on_two_parts() => Marked.ExpectOne(
         "ODE0004",
         $"using OdeDsl;\n[OdeModel] partial class Model {{ {Members} }}",
