@@ -141,9 +141,15 @@ internal sealed class Locker
         int positive = NotNegative(source, node.First);
         int size = Graph.Ternary(Operator.Conditional, positive, a, Negated(a));
         int opposite = Graph.Ternary(Operator.Conditional, positive, Negated(a), a);
-        int same = Kink(source, Operator.GreaterOrEqual, node.Second, Zero, isRelation: true);
+        int same = Varies(LockedOf(node.Second))
+            ? Kink(source, Operator.GreaterOrEqual, node.Second, Zero, isRelation: true)
+            : SignBitIsClear(LockedOf(node.Second));
         return Graph.Ternary(Operator.Conditional, same, size, opposite);
     }
+
+    /// <summary>A regime entry can stay at −0, whose sign counts although no comparison with zero sees it.</summary>
+    private int SignBitIsClear(int a) =>
+        Graph.Binary(Operator.Greater, Graph.Binary(Operator.CopySign, Graph.Constant(1.0), a), Graph.Constant(0.0));
 
     private int Negated(int a) => Graph.Unary(Operator.Negate, a);
 
