@@ -8,7 +8,9 @@ namespace OdeDsl.Cycles;
 /// <summary>Where long runs start.</summary>
 internal static class CycleStarts
 {
-    /// <summary>The distance from an equilibrium at which runs leave it, in widths: small against the region, large against tolerances.</summary>
+    /// <summary>
+    /// The distance from an equilibrium at which runs leave it, in widths: small against the region, large against tolerances.
+    /// </summary>
     private const double Departure = 0.01;
 
     /// <summary>Starts beside equilibria at most.</summary>
@@ -38,8 +40,8 @@ internal static class CycleStarts
     }
 
     /// <summary>
-    /// Starts beside the isolated equilibria that do not attract in the given direction of time: both ways along the eigenvector that repels
-    /// most; for a complex pair along the real part of its vector.
+    /// Starts beside the isolated equilibria that do not attract in the given direction of time: both ways along the eigenvector that
+    /// repels most; for a complex pair along the real part of its vector.
     /// </summary>
     public static IEnumerable<double[]> BesideEquilibria(SearchRegion region, IEnumerable<Equilibrium> equilibria, int direction) =>
         equilibria.Where(equilibrium => equilibrium.Set is null && !equilibrium.IsSliding && Repels(equilibrium, direction))
@@ -73,7 +75,8 @@ internal static class CycleStarts
     private static IEnumerable<double[]> Beside(SearchRegion region, Equilibrium equilibrium, int direction)
     {
         int n = region.Count;
-        var scaled = Matrix<double>.Build.Dense(n, n, (i, j) => direction * equilibrium.Jacobian[(i * n) + j] * region.Width[j] / region.Width[i]);
+        var scaled = Matrix<double>.Build.Dense(
+            n, n, (i, j) => direction * equilibrium.Jacobian[(i * n) + j] * region.Width[j] / region.Width[i]);
         Evd<double> modes = scaled.Evd(Symmetricity.Asymmetric);
         int strongest = 0;
         for (int k = 1; k < n; k++)

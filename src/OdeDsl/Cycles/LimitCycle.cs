@@ -19,7 +19,9 @@ public sealed record LimitCycle
     /// </summary>
     public required ImmutableArray<Complex> Multipliers { get; init; }
 
-    /// <summary>How far the computed monodromy matrix is from mapping the cycle's own direction to itself, relative: evidence of accuracy.</summary>
+    /// <summary>
+    /// How far the computed monodromy matrix is from mapping the cycle's own direction to itself, relative: evidence of accuracy.
+    /// </summary>
     public required double TrivialMultiplierError { get; init; }
 
     /// <summary>How the multipliers were computed.</summary>

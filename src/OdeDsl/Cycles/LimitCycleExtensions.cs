@@ -8,10 +8,10 @@ namespace OdeDsl;
 public static class LimitCycleExtensions
 {
     /// <summary>
-    /// Finds limit cycles and families of closed orbits: long runs from the initial state, from beside equilibria that lost stability and from
-    /// evenly spread starts; recurrence on a local section (modulo whole turns of angles); closed by Newton's method on state and period with
-    /// variational equations. Models of two states are also run backwards in time, where unstable cycles attract. Equal inputs give
-    /// equal results.
+    /// Finds limit cycles and families of closed orbits: long runs from the initial state, from beside equilibria that lost stability and
+    /// from evenly spread starts; recurrence on a local section (modulo whole turns of angles); closed by Newton's method on state and
+    /// period with variational equations. Models of two states are also run backwards in time, where unstable cycles attract. Equal inputs
+    /// give equal results.
     /// </summary>
     /// <remarks>What is not found may exist: <see cref="LimitCycleSearchResult.Text"/> says what was tried.</remarks>
     /// <param name="system">The system.</param>
@@ -28,12 +28,9 @@ public static class LimitCycleExtensions
         options ??= new LimitCycleSearchOptions();
         if (options.SpreadStarts < 0 || options.MaximumStepsPerRun < 1)
             throw new ArgumentException("The numbers of starts and steps must be positive.", nameof(options));
-        if (!(options.ClosingTolerance >= LimitCycleSearchOptions.SmallestClosingTolerance && options.ClosingTolerance <= LimitCycleSearchOptions.LargestClosingTolerance))
-        {
-            throw new ArgumentException(
-                $"The closing tolerance must lie between {LimitCycleSearchOptions.SmallestClosingTolerance:g1} and {LimitCycleSearchOptions.LargestClosingTolerance:g1}.",
-                nameof(options));
-        }
+        const double Tightest = LimitCycleSearchOptions.SmallestClosingTolerance, Loosest = LimitCycleSearchOptions.LargestClosingTolerance;
+        if (!(options.ClosingTolerance >= Tightest && options.ClosingTolerance <= Loosest))
+            throw new ArgumentException($"The closing tolerance must lie between {Tightest:g1} and {Loosest:g1}.", nameof(options));
 
         SearchStarts.Require(system, options.ExtraStarts, nameof(options));
         EquilibriumExtensions.RequireAutonomous(system, "is not searched for limit cycles of its own");

@@ -9,6 +9,9 @@ namespace OdeDsl.Cycles;
 /// <summary>Finds limit cycles from long runs, forward and, in the plane, backwards.</summary>
 internal sealed class LimitCycleSearch
 {
+    private const string CannotOscillate =
+        "A single state that is no angle cannot oscillate: its rate would have to have both signs at one value.";
+
     private readonly DynamicSystem system;
     private readonly LimitCycleSearchOptions options;
     private readonly CancellationToken cancellation;
@@ -48,7 +51,7 @@ internal sealed class LimitCycleSearch
             Families = orbits.Families,
             Equilibria = equilibria,
             Runs = [.. runs],
-            Text = canOscillate ? Text() : "A single state that is no angle cannot oscillate: its rate would have to have both signs at one value.",
+            Text = canOscillate ? Text() : CannotOscillate,
         };
     }
 

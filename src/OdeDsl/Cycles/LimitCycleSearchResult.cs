@@ -3,7 +3,9 @@ using OdeDsl.Equilibria;
 
 namespace OdeDsl.Cycles;
 
-/// <summary>The limit cycles and families of closed orbits a search found, and what its runs did. What was not found may still exist.</summary>
+/// <summary>
+/// The limit cycles and families of closed orbits a search found, and what its runs did. What was not found may still exist.
+/// </summary>
 public sealed record LimitCycleSearchResult
 {
     /// <summary>The distinct limit cycles, in the order in which they were found: stable ones first.</summary>

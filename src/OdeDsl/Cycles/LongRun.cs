@@ -37,7 +37,6 @@ internal sealed class LongRun(
     private const int ManyReturns = 50;
     private const int WindowsWithManyReturns = 6;
 
-    /// <summary>Steps that are rejected come on top of those accepted; a run is ended by whichever limit comes first.</summary>
     private static readonly SimulationOptions Options = new() { RelativeTolerance = RunTolerance };
 
     /// <summary>Follows a start.</summary>
@@ -63,7 +62,8 @@ internal sealed class LongRun(
 
             SearchRun End(RunOutcome outcome, int index, string text) => new([.. start], [.. state], elapsed, outcome, index, text);
             if (region.IsRunaway(state)) return End(RunOutcome.Runaway, -1, "runs away.");
-            if (failure is not null && (failure.Reason != IntegrationFailure.TooManySteps || run is null)) return EndOfFailure(failure, End);
+            bool usedUp = failure?.Reason == IntegrationFailure.TooManySteps && run is not null;
+            if (failure is not null && !usedUp) return EndOfFailure(failure, End);
             if (run!.Times.Length < 2) return End(RunOutcome.Failed, -1, "makes no progress.");
             if (rests.Rests(run) is (int rest, string settled)) return End(RunOutcome.Rest, rest, settled);
             if (ReturnSequence.Of(run, region) is ReturnSequence { Lag: > 0 } returns)
@@ -124,7 +124,7 @@ internal sealed class LongRun(
     // The message's own time counts from the start of a window; the run's duration says more.
     private static SearchRun EndOfFailure(IntegrationException failure, Func<RunOutcome, int, string, SearchRun> end) =>
         failure.Reason is IntegrationFailure.StepTooSmall or IntegrationFailure.NotFinite
-            ? end(RunOutcome.Runaway, -1, Invariant($"grows, or leaves the domain of the equations, until the integration fails ({failure.Reason})."))
+            ? end(RunOutcome.Runaway, -1, Invariant($"grows, or leaves the domain of the equations, and cannot go on ({failure.Reason})."))
             : end(RunOutcome.Failed, -1, Invariant($"cannot be integrated further ({failure.Reason})."));
 
     // The norm of the Jacobian in scaled states.
@@ -151,7 +151,7 @@ internal sealed class LongRun(
     }
 
     private static string UnsettledText(double displacement) => double.IsFinite(displacement)
-        ? Invariant($"has not settled within the allowed steps; its best return misses by {displacement:0.0E-0} of its extent and does not close there.")
+        ? Invariant($"has not settled within the allowed steps; a return misses by {displacement:0.0E-0} of its extent and does not close.")
         : "has not settled within the allowed steps and does not return.";
 
     private static string Invariant(FormattableString text) => text.ToString(CultureInfo.InvariantCulture);

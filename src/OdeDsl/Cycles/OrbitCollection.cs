@@ -39,8 +39,8 @@ internal sealed class OrbitCollection(DynamicSystem system, SearchRegion region,
     }
 
     /// <summary>
-    /// Moves orbits whose multipliers decide nothing into the families they belong to: found before a family was known, or too near its edge
-    /// to have neighbours that close.
+    /// Moves orbits whose multipliers decide nothing into the families they belong to: found before a family was known, or too near its
+    /// edge to have neighbours that close.
     /// </summary>
     /// <returns>For each cycle its new index, or -1 - (index of the family) if it moved.</returns>
     public int[] Settle()
@@ -91,9 +91,10 @@ internal sealed class OrbitCollection(DynamicSystem system, SearchRegion region,
     /// <summary>Notes a member of a family.</summary>
     public void AddMember(int family, ShotOrbit orbit, OrbitTrace trace)
     {
-        if (families[family].Members.Count >= MembersKept || families[family].Members.Exists(member => trace.Distance(member.State.AsSpan()) <= SameOrbit))
-            return;
-        families[family].Members.Add(new ClosedOrbit(
+        List<ClosedOrbit> members = families[family].Members;
+        bool known = members.Exists(member => trace.Distance(member.State.AsSpan()) <= SameOrbit);
+        if (known || members.Count >= MembersKept) return;
+        members.Add(new ClosedOrbit(
             Math.Abs(orbit.SignedPeriod), [.. orbit.State], trace.Minimum, trace.Maximum, orbit.Residual));
     }
 

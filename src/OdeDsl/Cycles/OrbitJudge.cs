@@ -26,7 +26,12 @@ internal enum OrbitVerdict
 
 /// <summary>Turns a closed orbit into a limit cycle, a member of a family, or nothing, with the evidence.</summary>
 internal sealed class OrbitJudge(
-    DynamicSystem system, SearchRegion region, OrbitShooter shooter, OrbitCollection orbits, double tolerance, CancellationToken cancellation)
+    DynamicSystem system,
+    SearchRegion region,
+    OrbitShooter shooter,
+    OrbitCollection orbits,
+    double tolerance,
+    CancellationToken cancellation)
 {
     /// <summary>An orbit smaller than this part of the guess's extents is an equilibrium.</summary>
     private const double Collapsed = 0.02;
@@ -59,10 +64,10 @@ internal sealed class OrbitJudge(
         if (Trace(found) is not OrbitTrace trace || IsCollapsed(found, trace, size)) return (OrbitVerdict.Nothing, -1);
         (ShotOrbit orbit, trace) = Minimal(found, trace);
         var multipliers = new OrbitMultipliers(orbit);
+        if (!(multipliers.TrivialError <= UntrustedMultipliers)) return (OrbitVerdict.Untrusted, -1);
         int family = FamilyIndex(orbit, trace, multipliers);
         if (family >= 0) return (OrbitVerdict.FamilyMember, family);
         Stability accidental = orbit.SignedPeriod > 0 ? Stability.Unstable : Stability.Stable;
-        if (!(multipliers.TrivialError <= UntrustedMultipliers)) return (OrbitVerdict.Untrusted, -1);
         if (multipliers.Stability == accidental) return (OrbitVerdict.Repelling, -1);
         return (OrbitVerdict.LimitCycle, orbits.Add(Describe(orbit, trace, multipliers), orbit, trace));
     }
@@ -119,14 +124,15 @@ internal sealed class OrbitJudge(
             for (int i = 0; i < state.Length; i++)
                 apart = Math.Max(apart, Math.Abs(region.Difference(i, state[i], orbit.State[i])) / trace.Scale[i]);
             if (!(apart <= FractionCloses)) continue;
-            if (shooter.Close(orbit.State, orbit.SignedPeriod / multiple, trace.Scale) is ShotOrbit shorter && Trace(shorter) is OrbitTrace once)
-                return Minimal(shorter, once);
+            ShotOrbit? shorter = shooter.Close(orbit.State, orbit.SignedPeriod / multiple, trace.Scale);
+            if (shorter is not null && Trace(shorter) is OrbitTrace once) return Minimal(shorter, once);
         }
 
         return (orbit, trace);
     }
 
-    // Neighbours across the orbit in the direction of the unit multiplier: on a family they close too, beside an isolated orbit they do not.
+    // Neighbours across the orbit in the direction of the unit multiplier: on a family they close too, beside an isolated orbit they do
+    // not.
     private int FamilyIndex(ShotOrbit orbit, OrbitTrace trace, OrbitMultipliers multipliers)
     {
         if (multipliers.UnitDirection() is not (double[] direction, double error)) return -1;
@@ -138,21 +144,28 @@ internal sealed class OrbitJudge(
         }
 
         var neighbours = new List<(ShotOrbit Orbit, OrbitTrace Trace)>();
+        double farthest = 0;
         foreach (double displacement in NeighbourDisplacements)
         {
             if (neighbours.Count == NeighboursNeeded) break;
             double[] guess = [.. orbit.State];
             for (int i = 0; i < guess.Length; i++) guess[i] += displacement * direction[i] * orbit.Scale[i];
             if (shooter.Close(guess, orbit.SignedPeriod, orbit.Scale) is not ShotOrbit neighbour) continue;
-            if (IsNeighbour(neighbour, orbit, trace, displacement) && Trace(neighbour) is OrbitTrace beside) neighbours.Add((neighbour, beside));
+            if (!IsNeighbour(neighbour, orbit, trace, displacement) || Trace(neighbour) is not OrbitTrace beside) continue;
+            neighbours.Add((neighbour, beside));
+            farthest = Math.Max(farthest, Math.Abs(displacement));
         }
 
         if (neighbours.Count < NeighboursNeeded) return -1;
         string periods = string.Join(
             ", ", neighbours.Select(static beside => Math.Abs(beside.Orbit.SignedPeriod).ToString("g8", CultureInfo.InvariantCulture)));
-        string evidence = string.Create(
+        string itself = string.Create(
             CultureInfo.InvariantCulture,
-            $"The orbit of period {Math.Abs(orbit.SignedPeriod):g8} has a second multiplier within {error:0.0E-0} of 1, and {neighbours.Count} neighbours up to 5 % of its size away close as well, with periods {periods}.");
+            $"The orbit of period {Math.Abs(orbit.SignedPeriod):g8} has a second multiplier within {error:0.0E-0} of 1");
+        string others = string.Create(
+            CultureInfo.InvariantCulture,
+            $"{neighbours.Count} neighbours up to {farthest:P1} of its size away close as well, with periods {periods}");
+        string evidence = $"{itself}, and {others}.";
         int family = orbits.AddFamily(orbit, trace, error, evidence);
         orbits.AddMember(family, orbit, trace);
         foreach ((ShotOrbit neighbour, OrbitTrace beside) in neighbours) orbits.AddMember(family, neighbour, beside);

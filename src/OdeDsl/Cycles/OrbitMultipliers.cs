@@ -9,8 +9,9 @@ namespace OdeDsl.Cycles;
 
 /// <summary>
 /// The multipliers of a closed orbit. In a basis that starts with the direction of motion the monodromy matrix is block triangular, because
-/// it maps that direction to itself: the trivial multiplier is the first entry, the others are the eigenvalues of the remaining block, which is
-/// the derivative of the return map. They are well conditioned even where the full matrix is not diagonalisable, as on a family of orbits.
+/// it maps that direction to itself: the trivial multiplier is the first entry, the others are the eigenvalues of the remaining block,
+/// which is the derivative of the return map. They are well conditioned even where the full matrix is not diagonalisable, as on a family
+/// of orbits.
 /// </summary>
 internal sealed class OrbitMultipliers
 {
@@ -21,8 +22,8 @@ internal sealed class OrbitMultipliers
     private const double ErrorMargin = 10;
 
     /// <summary>
-    /// Beside a double cycle a residual r leaves a multiplier off by a few √r: the residual is quadratic in the distance from the cycle, the
-    /// multiplier's deviation from 1 linear.
+    /// Beside a double cycle a residual r leaves a multiplier off by a few √r: the residual is quadratic in the distance from the cycle,
+    /// the multiplier's deviation from 1 linear.
     /// </summary>
     private const double DoubleCycleMargin = 50;
 

@@ -28,7 +28,9 @@ internal sealed class OrbitShooter(DynamicSystem system, SearchRegion region, do
     /// <summary>Orbits that close to this many integration tolerances are closed.</summary>
     private const double ClosingMargin = 100;
 
-    /// <summary>The accuracy of the monodromy matrix in integration tolerances, with a margin: smaller singular values mean nothing.</summary>
+    /// <summary>
+    /// The accuracy of the monodromy matrix in integration tolerances, with a margin: smaller singular values mean nothing.
+    /// </summary>
     private const double RankMargin = 1e4;
 
     /// <summary>Periods further than this factor from the guess belong to something else.</summary>
@@ -43,7 +45,9 @@ internal sealed class OrbitShooter(DynamicSystem system, SearchRegion region, do
     /// <summary>The largest such adjustment, in parts of the period.</summary>
     private const double LargestTimeChange = 0.1;
 
-    /// <summary>The displacement for differences of the flow, in scales: the cube root of the integration's accuracy would do as well.</summary>
+    /// <summary>
+    /// The displacement for differences of the flow, in scales: the cube root of the integration's accuracy would do as well.
+    /// </summary>
     private const double Displacement = 1e-4;
 
     /// <summary>Steps once round at most: many for any smooth orbit, few enough to give up soon where a guess hits a singularity.</summary>

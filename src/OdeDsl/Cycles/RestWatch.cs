@@ -29,7 +29,8 @@ internal sealed class RestWatch(DynamicSystem system, SearchRegion region, Immut
 
     /// <summary>Says where a run rests, if it does.</summary>
     /// <param name="run">The run; it may go backwards.</param>
-    /// <returns>The index of the equilibrium (-1: none of the known ones) and the sentence; <see langword="null"/> if it does not rest.</returns>
+    /// <returns>The index of the equilibrium (-1: none of the known ones) and the sentence; <see langword="null"/> if it does not
+    /// rest.</returns>
     public (int Index, string Text)? Rests(Trajectory run)
     {
         ReadOnlySpan<double> end = run.StateAtNode(run.Times.Length - 1);
@@ -72,8 +73,8 @@ internal sealed class RestWatch(DynamicSystem system, SearchRegion region, Immut
             double seen = Math.Log(first / last) / Math.Abs(returns.Times[^1] - returns.Times[0]);
             double predicted = -focus.Eigenvalues[0].Real;
             if (!(Math.Abs(seen - predicted) <= RateAgreement * predicted)) continue;
-            return (k, Invariant(
-                $"spirals towards equilibrium {k + 1}: its swings shrink at the rate {seen:g3} that the eigenvalue predicts ({predicted:g3}); not followed to the end."));
+            string rates = Invariant($"its swings shrink at the rate {seen:g3}, as its eigenvalue predicts ({predicted:g3})");
+            return (k, Invariant($"spirals towards equilibrium {k + 1}: {rates}; not followed to the end."));
         }
 
         return null;
@@ -103,7 +104,11 @@ internal sealed class RestWatch(DynamicSystem system, SearchRegion region, Immut
         if (equilibrium.Set is not EquilibriumSet { Dimension: 1 } set) return region.Distance(equilibrium.State.AsSpan(), state);
         double smallest = double.PositiveInfinity;
         for (int k = 1; k < set.Points.Length; k++)
-            smallest = Math.Min(smallest, region.DistanceToSegment(state, set.Points[k - 1].AsSpan(), set.Points[k].AsSpan(), region.Width));
+        {
+            ReadOnlySpan<double> from = set.Points[k - 1].AsSpan(), to = set.Points[k].AsSpan();
+            smallest = Math.Min(smallest, region.DistanceToSegment(state, from, to, region.Width));
+        }
+
         return smallest;
     }
 

@@ -15,7 +15,9 @@ internal sealed class ReturnSequence
     /// <summary>Passages further from the section's point than this part of the orbit's extents are other strands.</summary>
     private const double Nearness = 0.3;
 
-    /// <summary>Closing is tried where the last return misses by less than this part of the orbit; later windows bring slow ones nearer.</summary>
+    /// <summary>
+    /// Closing is tried where the last return misses by less than this part of the orbit; later windows bring slow ones nearer.
+    /// </summary>
     private const double WorthClosing = 0.03;
 
     /// <summary>Returns this good are as good as the long run's tolerance lets them be.</summary>
@@ -72,7 +74,8 @@ internal sealed class ReturnSequence
     /// Whether it is worth closing an orbit here: the run nearly repeats itself, and did not do so much better one passage earlier, as
     /// irregular motion does when it leaves an unstable orbit that it met by chance.
     /// </summary>
-    public bool NearlyCloses => Displacement <= WorthClosing && (Displacement <= Closed || Displacement <= LagPreference * EarlierDisplacement());
+    public bool NearlyCloses =>
+        Displacement <= WorthClosing && (Displacement <= Closed || Displacement <= LagPreference * EarlierDisplacement());
 
     /// <summary>The time between these two, signed like the run.</summary>
     public double SignedPeriod => Times[^1] - Times[^(1 + Lag)];

@@ -2,7 +2,9 @@ using OdeDsl.Modeling;
 
 namespace OdeDsl.Equilibria;
 
-/// <summary>Single equilibria: refine a guess, describe a known one. See <see cref="EquilibriumExtensions"/> for the search of all.</summary>
+/// <summary>
+/// Single equilibria: refine a guess, describe a known one. See <see cref="EquilibriumExtensions"/> for the search of all.
+/// </summary>
 public static class EquilibriumAnalysis
 {
     /// <summary>
@@ -43,6 +45,7 @@ public static class EquilibriumAnalysis
 
     private static void RequireLength(DynamicSystem system, int length, string name)
     {
-        if (length != system.StateCount) throw new ArgumentException($"This model has {system.StateCount} states, but {length} values were given.", name);
+        if (length == system.StateCount) return;
+        throw new ArgumentException($"This model has {system.StateCount} states, but {length} values were given.", name);
     }
 }

@@ -12,7 +12,9 @@ public enum EquilibriumKind
     /// <summary>All real parts have one sign and the leading eigenvalues are a complex pair.</summary>
     Focus,
 
-    /// <summary>Real parts of both signs: attracting in some directions and repelling in <see cref="Equilibrium.UnstableCount"/> others.</summary>
+    /// <summary>
+    /// Real parts of both signs: attracting in some directions and repelling in <see cref="Equilibrium.UnstableCount"/> others.
+    /// </summary>
     Saddle,
 
     /// <summary>

@@ -33,7 +33,9 @@ public sealed record EquilibriumSearchResult
     /// </summary>
     public required double UnseenShare { get; init; }
 
-    /// <summary>The number of regimes whose formulas were searched one by one; 0 if there were too many and starts kept to their own.</summary>
+    /// <summary>
+    /// The number of regimes whose formulas were searched one by one; 0 if there were too many and starts kept to their own.
+    /// </summary>
     public required int RegimesSearched { get; init; }
 
     /// <summary>The number of switching surfaces searched for rests by sliding.</summary>
@@ -54,13 +56,15 @@ public sealed record EquilibriumSearchResult
                 ? "None found an equilibrium."
                 : string.Create(
                     CultureInfo.InvariantCulture,
-                    $"The last new equilibrium was found by start {LastNewStart}; the share of landings still unseen is estimated at {UnseenShare:P1}.");
+                    $"The last new one was found by start {LastNewStart}; the share of landings unseen is estimated at {UnseenShare:P1}.");
             string surfaces = SurfacesSearched == 0
                 ? ""
-                : string.Create(CultureInfo.InvariantCulture, $" Rests by sliding were sought on {SurfacesSearched} switching {(SurfacesSearched == 1 ? "surface" : "surfaces")}, one at a time.");
-            return string.Create(
+                : string.Create(CultureInfo.InvariantCulture, $" Switching surfaces searched for rests by sliding, one at a time: {SurfacesSearched}.");
+            string noun = Equilibria.Length == 1 ? "equilibrium" : "equilibria";
+            string landed = string.Create(
                 CultureInfo.InvariantCulture,
-                $"{Starts} starts {regimes}: {Landed} ended on {Equilibria.Length} {(Equilibria.Length == 1 ? "equilibrium" : "equilibria")} inside the bounds. {last}{surfaces} This is evidence, not a proof that there are no others.");
+                $"{Starts} starts {regimes}: {Landed} ended on {Equilibria.Length} {noun} inside the bounds.");
+            return $"{landed} {last}{surfaces} This is evidence, not a proof that there are no others.";
         }
     }
 }

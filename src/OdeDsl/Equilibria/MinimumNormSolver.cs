@@ -5,8 +5,8 @@ namespace OdeDsl.Equilibria;
 
 /// <summary>
 /// Solves square linear systems whose matrix may be singular: rows are equilibrated, columns scaled by the unknowns' sizes, and the
-/// solution has the smallest scaled length. Regular matrices take the fast path (elimination with partial pivoting); nearly singular ones the
-/// singular value decomposition with small values cut (G. H. Golub and C. F. Van Loan, "Matrix Computations", section 5.5).
+/// solution has the smallest scaled length. Regular matrices take the fast path (elimination with partial pivoting); nearly singular ones
+/// the singular value decomposition with small values cut (G. H. Golub and C. F. Van Loan, "Matrix Computations", section 5.5).
 /// </summary>
 internal sealed class MinimumNormSolver
 {
@@ -28,7 +28,8 @@ internal sealed class MinimumNormSolver
 
     /// <summary>Makes a solver.</summary>
     /// <param name="columnScale">The sizes of the unknowns.</param>
-    /// <param name="rankCut">Singular values up to this part of the largest count as zero when solving: the accuracy of the matrices.</param>
+    /// <param name="rankCut">Singular values up to this part of the largest count as zero when solving: the accuracy of the
+    /// matrices.</param>
     public MinimumNormSolver(ReadOnlySpan<double> columnScale, double rankCut = RoundingCut)
     {
         this.rankCut = rankCut;

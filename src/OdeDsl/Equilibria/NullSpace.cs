@@ -1,8 +1,8 @@
 namespace OdeDsl.Equilibria;
 
 /// <summary>
-/// Tells singular roots from regular ones. Rows of the Jacobian are measured against their size in a neighbourhood of the root, because a row
-/// that vanishes at the root itself (a double root) has no size there.
+/// Tells singular roots from regular ones. Rows of the Jacobian are measured against their size in a neighbourhood of the root, because a
+/// row that vanishes at the root itself (a double root) has no size there.
 /// </summary>
 internal sealed class NullSpace(RootProblem problem)
 {
@@ -38,8 +38,8 @@ internal sealed class NullSpace(RootProblem problem)
     }
 
     /// <summary>
-    /// Whether a root with null directions is a multiple one: the determinant changes sign within the reach, or the Jacobian is singular up to
-    /// rounding.
+    /// Whether a root with null directions is a multiple one: the determinant changes sign within the reach, or the Jacobian is singular
+    /// up to rounding.
     /// </summary>
     public bool IsMultiple(ReadOnlySpan<double> root, double[][] directions)
     {

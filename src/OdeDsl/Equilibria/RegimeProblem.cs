@@ -9,7 +9,9 @@ namespace OdeDsl.Equilibria;
 /// </summary>
 internal sealed class RegimeProblem : RootProblem
 {
-    /// <summary>With more switches than this on their surfaces at once, sides are changed one at a time instead of in all combinations.</summary>
+    /// <summary>
+    /// With more switches than this on their surfaces at once, sides are changed one at a time instead of in all combinations.
+    /// </summary>
     private const int MaximumCombined = 4;
 
     /// <summary>Rates or derivatives that differ by less than this part of their size are equal on both sides.</summary>

@@ -22,7 +22,8 @@ internal sealed class RootCollection(SearchRegion region)
 
     /// <summary>Takes a root; the deflation learns isolated roots that it did not know.</summary>
     /// <returns>Whether a new equilibrium was found.</returns>
-    public bool Land(RootProblem problem, NullSpace nullSpace, EquilibriumSetWalk walk, double[] point, Deflation deflation, bool countLanding)
+    public bool Land(
+        RootProblem problem, NullSpace nullSpace, EquilibriumSetWalk walk, double[] point, Deflation deflation, bool countLanding)
     {
         Span<double> state = point.AsSpan(0, region.Count);
         region.Wrap(state);

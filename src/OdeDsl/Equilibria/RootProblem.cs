@@ -8,7 +8,9 @@ namespace OdeDsl.Equilibria;
 /// </summary>
 internal abstract class RootProblem(DynamicSystem system, SearchRegion region)
 {
-    /// <summary>A switching function this close to its surface, relative to its change over the states' local sizes, counts as on it.</summary>
+    /// <summary>
+    /// A switching function this close to its surface, relative to its change over the states' local sizes, counts as on it.
+    /// </summary>
     public const double OnSurface = 1e-8;
 
     protected DynamicSystem System { get; } = system;
@@ -35,7 +37,9 @@ internal abstract class RootProblem(DynamicSystem system, SearchRegion region)
     /// <summary>Evaluates the derivatives by rows.</summary>
     public abstract void Differentiate(ReadOnlySpan<double> point, Span<double> jacobian);
 
-    /// <summary>Whether a root (angles wrapped) is a rest of the model: inside the state bounds, and where the equations' formulas hold.</summary>
+    /// <summary>
+    /// Whether a root (angles wrapped) is a rest of the model: inside the state bounds, and where the equations' formulas hold.
+    /// </summary>
     public abstract bool Accepts(ReadOnlySpan<double> point);
 
     /// <summary>Describes a root that <see cref="Accepts"/> took.</summary>

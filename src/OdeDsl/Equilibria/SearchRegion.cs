@@ -184,7 +184,9 @@ internal sealed class SearchRegion
         return false;
     }
 
-    /// <summary>The distance of a state from a segment, in given units; the ends of the segment lie less than half a period apart.</summary>
+    /// <summary>
+    /// The distance of a state from a segment, in given units; the ends of the segment lie less than half a period apart.
+    /// </summary>
     public double DistanceToSegment(
         ReadOnlySpan<double> state, ReadOnlySpan<double> from, ReadOnlySpan<double> to, ReadOnlySpan<double> units)
     {

@@ -12,7 +12,11 @@ internal static class SearchStarts
         for (int k = 0; k < starts.Length; k++)
         {
             if (starts[k].Length != system.StateCount)
-                throw new ArgumentException($"Extra start {k} has {starts[k].Length} values; {system.Description.Name} has {system.StateCount} states.", name);
+            {
+                throw new ArgumentException(
+                    $"Extra start {k} has {starts[k].Length} values; {system.Description.Name} has {system.StateCount} states.", name);
+            }
+
             if (!starts[k].All(double.IsFinite)) throw new ArgumentException($"Extra start {k} holds a value that is not finite.", name);
         }
     }

@@ -2,6 +2,7 @@ using System.Collections.Immutable;
 using System.Numerics;
 using MathNet.Numerics.LinearAlgebra;
 using MathNet.Numerics.LinearAlgebra.Double;
+using MathNet.Numerics.LinearAlgebra.Factorization;
 
 namespace OdeDsl.Equilibria;
 
@@ -14,7 +15,9 @@ internal sealed class Spectrum
     /// <summary>A real part this small beside its eigenvalue's modulus is negligible: a linear centre.</summary>
     private const double NeutralRatio = 1e-9;
 
-    /// <summary>An imaginary part this small beside the modulus comes from a double real eigenvalue (√ of rounding) and is no oscillation.</summary>
+    /// <summary>
+    /// An imaginary part this small beside the modulus comes from a double real eigenvalue (√ of rounding) and is no oscillation.
+    /// </summary>
     private const double OscillationRatio = 1e-7;
 
     private readonly double norm;
@@ -62,7 +65,7 @@ internal sealed class Spectrum
 
         if (n == 1) return new Spectrum([], 0);
         // The columns of Q after the first are an orthonormal basis of the tangent space.
-        Matrix<double> basis = normal.ToColumnMatrix().QR(MathNet.Numerics.LinearAlgebra.Factorization.QRMethod.Full).Q.SubMatrix(0, n, 1, n - 1);
+        Matrix<double> basis = normal.ToColumnMatrix().QR(QRMethod.Full).Q.SubMatrix(0, n, 1, n - 1);
         return OfScaled(basis.TransposeThisAndMultiply(scaled * basis).ToRowMajorArray(), n - 1);
     }
 
@@ -83,8 +86,8 @@ internal sealed class Spectrum
             return new LinearVerdict(EquilibriumKind.Degenerate, stability, unstable);
         }
 
-        if (neutral > 0) return new LinearVerdict(EquilibriumKind.Centre, unstable > 0 ? Stability.Unstable : Stability.Undecided, unstable);
-        Stability sign = unstable > 0 ? Stability.Unstable : Stability.Stable;
+        Stability sign = unstable > 0 ? Stability.Unstable : neutral > 0 ? Stability.Undecided : Stability.Stable;
+        if (neutral > 0) return new LinearVerdict(EquilibriumKind.Centre, sign, unstable);
         if (unstable > 0 && unstable < others.Length) return new LinearVerdict(EquilibriumKind.Saddle, sign, unstable);
         bool turns = others.Length > 0 && Oscillates(others.MinBy(static value => Math.Abs(value.Real)));
         return new LinearVerdict(turns ? EquilibriumKind.Focus : EquilibriumKind.Node, sign, unstable);

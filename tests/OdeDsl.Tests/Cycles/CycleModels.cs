@@ -234,8 +234,8 @@ internal sealed partial class Roessler
 }
 
 /// <summary>
-/// A block on a spring, dragged by a belt whose friction weakens with the sliding speed: it sticks (slides along the surface of equal speeds)
-/// and slips in turn.
+/// A block on a spring, dragged by a belt whose friction weakens with the sliding speed: it sticks (slides along the surface of equal
+/// speeds) and slips in turn.
 /// </summary>
 [OdeModel]
 internal sealed partial class Belt

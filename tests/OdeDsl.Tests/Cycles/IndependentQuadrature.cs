@@ -3,8 +3,8 @@ using OdeDsl.Modeling;
 namespace OdeDsl.Tests.Cycles;
 
 /// <summary>
-/// The product of the multipliers by Abel, Jacobi and Liouville's identity: exp ∮ div f dt, with the classical Runge-Kutta method of order 4
-/// in many equal steps: independent of the integrators under test.
+/// The product of the multipliers by Abel, Jacobi and Liouville's identity: exp ∮ div f dt, with the classical Runge-Kutta method of order
+/// 4 in many equal steps: independent of the integrators under test.
 /// </summary>
 internal static class IndependentQuadrature
 {

@@ -83,7 +83,8 @@ public class LimitCycleTests
         // r' = -r (r² - 1/4)(r² - 1) = r (-1/4 + 5/4 r² - r⁴).
         LimitCycleSearchResult found = new Circles { C0 = -0.25, C1 = 1.25, C2 = -1 }.FindLimitCycles();
         Assert.Equal(2, found.Cycles.Length);
-        LimitCycle stable = Assert.Single(found.Cycles, cycle => cycle.IsStable), unstable = Assert.Single(found.Cycles, cycle => !cycle.IsStable);
+        LimitCycle stable = Assert.Single(found.Cycles, cycle => cycle.IsStable);
+        LimitCycle unstable = Assert.Single(found.Cycles, cycle => !cycle.IsStable);
         Near(1, stable.Amplitude[1], 1e-8);
         Near(0.5, unstable.Amplitude[1], 1e-8);
         Near(Math.Exp(Math.Tau * (2.5 - 4)), stable.TransverseMultipliers[0].Real, 1e-7);
@@ -178,7 +179,8 @@ public class LimitCycleTests
         // T = 2π/√(1-ζ²), and a half swing shrinks disturbances by q.
         (double zeta, double push) = (0.1, 0.5);
         double root = Math.Sqrt(1 - zeta * zeta), q = Math.Exp(-Math.PI * zeta / root);
-        LimitCycle cycle = Assert.Single(new Clock { Damping = zeta, Push = push }.FindLimitCycles().Cycles, candidate => candidate.IsStable);
+        LimitCycleSearchResult found = new Clock { Damping = zeta, Push = push }.FindLimitCycles();
+        LimitCycle cycle = Assert.Single(found.Cycles, candidate => candidate.IsStable);
         Near(Math.Tau / root, cycle.Period, 1e-9);
         Near(push * (1 + q) / (1 - q), cycle.Amplitude[0], 1e-8);
         Near(q * q, cycle.TransverseMultipliers[0].Real, 1e-7);

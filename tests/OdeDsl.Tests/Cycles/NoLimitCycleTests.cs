@@ -57,7 +57,8 @@ public class NoLimitCycleTests
     {
         // V. Volterra 1926, the law of small oscillations: T → 2π/√(growth death); the correction is of second order in the amplitude.
         var model = new LotkaVolterra { Prey = 3.003, Predator = 1.5 };
-        OrbitFamily family = Assert.Single(model.FindLimitCycles(new LimitCycleSearchOptions { SpreadStarts = 0, ReverseTime = false }).Families);
+        var few = new LimitCycleSearchOptions { SpreadStarts = 0, ReverseTime = false };
+        OrbitFamily family = Assert.Single(model.FindLimitCycles(few).Families);
         Near(Math.Tau / Math.Sqrt(1.5 * 3), family.Members[0].Period, 1e-6);
     }
 
@@ -136,7 +137,8 @@ public class NoLimitCycleTests
     [Fact]
     public void A_growing_motion_is_a_runaway()
     {
-        LimitCycleSearchResult found = new Equilibria.Linear { A = 0.1, D = 0.1 }.FindLimitCycles(new LimitCycleSearchOptions { ReverseTime = false });
+        var forward = new LimitCycleSearchOptions { ReverseTime = false };
+        LimitCycleSearchResult found = new Equilibria.Linear { A = 0.1, D = 0.1 }.FindLimitCycles(forward);
         Assert.Empty(found.Cycles);
         Assert.All(found.Runs, run => Assert.Equal(RunOutcome.Runaway, run.Outcome));
     }
@@ -146,7 +148,8 @@ public class NoLimitCycleTests
     {
         // Without predators prey grow: the run beside the origin along the prey's axis leaves; beside the origin along the predators' axis
         // nothing repels. Negative numbers of animals are outside the bounds.
-        LimitCycleSearchResult found = new LotkaVolterra { Prey = 0, Predator = 2 }.FindLimitCycles(new LimitCycleSearchOptions { SpreadStarts = 2 });
+        var few = new LimitCycleSearchOptions { SpreadStarts = 2 };
+        LimitCycleSearchResult found = new LotkaVolterra { Prey = 0, Predator = 2 }.FindLimitCycles(few);
         Assert.All(found.Runs, run => Assert.All(run.Start, value => Assert.InRange(value, 0, 10)));
         SearchRun first = found.Runs[0];
         Assert.Equal(RunOutcome.Rest, first.Outcome);
@@ -172,10 +175,12 @@ public class NoLimitCycleTests
     [Fact]
     public void Options_without_meaning_are_refused()
     {
-        Assert.Throws<ArgumentException>(() => new Brusselator().FindLimitCycles(new LimitCycleSearchOptions { ClosingTolerance = 0.1 }));
-        Assert.Throws<ArgumentException>(() => new Brusselator().FindLimitCycles(new LimitCycleSearchOptions { ClosingTolerance = double.NaN }));
-        Assert.Throws<ArgumentException>(() => new Brusselator().FindLimitCycles(new LimitCycleSearchOptions { SpreadStarts = -1 }));
-        Assert.Throws<ArgumentException>(() => new Brusselator().FindLimitCycles(new LimitCycleSearchOptions { ExtraStarts = [[1.0]] }));
+        LimitCycleSearchOptions[] meaningless =
+        [
+            new() { ClosingTolerance = 0.1 }, new() { ClosingTolerance = double.NaN },
+            new() { SpreadStarts = -1 }, new() { ExtraStarts = [[1.0]] },
+        ];
+        Assert.All(meaningless, options => Assert.Throws<ArgumentException>(() => new Brusselator().FindLimitCycles(options)));
     }
 
     [Fact]

@@ -39,7 +39,8 @@ public class ClassificationTests
     {
         // Zero trace and positive determinant: [a, b; c, -a] with -a² - bc > 0.
         Gen.Select(Gen.Double[-3, 3], Gen.Double[0.1, 5], Gen.Double[0.01, 5]).Sample(
-            (a, b, excess) => OriginOf(a, b, -(a * a + excess) / b, -a) is { Kind: EquilibriumKind.Centre, Stability: Stability.Undecided });
+            (a, b, excess) =>
+                OriginOf(a, b, -(a * a + excess) / b, -a) is { Kind: EquilibriumKind.Centre, Stability: Stability.Undecided });
     }
 
     [Fact]
