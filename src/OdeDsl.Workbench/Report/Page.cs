@@ -11,7 +11,7 @@ internal static class Page
 
     public const string Style = """
         *{box-sizing:border-box}
-        html{color-scheme:light dark}
+        html{color-scheme:light dark;font-family:"OdeDsl Sans"}
         body{margin:0 auto;padding:1.2rem 1.2rem 4rem;max-width:58rem;background:var(--paper);color:var(--ink);
         font:16px/1.55 "OdeDsl Sans",sans-serif;overflow-wrap:anywhere}
         h1{font-size:1.7rem;line-height:1.25;margin:.6rem 0 .2rem}
