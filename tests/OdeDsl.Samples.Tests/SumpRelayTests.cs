@@ -1,4 +1,5 @@
 using OdeDsl;
+using OdeDsl.Assessment;
 using OdeDsl.Cycles;
 
 namespace Tarnwater.Tests;
@@ -41,4 +42,19 @@ public class SumpRelayTests
 
     [Fact]
     public void The_sump_never_rests() => Assert.DoesNotContain(new SumpRelay().FindEquilibria().Equilibria, static rest => rest.IsStable);
+
+    // The sump empties only while the pump carries more than flows in; towards equality the period grows without bound (mass balance).
+    [Fact]
+    public void The_relay_cycle_is_lost_where_the_pump_carries_just_what_flows_in()
+    {
+        SumpRelay sump = new();
+        ModelAssessment view = sump.Assess(new AssessmentOptions { SampledStarts = 0 });
+        MarginEdge pump = view.Margins.Parameters.Single(static margin => margin.Parameter.Name == "PumpFlow").Down;
+        MarginEdge inflow = view.Margins.Parameters.Single(static margin => margin.Parameter.Name == "Inflow").Up;
+        Assert.Equal(MarginEvent.CycleLost, pump.Event);
+        Assert.Equal(MarginEvent.CycleLost, inflow.Event);
+        Assert.True(Math.Abs(pump.Value!.Value - sump.Inflow) <= pump.Uncertainty);
+        Assert.True(Math.Abs(inflow.Value!.Value - sump.PumpFlow) <= inflow.Uncertainty);
+        Assert.True(pump.Uncertainty <= 1e-3 * sump.Inflow && inflow.Uncertainty <= 1e-3 * sump.PumpFlow);
+    }
 }

@@ -1,4 +1,5 @@
 using OdeDsl;
+using OdeDsl.Assessment;
 using OdeDsl.Cycles;
 using OdeDsl.Equilibria;
 using OdeDsl.Integration;
@@ -56,5 +57,44 @@ public class UnbalancedDrumTests
             Assert.True(Math.Abs(Math.IEEERemainder(state[0] - drum.WindowMiddle, 2 * Math.PI)) <= drum.WindowWidth / 2 + 1e-6);
             Assert.True(state[1] <= drum.ReleaseSpeed + 1e-6);
         }
+    }
+
+    // A light drum slides along the release speed until the window ends: neighbours meet on the surface, so the return map loses its rank.
+    [Fact]
+    public void A_light_drum_slides_along_the_release_speed_on_a_cycle_that_forgets_its_start_in_one_turn()
+    {
+        UnbalancedDrum drum = new() { Mass = 12 };
+        LimitCycle cycle = Assert.Single(drum.FindLimitCycles().Cycles, static cycle => cycle.IsStable);
+        Assert.True(cycle.Slides);
+        Assert.Equal([1, 0], cycle.Winding.AsSpan());
+        Assert.True(cycle.Multipliers.Min(static value => value.Magnitude) <= 1e-6);
+    }
+
+    // The margins against plain runs on both sides of them, from a drum turned over fast enough to be caught if a rotating cycle exists.
+    [Fact]
+    public void The_drum_keeps_turning_up_to_its_margins_and_comes_to_rest_beyond()
+    {
+        ModelAssessment view = new UnbalancedDrum().Assess(new AssessmentOptions { SampledStarts = 0 });
+        MarginEdge Down(string parameter) => view.Margins.Parameters.Single(margin => margin.Parameter.Name == parameter).Down;
+        MarginEdge Up(string parameter) => view.Margins.Parameters.Single(margin => margin.Parameter.Name == parameter).Up;
+
+        Assert.Equal(MarginEvent.CycleLost, Down("ReleaseSpeed").Event);
+        Assert.Equal(MarginEvent.CycleLost, Down("ClutchTorque").Event);
+        Assert.Equal(MarginEvent.None, Up("ReleaseSpeed").Event);
+        Assert.Equal(MarginEvent.None, Down("Mass").Event);
+        double release = Down("ReleaseSpeed").Value!.Value, torque = Down("ClutchTorque").Value!.Value;
+        Assert.True(Turns(new UnbalancedDrum { ReleaseSpeed = 1.002 * release }));
+        Assert.False(Turns(new UnbalancedDrum { ReleaseSpeed = 0.998 * release }));
+        Assert.True(Turns(new UnbalancedDrum { ClutchTorque = 1.002 * torque }));
+        Assert.False(Turns(new UnbalancedDrum { ClutchTorque = 0.998 * torque }));
+        Assert.True(Turns(new UnbalancedDrum { ReleaseSpeed = 14 }));
+        Assert.True(Turns(new UnbalancedDrum { Mass = 5 }));
+    }
+
+    private static bool Turns(UnbalancedDrum drum)
+    {
+        (drum.Angle, drum.Speed) = (Math.PI, 7);
+        Trajectory run = drum.Simulate(400);
+        return run.FinalState[0] - run.At(380)[0] > Math.Tau;
     }
 }

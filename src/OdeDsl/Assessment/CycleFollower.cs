@@ -29,6 +29,9 @@ internal sealed class CycleFollower(DynamicSystem system, int parameter, Cancell
     // A neighbour whose period or size differs by more is another motion, or too long a step.
     private const double LargestRatio = 2;
 
+    // Multipliers below this modulus are far from leaving the unit circle.
+    private const double FarInside = 0.5;
+
     private readonly SearchRegion region = SearchRegion.Of(system);
 
     /// <summary>The cycle found by the search, closed at the present value; <see langword="null"/> if it does not close.</summary>
@@ -56,10 +59,36 @@ internal sealed class CycleFollower(DynamicSystem system, int parameter, Cancell
         }
 
         TrackedCycle? next = Close(system.WithParameter(parameter, value), value, guess, period, from.Extents, from.Orbit.Winding);
-        if (next is null) return null;
-        double stretch = next.Period / from.Period, growth = next.SizeRelativeTo(from);
-        return stretch is > 1 / LargestRatio and < LargestRatio && growth is > 1 / LargestRatio and < LargestRatio ? next : null;
+        return next is not null && IsNeighbour(next, from) ? next : null;
     }
+
+    /// <summary>The motion that starts on a cycle and goes on at another value, for where <see cref="Move"/> finds nothing.</summary>
+    public SettledMotion Settle(TrackedCycle from, double value) =>
+        SettledMotion.Of(system.WithParameter(parameter, value), region, from.Orbit.State, from.Period, cancellation);
+
+    /// <summary>The cycle that a settled motion is on; <see langword="null"/> if it does not close.</summary>
+    public TrackedCycle? On(SettledMotion settled, TrackedCycle from, double value)
+    {
+        if (settled.Returns is not { } returns) return null;
+        double[] state = [.. settled.State];
+        region.Wrap(state);
+        DynamicSystem at = system.WithParameter(parameter, value);
+        // Once settled to rounding, several turns may repeat better than one by chance.
+        return Close(at, value, state, returns.SignedPeriod, returns.Scale, from.Orbit.Winding)
+            ?? (returns.Lag > 1 ? Close(at, value, state, returns.Times[^1] - returns.Times[^2], returns.Scale, from.Orbit.Winding) : null);
+    }
+
+    /// <summary>Whether a cycle can be another one carried on.</summary>
+    public static bool IsNeighbour(TrackedCycle next, TrackedCycle from) =>
+        next.SizeRelativeTo(from) is > 1 / LargestRatio and < LargestRatio && next.Period / from.Period is > 1 / LargestRatio and < LargestRatio;
+
+    /// <summary>
+    /// Whether a cycle that the motion from another one settled on is that one carried on. Its period may have grown without bound; but where
+    /// a multiplier came near the unit circle a longer period may be a doubled one.
+    /// </summary>
+    public static bool IsContinued(TrackedCycle next, TrackedCycle from) =>
+        IsNeighbour(next, from)
+        || (from.LargestMultiplier < FarInside && next.Period > from.Period && next.SizeRelativeTo(from) is > 1 / LargestRatio and < LargestRatio);
 
     private TrackedCycle? Close(DynamicSystem at, double value, double[] state, double period, double[] scale, int[] winding)
     {

@@ -39,37 +39,81 @@ internal sealed class CycleMargins(DynamicSystem system, IReadOnlyList<LimitCycl
 
     private MarginCandidate? Follow(CycleFollower follower, TrackedCycle first, double end, string name)
     {
-        double step = (end - first.Value) / steps;
-        double smallest = SmallestStep * Math.Abs(step);
-        double longest = LongestStep * Math.Abs(step);
+        double whole = (end - first.Value) / steps, step = whole;
         TrackedCycle last = first;
         TrackedCycle? before = null;
         while (last.Value != end)
         {
             double value = Math.Abs(end - last.Value) <= Math.Abs(step) ? end : last.Value + step;
             TrackedCycle? next = follower.Move(last, before, value);
-            if (next is null)
+            if (next is null && Math.Abs(step) > SmallestStep * Math.Abs(whole))
             {
-                if (Math.Abs(step) <= smallest) return Lost(first, last, value, name);
                 step /= 2;
-                continue;
             }
-
-            if (next.Stability == Stability.Unstable) return LostStability(follower, last, next, name);
-            (before, last) = (last, next);
-            step = Math.CopySign(Math.Min(Growth * Math.Abs(step), longest), step);
+            else if (next is null)
+            {
+                double beyond = Math.Abs(end - last.Value) <= Math.Abs(whole) ? end : last.Value + whole;
+                if (Leap(follower, first, ref last, beyond, name) is { } change) return change;
+                (before, step) = (null, whole);
+            }
+            else if (next.Stability == Stability.Unstable)
+            {
+                return LostStability(follower, last, next, name);
+            }
+            else
+            {
+                (before, last) = (last, next);
+                step = Math.CopySign(Math.Min(Growth * Math.Abs(step), LongestStep * Math.Abs(whole)), whole);
+            }
         }
 
         return null;
     }
 
-    private static MarginCandidate Lost(TrackedCycle first, TrackedCycle last, double beyond, string name)
+    /// <summary>
+    /// Where a cycle does not close by Newton's method the motion itself is followed at a value further on. It may settle on the cycle again,
+    /// which has passed a corner between switching surfaces; or the two values are brought together until the cycle's end lies between.
+    /// </summary>
+    private static MarginCandidate? Leap(CycleFollower follower, TrackedCycle first, ref TrackedCycle last, double beyond, string name)
+    {
+        double accuracy = SmallestStep * Math.Abs(beyond - last.Value);
+        double value = beyond;
+        SettledMotion? elsewhere = null;
+        while (elsewhere is null || Math.Abs(beyond - last.Value) > accuracy)
+        {
+            SettledMotion settled = follower.Settle(last, value);
+            TrackedCycle? next = follower.On(settled, last, value);
+            if (settled.Returns is not null && next is null) return NotClosed(last, value, name, settled);
+            if (next is not null && CycleFollower.IsContinued(next, last))
+            {
+                last = next;
+                if (elsewhere is null) return null;
+            }
+            else
+            {
+                (beyond, elsewhere) = (value, settled);
+            }
+
+            value = last.Value + ((beyond - last.Value) / 2);
+        }
+
+        return Lost(first, last, beyond, name, elsewhere);
+    }
+
+    private static MarginCandidate NotClosed(TrackedCycle last, double beyond, string name, SettledMotion settled) => new(
+        MarginEvent.Unknown,
+        last.Value,
+        name,
+        $"{name} could not be followed further",
+        string.Create(CultureInfo.InvariantCulture, $"it does not close at {beyond:G9} by Newton's method, but {settled.Text}"));
+
+    private static MarginCandidate Lost(TrackedCycle first, TrackedCycle last, double beyond, string name, SettledMotion settled)
     {
         string evidence = string.Create(
             CultureInfo.InvariantCulture,
-            $"followed in steps up to here, where its extent is {last.SizeRelativeTo(first):P0} and its period {last.Period / first.Period:P0} of the present ones and its largest multiplier has modulus {last.LargestMultiplier:G4}; it does not close at {beyond:G9}");
+            $"followed in steps up to here, where its extent is {last.SizeRelativeTo(first):P0} and its period {last.Period / first.Period:P0} of the present ones and its largest multiplier has modulus {last.LargestMultiplier:G4}; at {beyond:G9} {settled.Text}");
         return new MarginCandidate(
-            MarginEvent.CycleLost, last.Value, name, $"{name} is no longer found", evidence, null, Math.Abs(beyond - last.Value));
+            MarginEvent.CycleLost, last.Value, name, $"{name} is no longer found, and {settled.Text}", evidence, null, Math.Abs(beyond - last.Value));
     }
 
     private static MarginCandidate LostStability(CycleFollower follower, TrackedCycle stable, TrackedCycle unstable, string name)

@@ -53,12 +53,12 @@ internal sealed class MarginSearch(
         if (end == value) return Unchanged(parameter, value, end);
         MarginCandidate[] ofRests = [.. restMargins.Between(parameter, value, end)];
         MarginCandidate? rest = Nearest(ofRests, value);
-        MarginCandidate? cycle = Nearest(cycleMargins.Between(parameter, value, rest?.Value ?? end), value);
+        MarginCandidate[] ofCycles = [.. cycleMargins.Between(parameter, value, rest?.Value ?? end)];
+        MarginCandidate? cycle = Nearest(ofCycles, value);
         bool sameEvent = rest is not null && cycle is not null
             && Math.Abs(rest.Value - cycle.Value) <= SameEvent * Math.Abs(rest.Value - value);
         MarginCandidate? nearest = cycle is null || sameEvent ? rest : cycle;
-        MarginCandidate[] all = cycle is null || sameEvent ? ofRests : [.. ofRests, cycle];
-        MarginCandidate? unknown = all
+        MarginCandidate? unknown = ofRests.Concat(ofCycles)
             .Where(candidate => candidate.Event == MarginEvent.Unknown
                 && (nearest is null || Math.Abs(candidate.Value - value) < Math.Abs(nearest.Value - value)))
             .MinBy(candidate => Math.Abs(candidate.Value - value));

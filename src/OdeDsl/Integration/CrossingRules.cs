@@ -86,11 +86,24 @@ internal sealed class CrossingRules
         else
         {
             DecideLaterEntries(index, time, state);
+            if (sliding.IsActive) LeaveSlidingIfReleased(time, state, direction);
         }
 
         Carry(index, speed, position);
         crossing = new Crossing(time, index, from, to, what);
         return StepStatus.Accepted;
+    }
+
+    // Beyond another surface the one slid along may no longer attract: the rates that follow are then those of the side it lets go to,
+    // and the tangents jump to these. The end of the sliding, met next, adds nothing.
+    private void LeaveSlidingIfReleased(double time, ReadOnlySpan<double> state, int direction)
+    {
+        (double approachBelow, double approachAbove) = sliding.Approaches(time, state);
+        if (direction * approachBelow > 0 && direction * approachAbove < 0) return;
+        double entry = regime[sliding.Switch];
+        regime[sliding.Switch] = direction * approachBelow > 0 ? sliding.EntryAbove : sliding.EntryBelow;
+        system.Rates(time, state, regime, after);
+        regime[sliding.Switch] = entry;
     }
 
     private Crossing EndSliding(Guard guard, double time, ReadOnlySpan<double> state)

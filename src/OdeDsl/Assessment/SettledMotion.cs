@@ -1,0 +1,79 @@
+using System.Globalization;
+using OdeDsl.Cycles;
+using OdeDsl.Equilibria;
+using OdeDsl.Integration;
+using OdeDsl.Modeling;
+
+namespace OdeDsl.Assessment;
+
+/// <summary>
+/// Where a motion ends that starts on a cycle's last known place, after the parameter has moved on: on a closed orbit again, at rest,
+/// or far away. Tells a cycle that only failed to close by Newton's method, because it passes a corner between switching surfaces,
+/// from one that is gone.
+/// </summary>
+/// <param name="State">Its last state; on the closed orbit if it repeats itself.</param>
+/// <param name="Returns">Its returns to a section, if it repeats itself.</param>
+/// <param name="Text">What it does, as a clause.</param>
+internal sealed record SettledMotion(double[] State, ReturnSequence? Returns, string Text)
+{
+    // Far tighter than a return must close, far cheaper than shooting.
+    private const double Tolerance = 1e-9;
+
+    // Windows in periods of the cycle that was lost; each twice as long as the one before.
+    private const double FirstWindow = 20;
+    private const int Windows = 5;
+
+    // Steps of one window at most: many for any cycle, few enough where the motion accumulates crossings.
+    private const int MaximumSteps = 50_000;
+
+    // Motion over a window below this part of the region is rest.
+    private const double Still = 1e-6;
+
+    // The returns of a motion that has settled repeat to this part of its extents.
+    private const double Repeats = 1e-6;
+
+    /// <summary>Follows the motion.</summary>
+    public static SettledMotion Of(DynamicSystem system, SearchRegion region, double[] start, double period, CancellationToken cancellation)
+    {
+        double[] state = [.. start];
+        double length = FirstWindow * period;
+        for (int window = 0; window < Windows; window++, length *= 2)
+        {
+            Trajectory run;
+            try
+            {
+                run = system.WithInitialState(state).Simulate(
+                    length, new SimulationOptions { RelativeTolerance = Tolerance, MaximumSteps = MaximumSteps }, null, cancellation);
+            }
+            catch (IntegrationException failure)
+            {
+                return new SettledMotion(state, null, string.Create(
+                    CultureInfo.InvariantCulture, $"the motion from it cannot be followed ({failure.Reason})"));
+            }
+
+            state = run.FinalState;
+            if (region.IsRunaway(state)) return new SettledMotion(state, null, "the motion from it runs away");
+            if (IsStill(run, region)) return new SettledMotion(state, null, "the motion from it comes to rest");
+            if (ReturnSequence.Of(run, region) is { Lag: > 0, Displacement: <= Repeats } returns)
+            {
+                return new SettledMotion([.. returns.States[^1]], returns, string.Create(
+                    CultureInfo.InvariantCulture, $"the motion from it repeats itself after {AssessmentText.Time(system.Description, returns.SignedPeriod)}"));
+            }
+
+            region.Wrap(state);
+        }
+
+        return new SettledMotion(state, null, "the motion from it has neither settled nor come to rest within the work allowed");
+    }
+
+    private static bool IsStill(Trajectory run, SearchRegion region)
+    {
+        ReadOnlySpan<double> end = run.StateAtNode(run.Times.Length - 1);
+        for (int node = run.Times.Length / 2; node < run.Times.Length; node++)
+        {
+            if (!(region.Distance(end, run.StateAtNode(node)) <= Still)) return false;
+        }
+
+        return true;
+    }
+}
