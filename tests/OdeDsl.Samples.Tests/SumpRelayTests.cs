@@ -10,6 +10,8 @@ public class SumpRelayTests
     // PullInTime ln 2 to the middle, in which the level runs on: V grows by Qin d + (Qpump - Qin) d. What is left of the armature's way is
     // e^(-T/PullInTime), here below 1e-50.
     [Theory]
+    [InlineData(0.05)]
+    [InlineData(0.2)]
     [InlineData(0.5)]
     [InlineData(5.0)]
     public void The_pump_cycles_with_the_closed_form_period(double pullInTime)

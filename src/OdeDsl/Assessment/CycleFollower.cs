@@ -64,7 +64,7 @@ internal sealed class CycleFollower(DynamicSystem system, int parameter, Cancell
 
     /// <summary>The motion that starts on a cycle and goes on at another value, for where <see cref="Move"/> finds nothing.</summary>
     public SettledMotion Settle(TrackedCycle from, double value) =>
-        SettledMotion.Of(system.WithParameter(parameter, value), region, from.Orbit.State, from.Period, cancellation);
+        SettledMotion.Of(system.WithParameter(parameter, value), region, from, cancellation);
 
     /// <summary>The cycle that a settled motion is on; <see langword="null"/> if it does not close.</summary>
     public TrackedCycle? On(SettledMotion settled, TrackedCycle from, double value)

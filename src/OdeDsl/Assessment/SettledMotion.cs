@@ -32,11 +32,15 @@ internal sealed record SettledMotion(double[] State, ReturnSequence? Returns, st
     // The returns of a motion that has settled repeat to this part of its extents.
     private const double Repeats = 1e-6;
 
+    // A repetition smaller than this part of the cycle that was left is rounding on top of a slow drift.
+    private const double SmallestPart = 1e-3;
+    private const int Samples = 64;
+
     /// <summary>Follows the motion.</summary>
-    public static SettledMotion Of(DynamicSystem system, SearchRegion region, double[] start, double period, CancellationToken cancellation)
+    public static SettledMotion Of(DynamicSystem system, SearchRegion region, TrackedCycle from, CancellationToken cancellation)
     {
-        double[] state = [.. start];
-        double length = FirstWindow * period;
+        double[] state = [.. from.Orbit.State];
+        double length = FirstWindow * from.Period;
         for (int window = 0; window < Windows; window++, length *= 2)
         {
             Trajectory run;
@@ -54,7 +58,7 @@ internal sealed record SettledMotion(double[] State, ReturnSequence? Returns, st
             state = run.FinalState;
             if (region.IsRunaway(state)) return new SettledMotion(state, null, "the motion from it runs away");
             if (IsStill(run, region)) return new SettledMotion(state, null, "the motion from it comes to rest");
-            if (ReturnSequence.Of(run, region) is { Lag: > 0, Displacement: <= Repeats } returns)
+            if (ReturnSequence.Of(run, region) is { Lag: > 0, Displacement: <= Repeats } returns && IsOfSize(run, returns, from))
             {
                 return new SettledMotion([.. returns.States[^1]], returns, string.Create(
                     CultureInfo.InvariantCulture, $"the motion from it repeats itself after {AssessmentText.Time(system.Description, returns.SignedPeriod)}"));
@@ -64,6 +68,19 @@ internal sealed record SettledMotion(double[] State, ReturnSequence? Returns, st
         }
 
         return new SettledMotion(state, null, "the motion from it has neither settled nor come to rest within the work allowed");
+    }
+
+    // How far the motion goes during one repetition, against the cycle it came from.
+    private static bool IsOfSize(Trajectory run, ReturnSequence returns, TrackedCycle from)
+    {
+        double[] low = run.At(returns.Times[^1]), high = [.. low];
+        for (int k = 1; k < Samples; k++)
+        {
+            double[] state = run.At(returns.Times[^1] - (returns.SignedPeriod * k / Samples));
+            for (int i = 0; i < state.Length; i++) (low[i], high[i]) = (Math.Min(low[i], state[i]), Math.Max(high[i], state[i]));
+        }
+
+        return Enumerable.Range(0, low.Length).Any(i => high[i] - low[i] >= SmallestPart * from.Extents[i]);
     }
 
     private static bool IsStill(Trajectory run, SearchRegion region)

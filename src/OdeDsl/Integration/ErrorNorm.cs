@@ -15,6 +15,12 @@ internal sealed class ErrorNorm
     /// </summary>
     private const double ShortestTangent = 1e-250;
 
+    /// <summary>
+    /// The same against the longest tangent: far below what rounding leaves of it in any use of the two together, and not so far that steps
+    /// would have to follow a decay of hundreds of decades.
+    /// </summary>
+    private const double ShortestShare = 1e-30;
+
     private readonly int stateCount;
     private readonly int dimension;
     private readonly double[] extents;
@@ -97,13 +103,21 @@ internal sealed class ErrorNorm
     /// </summary>
     public void FollowTangents(ReadOnlySpan<double> y)
     {
+        double longest = 0;
+        for (int start = stateCount; start < dimension; start += stateCount) longest = Math.Max(longest, LengthOfTangent(y, start));
+        double shortest = Math.Max(ShortestTangent, ShortestShare * longest);
         for (int start = stateCount; start < dimension; start += stateCount)
         {
-            double length = 0;
-            for (int i = 0; i < stateCount; i++) length = Math.Max(length, Math.Abs(y[start + i]) / extents[i]);
-            length = Math.Max(length, ShortestTangent);
+            double length = Math.Max(LengthOfTangent(y, start), shortest);
             for (int i = 0; i < stateCount; i++) Absolute[start + i] = Relative * length * extents[i];
         }
+    }
+
+    private double LengthOfTangent(ReadOnlySpan<double> y, int start)
+    {
+        double length = 0;
+        for (int i = 0; i < stateCount; i++) length = Math.Max(length, Math.Abs(y[start + i]) / extents[i]);
+        return length;
     }
 
     private double MeanSquare(double[] error, double[] before, double[] after, int from, int to)
