@@ -6,7 +6,7 @@ using System.Linq;
 namespace OdeDsl.Generators.Algebra;
 
 /// <summary>
-/// Schedules compute both branches of a condition. Numbers do not mind, but Clamp and Sign can throw: where the user's code comes to
+/// Schedules compute both branches of a condition. Numbers do not mind, but Clamp, Sign and tables can throw: where the user's code comes to
 /// one only on some branch, its operands are replaced by harmless ones off that branch. The values that are chosen stay the same.
 /// </summary>
 /// <remarks>
@@ -101,6 +101,8 @@ internal sealed class BranchGuard
                 Operator.Clamp when _conditional.Contains(index) => _graph.Ternary(
                     Operator.Clamp, first, Masked(guards[index], At(rewritten, node.Second), double.NaN), At(rewritten, node.Third)),
                 Operator.Sign when _conditional.Contains(index) => _graph.Unary(Operator.Sign, Masked(guards[index], first, 0.0)),
+                Operator.TableValue when _conditional.Contains(index) =>
+                    TableNodes.Value(_graph, TableNodes.TableOf(node), Masked(guards[index], first, double.NaN)),
                 _ => _graph.Intern(node with { First = first, Second = At(rewritten, node.Second), Third = At(rewritten, node.Third) }),
             };
         }

@@ -42,6 +42,9 @@ internal sealed class DerivativeRules(ExpressionGraph graph)
             Operator.Remainder or Operator.IEEERemainder => Algebra.Subtract(da, Algebra.Multiply(WholeQuotient(index), db)),
             Operator.Sign or Operator.Floor or Operator.Ceiling or Operator.Truncate or Operator.Round or Operator.RoundAwayFromZero
                 => Algebra.Zero,
+            Operator.TableSegment or Operator.TablePositionSlope => Algebra.Zero,
+            Operator.TableValue or Operator.TablePolynomial or Operator.TablePosition =>
+                Algebra.IsZero(da) || TableNodes.Slope(graph, node) is not (>= 0 and var slope) ? Algebra.Zero : Algebra.Multiply(slope, da),
             _ => Algebra.IsZero(da) ? Algebra.Zero : OfFunction(node.Operator, index, a, da),
         };
     }

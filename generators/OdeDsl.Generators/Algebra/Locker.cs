@@ -78,6 +78,8 @@ internal sealed class Locker
             Operator.Truncate => Truncated(Whole(index, a, _free.Unary(Operator.Floor, node.First)), a),
             Operator.Round or Operator.RoundAwayFromZero => Whole(index, PlusHalf(a), index),
             Operator.Remainder => Remainder(index, a, b),
+            Operator.TableValue => TableNodes.Polynomial(Graph, node.Index, 0, a, _switches.Segment(
+                node.Index, a, new SwitchRequest(TableNodes.Segment(_free, node.Index, node.First), index, IsRelation: false))),
             Operator.IEEERemainder => MinusMultiple(a, Whole(index, PlusHalf(Graph.Binary(Operator.Divide, a, b)), Quotient(index)), b),
             _ => asWritten,
         };

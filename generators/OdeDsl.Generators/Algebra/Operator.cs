@@ -86,4 +86,21 @@ internal enum Operator : byte
 
     /// <summary>The regime entry of a whole-number switch, as a number.</summary>
     WholeNumber,
+
+    // Tables, see TableNodes. Payload: index of the table.
+
+    /// <summary>The value at First, as the user wrote it.</summary>
+    TableValue,
+
+    /// <summary>The number of the segment that holds First.</summary>
+    TableSegment,
+
+    /// <summary>The polynomial of segment Second at First, or a derivative of it (its order is in the payload too).</summary>
+    TablePolynomial,
+
+    /// <summary>The position of First among the knots, on the scale of segment Second.</summary>
+    TablePosition,
+
+    /// <summary>The derivative of that position.</summary>
+    TablePositionSlope,
 }

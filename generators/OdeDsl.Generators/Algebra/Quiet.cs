@@ -3,13 +3,13 @@ using System.Collections.Generic;
 namespace OdeDsl.Generators.Algebra;
 
 /// <summary>
-/// Replaces the functions of System.Math that can throw (Clamp with crossed bounds, Sign of NaN) by conditions with the same value
+/// Replaces the functions that can throw (Clamp with crossed bounds, Sign of NaN, a table outside its knots) by conditions with the same value
 /// everywhere else. For expressions that are computed whether or not the user's code would come to them.
 /// </summary>
 internal static class Quiet
 {
     /// <summary>Whether evaluating the operation itself may throw.</summary>
-    public static bool CanThrow(Operator operation) => operation is Operator.Clamp or Operator.Sign;
+    public static bool CanThrow(Operator operation) => operation is Operator.Clamp or Operator.Sign or Operator.TableValue;
 
     /// <summary>The quiet form of one operation whose operands are quiet.</summary>
     public static int Form(ExpressionGraph graph, int index)
@@ -21,6 +21,7 @@ internal static class Quiet
                 graph, Operator.Greater, node.First, node.Third, node.Third, node.First)),
             Operator.Sign => Choose(graph, Operator.Greater, node.First, graph.Constant(0.0), graph.Constant(1.0), Choose(
                 graph, Operator.Less, node.First, graph.Constant(0.0), graph.Constant(-1.0), graph.Constant(0.0))),
+            Operator.TableValue => TableNodes.Quiet(graph, node),
             _ => index,
         };
     }

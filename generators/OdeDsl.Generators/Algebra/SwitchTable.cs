@@ -17,6 +17,7 @@ internal sealed class SwitchTable(ExpressionGraph free, ExpressionGraph locked, 
     private readonly List<SwitchingFunction> _functions = [];
     private readonly Dictionary<int, int> _relationOf = [];
     private readonly Dictionary<int, int> _wholeNumberOf = [];
+    private readonly Dictionary<(int Table, int X), int> _segmentOf = [];
 
     public IReadOnlyList<SwitchingFunction> Functions => _functions;
 
@@ -62,6 +63,20 @@ internal sealed class SwitchTable(ExpressionGraph free, ExpressionGraph locked, 
         }
 
         return locked.Leaf(Operator.WholeNumber, index);
+    }
+
+    /// <summary>
+    /// The regime entry that numbers a table's segment. Its switching function counts positions on the scale of that same segment: smooth
+    /// across the knots, which are surfaces.
+    /// </summary>
+    public int Segment(int table, int x, SwitchRequest request)
+    {
+        if (_segmentOf.TryGetValue((table, x), out int known)) return known;
+        int entry = locked.Leaf(Operator.WholeNumber, _functions.Count);
+        Append(new SwitchingFunction(
+            TableNodes.Position(locked, table, x, entry), SwitchKind.WholeNumber, request.Decision, request.Source, request.IsRelation) { Table = table });
+        _segmentOf.Add((table, x), entry);
+        return entry;
     }
 
     /// <summary>A switch made for a kink takes over the relation of the user that comes later: kinks do not mind.</summary>

@@ -315,4 +315,26 @@ internal static class Descriptors
         "ODE0080", "A switch expression must have a value for every input",
         "This switch has no arm for some inputs; add an arm '_ =>'",
         Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0080");
+
+    // Tables.
+
+    public static readonly DiagnosticDescriptor TableNotFixed = new(
+        "ODE0081", "A table must be static and fixed",
+        "Table '{0}' must be a static read-only field, or a static property with 'get' only and an initializer, of type OdeDsl.Table",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0081");
+
+    public static readonly DiagnosticDescriptor TableNotMarked = new(
+        "ODE0082", "A table must be marked",
+        "'{0}' is a table without [Table]; mark it, so that its knots and units belong to the model",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0082");
+
+    public static readonly DiagnosticDescriptor TableNotAccessible = new(
+        "ODE0083", "A table must be within reach of the model",
+        "Table '{0}' is read through a helper, but '{1}' itself cannot reach it; make it internal",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0083");
+
+    public static readonly DiagnosticDescriptor TableMemberNotSupported = new(
+        "ODE0084", "Equations read tables by At",
+        "'{0}' uses '{1}' of a table; an equation reads a table only by 'At(x)'",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0084");
 }

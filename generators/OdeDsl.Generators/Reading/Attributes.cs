@@ -15,6 +15,7 @@ internal static class Attributes
     public const string Rate = "Rate";
     public const string Observable = "Observable";
     public const string Angle = "Angle";
+    public const string Table = "Table";
 
     /// <summary>The short names of all attributes that mark a member of a model.</summary>
     public static readonly string[] OfMembers = [State, Parameter, Rate, Observable, Angle];

@@ -16,6 +16,7 @@ internal sealed partial class BodyReader
     {
         IMethodSymbol method = operation.TargetMethod;
         if (MathFunctions.IsHome(method.ContainingType)) return MathCall(operation, method);
+        if (TableReader.IsTable(method.ContainingType)) return TableCall(operation);
         if (method.MethodKind is not (MethodKind.Ordinary or MethodKind.LocalFunction)) return Unsupported(operation);
         bool isLocal = method.MethodKind == MethodKind.LocalFunction;
         if (!isLocal && !method.IsStatic && !BelongsToModel(operation.Instance, operation, method)) return UnknownValue.Instance;

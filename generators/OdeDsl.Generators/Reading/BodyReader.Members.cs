@@ -17,6 +17,7 @@ internal sealed partial class BodyReader
     private Value Field(IFieldReferenceOperation operation)
     {
         IFieldSymbol field = operation.Field;
+        if (TableReader.IsTable(field.Type)) return Table(operation, field);
         if (!field.IsStatic && !BelongsToModel(operation.Instance, operation, field)) return UnknownValue.Instance;
         if (!field.IsReadOnly) return Changeable(operation, field.AssociatedSymbol ?? field);
         return Initial(operation, field);
@@ -25,7 +26,9 @@ internal sealed partial class BodyReader
     private Value Property(IPropertyReferenceOperation operation)
     {
         IPropertySymbol property = operation.Property;
+        if (TableReader.IsTable(property.ContainingType)) return OfTable(operation, property);
         if (operation.Arguments.Length > 0) return Unsupported(operation);
+        if (TableReader.IsTable(property.Type)) return Table(operation, property);
         if (!property.IsStatic && !BelongsToModel(operation.Instance, operation, property)) return UnknownValue.Instance;
         if (_leaves.TryGetValue(property.OriginalDefinition, out int leaf)) return new NumberValue(leaf);
         if (Attributes.Find(property, Attributes.State) is not null || Attributes.Find(property, Attributes.Parameter) is not null)

@@ -22,6 +22,9 @@ internal sealed record ModelDefinition(
 {
     /// <summary>The unit of time, or the empty string.</summary>
     public string TimeUnit { get; init; } = "";
+
+    /// <summary>The tables that the equations read; nodes name them by position.</summary>
+    public EquatableArray<TableDefinition> Tables { get; init; } = EquatableArray<TableDefinition>.Empty;
 }
 
 /// <summary>Where the model class stands: enough to reopen it in a generated file.</summary>
@@ -58,6 +61,11 @@ internal sealed record ParameterDefinition(PropertyDefinition Property, string U
 /// <summary>An observable.</summary>
 /// <param name="Name">The member's name, unescaped.</param>
 internal sealed record ObservableDefinition(string Name, string Summary, string Unit, int Value, string Text);
+
+/// <summary>A table.</summary>
+/// <param name="Name">The member's name, unescaped.</param>
+/// <param name="Access">The expression that reaches it from generated code.</param>
+internal sealed record TableDefinition(string Name, string Unit, string ArgumentUnit, string Access);
 
 /// <summary>What the generator needs to print the implementing part of a partial property.</summary>
 /// <param name="Name">The name, unescaped.</param>

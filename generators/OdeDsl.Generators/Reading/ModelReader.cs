@@ -35,6 +35,7 @@ internal sealed class ModelReader(
         properties.Read();
         if (properties.States.Count + properties.FailedStates.Count == 0)
             _problems.Report(Descriptors.ModelWithoutStates, place, model.Name);
+        TableReader.Check(model, compilation, _problems, cancellation);
         EquationReader equations = new(model, properties, compilation, _problems, cancellation);
         equations.Read();
         ModelDefinition definition = Define(chain, type.TakenNames(), properties, equations);
@@ -94,6 +95,7 @@ internal sealed class ModelReader(
             pruned.Renumber(bodies.ConditionTexts),
             takenNames)
         {
+            Tables = isSound ? new(bodies.Tables.ToArray()) : EquatableArray<TableDefinition>.Empty,
             TimeUnit = Attributes.Find(model, "OdeModel") is { } mark ? Attributes.Named(mark, "TimeUnit", "") ?? "" : "",
         };
     }

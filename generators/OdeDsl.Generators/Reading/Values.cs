@@ -18,6 +18,9 @@ internal sealed record WholeValue(Choice<BigInteger> Choice, int? Number = null)
 /// <summary>A constant of another type: float, decimal, text or null. It can be passed on and, if it is a number, converted.</summary>
 internal sealed record LiteralValue(object? Constant) : Value;
 
+/// <summary>A table, by its position in the model.</summary>
+internal sealed record TableReference(int Index) : Value;
+
 /// <summary>The model itself.</summary>
 internal sealed record ModelValue : Value
 {

@@ -57,7 +57,7 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
 
         NameScope scope = names.NewScope();
         Dictionary<int, string> known = [];
-        ExpressionPrinter printer = new(quantity.Graph, known, leaf => names.LocalOf(leaf) ?? ModelNames.Access(leaf));
+        ExpressionPrinter printer = new(quantity.Graph, known, leaf => names.LocalOf(leaf) ?? ModelNames.Access(leaf), names.Tables);
         Dictionary<int, string> values = [];
         CommentCursor comments = new(writer, quantity.Results);
         foreach (Step step in schedule.Steps)
@@ -112,7 +112,7 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
             known[slot.Key] = quantity.Graph.IsCondition(slot.Key) ? $"({access} != 0d)" : access;
         }
 
-        ExpressionPrinter printer = new(quantity.Graph, known, ModelNames.Access);
+        ExpressionPrinter printer = new(quantity.Graph, known, ModelNames.Access, names.Tables);
         CommentCursor comments = new(writer, quantity.Results);
         int count = 0;
         foreach (Step step in part.Steps)

@@ -23,6 +23,7 @@ internal sealed class DescriptionWriter(SourceWriter writer, ModelDefinition mod
         List("States", model.States.Select(StateText));
         List("Parameters", model.Parameters.Select(ParameterText));
         List("Observables", model.Observables.Select(ObservableText));
+        if (model.Tables.Count > 0) List("Tables", model.Tables.Select(TableText));
         List("Switches", equations.Switches.Select(SwitchText));
         writer.Line($"    StateSparsity = {Pattern(equations.StateJacobian)},");
         writer.Line($"    ParameterSparsity = {Pattern(equations.ParameterJacobian)},");
@@ -51,11 +52,15 @@ internal sealed class DescriptionWriter(SourceWriter writer, ModelDefinition mod
         $"new {Namespace}ObservableDescription({Literals.Text(observable.Name)}, {Literals.Text(observable.Unit)}, "
         + $"{Literals.Text(observable.Text)}, {Literals.Text(observable.Summary)})";
 
+    private static string TableText(TableDefinition table) =>
+        $"new {Namespace}TableDescription({Literals.Text(table.Name)}, {Literals.Text(table.Unit)}, {Literals.Text(table.ArgumentUnit)}, {table.Access})";
+
     private string SwitchText(SwitchingFunction function)
     {
         Dependence dependence = equations.FreeDependences[function.Decision];
         return $"new {Namespace}SwitchDescription({Literals.Text(texts[function])}, "
-            + $"{Namespace}SwitchKind.{function.Kind}, {Bool((dependence & Dependence.State) != 0)}, {Bool((dependence & Dependence.Time) != 0)})";
+            + $"{Namespace}SwitchKind.{function.Kind}, {Bool((dependence & Dependence.State) != 0)}, {Bool((dependence & Dependence.Time) != 0)})"
+            + (function.Table is { } table ? $" {{ Table = {model.Tables[table].Access} }}" : "");
     }
 
     private static string Pattern(SparseMatrix matrix)

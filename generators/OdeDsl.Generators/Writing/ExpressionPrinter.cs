@@ -11,7 +11,9 @@ namespace OdeDsl.Generators.Writing;
 /// <param name="graph">The graph.</param>
 /// <param name="names">The names of shared values.</param>
 /// <param name="leaf">The text of a state, parameter, time, direction or regime entry.</param>
-internal sealed class ExpressionPrinter(ExpressionGraph graph, IReadOnlyDictionary<int, string> names, Func<Node, string> leaf)
+/// <param name="tables">The expressions that reach the tables.</param>
+internal sealed class ExpressionPrinter(
+    ExpressionGraph graph, IReadOnlyDictionary<int, string> names, Func<Node, string> leaf, IReadOnlyList<string> tables)
 {
     /// <summary>How tightly a printed form holds together; C#'s order of operators.</summary>
     private enum Binding
@@ -72,6 +74,7 @@ internal sealed class ExpressionPrinter(ExpressionGraph graph, IReadOnlyDictiona
         Operator.Sign => ("(double)" + Call(node, "Sign"), Binding.Unary),
         Operator.RoundAwayFromZero => (
             $"global::System.Math.Round({Argument(node.First)}, global::System.MidpointRounding.AwayFromZero)", Binding.Primary),
+        >= Operator.TableValue and <= Operator.TablePositionSlope => (TableCall(node), Binding.Primary),
         Operator.LogBase => (Call(node, "Log"), Binding.Primary),
         _ => (Call(node, node.Operator.ToString()), Binding.Primary),
     };
@@ -102,6 +105,22 @@ internal sealed class ExpressionPrinter(ExpressionGraph graph, IReadOnlyDictiona
         if (node.Second >= 0) arguments += ", " + Argument(node.Second);
         if (node.Third >= 0) arguments += ", " + Argument(node.Third);
         return $"global::System.Math.{function}({arguments})";
+    }
+
+    private string TableCall(Node node)
+    {
+        int order = TableNodes.OrderOf(node);
+        string arguments = Argument(node.First);
+        if (node.Second >= 0) arguments += ", " + Argument(node.Second);
+        string member = node.Operator switch
+        {
+            Operator.TableSegment => "Segment",
+            Operator.TablePosition => "Position",
+            Operator.TablePositionSlope => "PositionSlope",
+            _ when order > 0 => "Derivative",
+            _ => "At",
+        };
+        return $"{tables[TableNodes.TableOf(node)]}.{member}({(order > 0 ? Literals.Integer(order) + ", " : "")}{arguments})";
     }
 
     /// <summary>Conditions inside arguments stand in parentheses: <c>f(a &lt; b, c &gt; (d))</c> would read as a generic call.</summary>

@@ -18,11 +18,15 @@ internal sealed class ModelNames
 
     public ModelNames(ModelDefinition model)
     {
+        Tables = [.. model.Tables.Select(static table => table.Access)];
         NameScope scope = new(Arguments);
         _states = [.. model.States.Select(state => Claim(scope, Identifiers.Local(state.Property.Name)))];
         _parameters = [.. model.Parameters.Select(parameter => Claim(scope, Identifiers.Local(parameter.Property.Name)))];
         _directions = [.. model.States.Select(state => Claim(scope, Identifiers.Local(state.Property.Name) + "Direction"))];
     }
+
+    /// <summary>The expressions that reach the tables.</summary>
+    public IReadOnlyList<string> Tables { get; }
 
     /// <summary>The local that a leaf is read into, or <see langword="null"/> if it is read where it is used.</summary>
     public string? LocalOf(Node leaf) => leaf.Operator switch

@@ -234,7 +234,7 @@ internal sealed class BranchFollower
         for (int i = 0; i < probe.Length; i++) probe[i] = onSurface.Position[i] + SideProbe * tangent[i];
         double[] values = new double[curve.Regime.Length];
         curve.SystemAt(probe).SwitchingFunctions(0, curve.StateOf(probe), curve.Regime, values);
-        return system.Description.Switches[index].SideOf(values[index]) == entry;
+        return system.Description.Switches[index].SideOf(values[index], curve.Regime[index]) == entry;
     }
 
     private void Record(CurvePoint point, double distance, double? parameterValue = null)

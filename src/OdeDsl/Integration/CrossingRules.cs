@@ -127,7 +127,7 @@ internal sealed class CrossingRules
             // Each decision may change the functions after it: evaluated one by one.
             system.SwitchingFunctions(time, state, regime, functionsAfter);
             if (functionsAfter[later] == functions[later]) continue;
-            double side = system.Description.Switches[later].SideOf(functionsAfter[later]);
+            double side = system.Description.Switches[later].SideOf(functionsAfter[later], regime[later]);
             changed |= side != regime[later];
             regime[later] = side;
         }

@@ -1,3 +1,4 @@
+using System.Collections.Immutable;
 using OdeDsl.Modeling;
 
 namespace OdeDsl.Integration;
@@ -13,6 +14,7 @@ internal sealed class GuardSet
     private readonly DynamicSystem system;
     private readonly double[] regime;
     private readonly SlidingSurface sliding;
+    private readonly ImmutableArray<SwitchDescription> switches;
     private readonly SwitchKind[] kinds;
     private readonly int[] wholeNumbers;
     private readonly double[] functions;
@@ -24,7 +26,8 @@ internal sealed class GuardSet
         this.system = system;
         this.regime = regime;
         this.sliding = sliding;
-        kinds = [.. system.Description.Switches.Select(static item => item.Kind)];
+        switches = system.Description.Switches;
+        kinds = [.. switches.Select(static item => item.Kind)];
         wholeNumbers = [.. Enumerable.Range(0, kinds.Length).Where(index => kinds[index] == SwitchKind.WholeNumber)];
         functions = new double[kinds.Length];
         gradients = new double[kinds.Length * system.StateCount];
@@ -59,7 +62,7 @@ internal sealed class GuardSet
         for (int i = 0; i < slidingStart; i++)
         {
             Guard guard = this[i];
-            bool off = sliding.IsActive && guard.Switch == sliding.Switch;
+            bool off = (sliding.IsActive && guard.Switch == sliding.Switch) || switches[guard.Switch].IsOpen(regime[guard.Switch], guard.Sign < 0);
             values[i] = off ? Off : guard.Sign * (functions[guard.Switch] - guard.Surface);
         }
 

@@ -27,6 +27,9 @@ public enum IntegrationFailure
     /// <summary>The motion would slide along two surfaces at once, for which the method has no rule.</summary>
     SlidingOnSeveralSurfaces,
 
+    /// <summary>The argument of a table that does not extrapolate left its knots.</summary>
+    OutsideTable,
+
     /// <summary>The caller cancelled the run.</summary>
     Cancelled,
 }

@@ -85,6 +85,21 @@ internal sealed class Motion
     /// <summary>Whether the motion slid along a surface since it began.</summary>
     public bool Slid { get; private set; }
 
+    /// <summary>The text of a table that does not extrapolate and whose argument is outside its knots, or <see langword="null"/>.</summary>
+    public string? TableLeft
+    {
+        get
+        {
+            for (int i = 0; i < regime.Length; i++)
+            {
+                SwitchDescription item = system.Description.Switches[i];
+                if (item.Table is { Extrapolation: Extrapolation.Fail } table && table.IsEnd(regime[i])) return item.Text;
+            }
+
+            return null;
+        }
+    }
+
     private Stepper Explicit => explicitStepper ??= MakeStepper(IntegrationMethod.DormandPrince54);
 
     private Stepper Implicit => implicitStepper ??= MakeStepper(IntegrationMethod.RadauIIA5);
@@ -129,7 +144,7 @@ internal sealed class Motion
 
             if (options.Method == IntegrationMethod.Automatic && Current.SuggestsChange) ChangeMethod();
             StepStatus status = Current.Step(limit);
-            if (status is StepStatus.NotFinite or StepStatus.StepTooSmall && MeetSurfaceAhead()) continue;
+            if (status is StepStatus.NotFinite or StepStatus.StepTooSmall && TableLeft is null && MeetSurfaceAhead()) continue;
             if (status != StepStatus.Accepted || !guards.Any) return status;
             released = -1;
             SearchOutcome outcome = search.Search(Current);

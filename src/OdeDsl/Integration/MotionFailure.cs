@@ -8,6 +8,9 @@ internal static class MotionFailure
     {
         (IntegrationFailure reason, string detail) = status switch
         {
+            StepStatus.NotFinite when motion.TableLeft is { } table => (
+                IntegrationFailure.OutsideTable,
+                $"the argument of {table} left the knots, and the table does not extrapolate; add knots, or choose another extrapolation."),
             StepStatus.NotFinite => (
                 IntegrationFailure.NotFinite,
                 "the rates are infinite or not a number here, however small the step; check the equations at this state."),

@@ -9,7 +9,7 @@ namespace OdeDsl.Modeling;
 /// that is too short (and what a called function of System.Math throws, such as Clamp with crossed bounds). Results must not
 /// overlap inputs. All members are safe to call from several threads at once.
 /// Except for the member that computes rates as written, everything is evaluated with the regime locked: each condition takes
-/// the side its regime entry names (see <see cref="SwitchDescription.SideOf"/>), whatever its switching function says at the point.
+/// the side its regime entry names (see <see cref="SwitchDescription.SideOf(double)"/>), whatever its switching function says at the point.
 /// A formula thus stays smooth on both sides of its surface.
 /// </remarks>
 public interface IOdeSystem

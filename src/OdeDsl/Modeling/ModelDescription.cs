@@ -23,6 +23,9 @@ public sealed record ModelDescription
     /// <summary>The observables, in the order of the observable vector.</summary>
     public ImmutableArray<ObservableDescription> Observables { get; init; } = [];
 
+    /// <summary>The tables that the equations read.</summary>
+    public ImmutableArray<TableDescription> Tables { get; init; } = [];
+
     /// <summary>The switching functions, in the order of the regime vector.</summary>
     public ImmutableArray<SwitchDescription> Switches { get; init; } = [];
 

@@ -18,6 +18,6 @@ public enum SwitchKind
     /// <summary>Holds where g ≥ 0.</summary>
     NotBelow,
 
-    /// <summary>The entry is ⌊g⌋: every whole number is a surface (rounding functions and remainders).</summary>
+    /// <summary>The entry is ⌊g⌋: every whole number is a surface (rounding functions, remainders, knots of tables).</summary>
     WholeNumber,
 }

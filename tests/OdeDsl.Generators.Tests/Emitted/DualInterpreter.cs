@@ -42,12 +42,23 @@ internal sealed class DualInterpreter(ExpressionGraph graph, Interpreter values,
         if (node.IsLeaf) return seed(node) is var s ? new Tangent(s, Math.Abs(s), s != 0) : default;
         if (node.Operator == Operator.Conditional) return this[values[node.First] == 1 ? node.Second : node.Third];
         double x = values[node.First], y = node.Second >= 0 ? values[node.Second] : 0, z = node.Third >= 0 ? values[node.Third] : 0;
+        if (node.Operator is >= Operator.TableValue and <= Operator.TablePositionSlope) return OfTable(node, x, y);
         (double byFirst, double bySecond, double byThird) = Partials(node.Operator, values[index], x, y, z);
         Tangent sum = default(Tangent).Plus(byFirst, this[node.First]);
         if (node.Second >= 0) sum = sum.Plus(bySecond, this[node.Second]);
         if (node.Third >= 0) sum = sum.Plus(byThird, this[node.Third]);
         bool comparable = Math.Abs(x) < Huge && Math.Abs(y) < Huge && Math.Abs(z) < Huge;
         return comparable || !sum.Depends ? sum : new(double.NaN, double.NaN, true);
+    }
+
+    /// <summary>A table varies with its argument only; at a knot its slope depends on the side.</summary>
+    private Tangent OfTable(Node node, double x, double segment)
+    {
+        Table table = RandomTables.All[TableNodes.TableOf(node)];
+        if (node.Operator is Operator.TableSegment or Operator.TablePositionSlope) return default;
+        if (node.Operator == Operator.TablePosition) return default(Tangent).Plus(table.PositionSlope(segment), this[node.First]);
+        double slope = table.Knots.Contains(x) ? double.NaN : table.Derivative(1, x, table.Segment(x));
+        return default(Tangent).Plus(slope, this[node.First]);
     }
 
     private static (double X, double Y, double Z) Partials(Operator operation, double value, double x, double y, double z) => operation switch

@@ -62,6 +62,7 @@ internal sealed class EmittedModel
         text.Append("namespace Models;\n/// <summary>A model.</summary>\npublic sealed partial class ").Append(model.Type.Types[0].Name).Append("\n{\n");
         foreach (PropertyDefinition property in model.States.Select(static s => s.Property).Concat(model.Parameters.Select(static p => p.Property)))
             text.Append("/// <summary>A number.</summary>\npublic partial double @").Append(property.Name).Append(" { get; set; }\n");
+        for (int i = 0; i < model.Tables.Count; i++) text.Append(RandomTables.Declaration(model.Tables[i].Name, i));
         return text.Append("}\n").ToString();
     }
 }

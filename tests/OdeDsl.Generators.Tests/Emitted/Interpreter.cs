@@ -35,7 +35,18 @@ internal sealed class Interpreter(ExpressionGraph graph, double time, double[] s
         Operator.Not => 1 - this[node.First],
         Operator.FusedMultiplyAdd => Math.FusedMultiplyAdd(this[node.First], this[node.Second], this[node.Third]),
         Operator.Clamp => Math.Clamp(this[node.First], this[node.Second], this[node.Third]),
+        >= Operator.TableValue and <= Operator.TablePositionSlope => OfTable(node, RandomTables.All[TableNodes.TableOf(node)]),
         _ => node.Second < 0 ? Unary(node.Operator, this[node.First]) : Binary(node.Operator, this[node.First], this[node.Second]),
+    };
+
+    private double OfTable(Node node, Table table) => node.Operator switch
+    {
+        Operator.TableValue => table.At(this[node.First]),
+        Operator.TableSegment => table.Segment(this[node.First]),
+        Operator.TablePolynomial when TableNodes.OrderOf(node) == 0 => table.At(this[node.First], this[node.Second]),
+        Operator.TablePolynomial => table.Derivative(TableNodes.OrderOf(node), this[node.First], this[node.Second]),
+        Operator.TablePosition => table.Position(this[node.First], this[node.Second]),
+        _ => table.PositionSlope(this[node.First]),
     };
 
     private static double Unary(Operator operation, double x) => operation switch

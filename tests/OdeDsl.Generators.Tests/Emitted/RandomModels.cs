@@ -19,7 +19,7 @@ internal static class RandomModels
     public static readonly Gen<double> Ordinary = Gen.Int[-3000, 3000].Select(static i => (i + 0.3719) / 1017.0);
 
     private static readonly Gen<Instruction> Instruction = Gen.Select(
-        Gen.Int[0, 55], Gen.Int[0, 1000], Gen.Int[0, 1000], Gen.Int[0, 1000], Ordinary, static (op, a, b, c, k) => new Instruction(op, a, b, c, k));
+        Gen.Int[0, 57], Gen.Int[0, 1000], Gen.Int[0, 1000], Gen.Int[0, 1000], Ordinary, static (op, a, b, c, k) => new Instruction(op, a, b, c, k));
 
     public static Gen<Instruction[]> Recipe { get; } = Instruction.Array[6, 60];
 
@@ -35,7 +35,7 @@ internal static class RandomModels
         foreach (Instruction instruction in recipe) Apply(g, instruction, numbers, conditions);
         for (int i = 0; i < StateCount; i++) model.Rate(i, numbers[numbers.Count - 1 - i], "state " + i);
         model.Observable("Watched", numbers[^4]);
-        return model.Build();
+        return model.Build() with { Tables = RandomTables.Definitions(name) };
     }
 
     private static void Apply(ExpressionGraph g, Instruction i, List<int> numbers, List<int> conditions)
@@ -105,6 +105,7 @@ internal static class RandomModels
             41 => g.Unary(Offset(Operator.Floor, i.C % 5), a),
             42 => g.Binary(Operator.Remainder, a, i.C % 3 == 0 ? b : Constant(i.K)),
             43 => Constant(i.K),
+            56 or 57 => TableNodes.Value(g, i.C % RandomTables.All.Length, a),
             _ => g.Ternary(Operator.Conditional, Recent(conditions, i.A), b, c),
         };
     }
