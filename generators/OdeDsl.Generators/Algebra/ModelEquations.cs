@@ -27,6 +27,13 @@ internal sealed class ModelEquations
 
     public IReadOnlyList<int> Observables { get; private init; } = [];
 
+    /// <summary>The rates as written and the locked rates and switching functions, in the form that runs on any kind of number.</summary>
+    public IReadOnlyList<int> GenericRates { get; private init; } = [];
+
+    public IReadOnlyList<int> GenericLockedRates { get; private init; } = [];
+
+    public IReadOnlyList<int> GenericSwitches { get; private init; } = [];
+
     /// <summary>What each node of <see cref="Free"/> changes with.</summary>
     public Dependence[] FreeDependences { get; private init; } = [];
 
@@ -66,6 +73,9 @@ internal sealed class ModelEquations
             Switches = switches,
             Rates = BranchGuard.Apply(free, rates),
             Observables = BranchGuard.Apply(free, [.. model.Observables.Select(static observable => observable.Value)]),
+            GenericRates = GenericForms.Of(free, rates),
+            GenericLockedRates = GenericForms.Of(locker.Graph, lockedRates),
+            GenericSwitches = GenericForms.Of(locker.Graph, surfaces),
             FreeDependences = dependences,
             DependsOnTime = rates.Any(rate => (dependences[rate] & Dependence.Time) != 0),
             LockedRates = lockedRates,

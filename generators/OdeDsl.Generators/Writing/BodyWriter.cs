@@ -13,35 +13,37 @@ namespace OdeDsl.Generators.Writing;
 /// </summary>
 internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnlyDictionary<string, int> lengths, CancellationToken cancellationToken)
 {
-    /// <summary>Operations up to which arguments are read into locals; beyond, registers run out and locals only cost.</summary>
-    private const int SmallOperationCount = 100;
-
     /// <summary>Arguments and results up to which each has a local of its own; well below the JIT's limit of 512.</summary>
     private const int SmallLocalCount = 400;
 
     /// <summary>Places up to which zeros are written one by one.</summary>
     private const int SmallLength = 64;
 
-    /// <summary>Values handed on between methods at most: 128 kB of a thread's stack, which may be as small as 1 MB.</summary>
-    private const int LargestScratch = 16 * 1024;
-
-    /// <summary>Prints the lines between the braces of the member, and after it whatever methods it calls.</summary>
-    public void Write(Quantity quantity, string signature)
+    /// <summary>Decides how a quantity is computed.</summary>
+    public BodyPlan Plan(Quantity quantity)
     {
         Schedule schedule = Schedule.Of(quantity.Graph, [.. quantity.Results.Select(static result => result.Node)], cancellationToken);
-        IReadOnlyList<MethodPart> parts = MethodCutter.Cut(schedule);
-        bool isSmall = schedule.OperationCount <= SmallOperationCount && schedule.Reached.Count + quantity.Results.Count <= SmallLocalCount;
-        writer.Open(signature);
-        if (isSmall) WriteSmall(quantity, schedule);
-        else if (parts.Count == 1) WriteInPlace(quantity, schedule, parts[0], isWhole: true);
-        else WriteCalls(quantity, parts);
+        bool isSmall = schedule.OperationCount <= quantity.Kind.SmallOperationCount
+            && schedule.Reached.Count + quantity.Results.Count <= SmallLocalCount;
+        return new BodyPlan(quantity, schedule, isSmall ? [] : MethodCutter.Cut(schedule, quantity.Kind.Budget));
+    }
+
+    /// <summary>Prints the member, and after it whatever methods it calls.</summary>
+    public void Write(BodyPlan plan)
+    {
+        (Quantity quantity, Schedule schedule, IReadOnlyList<MethodPart> parts) = (plan.Quantity, plan.Schedule, plan.Parts);
+        writer.Open("public static void " + Signatures.Head(quantity.Method, quantity));
+        if (parts.Count == 0) WriteSmall(quantity, schedule);
+        else if (parts.Count == 1) WriteInPlace(quantity, parts[0], isWhole: true);
+        else WriteCalls(plan);
         writer.Close();
-        if (isSmall || parts.Count == 1) return;
+        if (parts.Count <= 1) return;
         for (int i = 0; i < parts.Count; i++)
         {
             writer.Line();
-            writer.Open($"private static void {quantity.PartName}{Literals.Integer(i + 1)}({Signatures.Parameters(quantity, parts[i].ScratchLength > 0)})");
-            WriteInPlace(quantity, schedule, parts[i], isWhole: false);
+            string name = quantity.PartName + Literals.Integer(i + 1);
+            writer.Open("private static void " + Signatures.Head(name, quantity, parts[i].ScratchLength > 0));
+            WriteInPlace(quantity, parts[i], isWhole: false);
             writer.Close();
         }
     }
@@ -52,23 +54,22 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
         WriteSlices(quantity, leaves);
         foreach (Node leaf in leaves)
         {
-            if (names.LocalOf(leaf) is { } local) writer.Line($"double {local} = {ModelNames.Access(leaf)};");
+            if (names.LocalOf(leaf) is { } local) writer.Line($"{quantity.Kind.Type} {local} = {ModelNames.Access(leaf)};");
         }
 
         NameScope scope = names.NewScope();
         Dictionary<int, string> known = [];
-        ExpressionPrinter printer = new(quantity.Graph, known, leaf => names.LocalOf(leaf) ?? ModelNames.Access(leaf), names.Tables);
+        ExpressionPrinter printer = quantity.Kind.Printer(quantity.Graph, known, leaf => names.LocalOf(leaf) ?? ModelNames.Access(leaf), names.Tables, []);
         Dictionary<int, string> values = [];
         CommentCursor comments = new(writer, quantity.Results);
         foreach (Step step in schedule.Steps)
         {
             comments.Before(step);
-            bool isCondition = quantity.Graph.IsCondition(step.Node);
             if (step.Output < 0)
             {
                 string definition = printer.PrintDefinition(step.Node);
                 known[step.Node] = Identifiers.Escape(scope.Claim("v" + Literals.Integer(known.Count + 1)));
-                writer.Line($"{(isCondition ? "bool" : "double")} {known[step.Node]} = {definition};");
+                writer.Line($"{printer.TypeOf(step.Node)} {known[step.Node]} = {definition};");
             }
             else
             {
@@ -77,7 +78,7 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
                 if (!quantity.Graph[step.Node].IsLeaf && !schedule.IsShared(step.Node))
                 {
                     string local = Identifiers.Escape(scope.Claim(result.Name));
-                    writer.Line($"double {local} = {value};");
+                    writer.Line($"{quantity.Kind.Type} {local} = {value};");
                     value = local;
                 }
 
@@ -99,7 +100,7 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
         }
     }
 
-    private void WriteInPlace(Quantity quantity, Schedule schedule, MethodPart part, bool isWhole)
+    private void WriteInPlace(Quantity quantity, MethodPart part, bool isWhole)
     {
         WriteSlices(quantity, [.. part.Leaves.Select(index => quantity.Graph[index])]);
         if (part.ScratchLength > 0) writer.Line($"scratch = scratch[..{Literals.Integer(part.ScratchLength)}];");
@@ -108,11 +109,10 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
         Dictionary<int, string> known = [];
         foreach (KeyValuePair<int, int> slot in part.Loads)
         {
-            string access = $"scratch[{Literals.Integer(slot.Value)}]";
-            known[slot.Key] = quantity.Graph.IsCondition(slot.Key) ? $"({access} != 0d)" : access;
+            known[slot.Key] = quantity.Kind.Load($"scratch[{Literals.Integer(slot.Value)}]", quantity.Graph.IsCondition(slot.Key));
         }
 
-        ExpressionPrinter printer = new(quantity.Graph, known, ModelNames.Access, names.Tables);
+        ExpressionPrinter printer = quantity.Kind.Printer(quantity.Graph, known, ModelNames.Access, names.Tables, part.Loads.Keys);
         CommentCursor comments = new(writer, quantity.Results);
         int count = 0;
         foreach (Step step in part.Steps)
@@ -126,28 +126,30 @@ internal sealed class BodyWriter(SourceWriter writer, ModelNames names, IReadOnl
                 continue;
             }
 
-            bool isCondition = quantity.Graph.IsCondition(step.Node);
             string definition = printer.PrintDefinition(step.Node);
             known[step.Node] = Identifiers.Escape(scope.Claim("v" + Literals.Integer(++count)));
-            writer.Line($"{(isCondition ? "bool" : "double")} {known[step.Node]} = {definition};");
+            writer.Line($"{printer.TypeOf(step.Node)} {known[step.Node]} = {definition};");
             if (part.Stores.TryGetValue(step.Node, out int stored))
                 writer.Line($"scratch[{Literals.Integer(stored)}] = {printer.PrintResult(step.Node)};");
         }
     }
 
-    private void WriteCalls(Quantity quantity, IReadOnlyList<MethodPart> parts)
+    private void WriteCalls(BodyPlan plan)
     {
+        (Quantity quantity, IReadOnlyList<MethodPart> parts) = (plan.Quantity, plan.Parts);
         writer.Line($"{quantity.Target} = {quantity.Target}[..{Literals.Integer(quantity.Length)}];");
         if (quantity.Results.Count < quantity.Length) writer.Line($"{quantity.Target}.Clear();");
-        int scratch = parts.Max(static part => part.ScratchLength);
-        if (scratch > LargestScratch)
+        if (!plan.Fits)
         {
             throw new NotSupportedException(
-                $"{Literals.Integer(scratch)} values of {quantity.Method} are needed far from where they are computed, more than the {Literals.Integer(LargestScratch)} "
-                + "that fit on the stack; split the model, or write sums over many states as sums of partial sums");
+                $"{Literals.Integer(plan.ScratchLength)} values of {quantity.Method} are needed far from where they are computed, more than the "
+                + $"{Literals.Integer(quantity.Kind.LargestScratch)} that fit on the stack; split the model, or write sums over many states as sums "
+                + "of partial sums");
         }
 
-        if (scratch > 0) writer.Line($"global::System.Span<double> scratch = stackalloc double[{Literals.Integer(scratch)}];");
+        string type = quantity.Kind.Type;
+        if (plan.ScratchLength > 0)
+            writer.Line($"global::System.Span<{type}> scratch = stackalloc {type}[{Literals.Integer(plan.ScratchLength)}];");
         for (int i = 0; i < parts.Count; i++)
             writer.Line($"{quantity.PartName}{Literals.Integer(i + 1)}({Signatures.Arguments(quantity, parts[i].ScratchLength > 0)});");
     }
@@ -173,4 +175,17 @@ internal sealed class CommentCursor(SourceWriter writer, IReadOnlyList<Result> r
         _isDue = step.Output >= 0;
         if (step.Output >= 0) _next = step.Output + 1;
     }
+}
+
+/// <summary>How a quantity is computed.</summary>
+/// <param name="Quantity">The quantity.</param>
+/// <param name="Schedule">The order of its computation.</param>
+/// <param name="Parts">The methods it is cut into; none if it is small enough to read every argument into a local.</param>
+internal sealed record BodyPlan(Quantity Quantity, Schedule Schedule, IReadOnlyList<MethodPart> Parts)
+{
+    /// <summary>The values handed on between methods.</summary>
+    public int ScratchLength => Parts.Count > 1 ? Parts[0].ScratchLength : 0;
+
+    /// <summary>Whether these fit on the stack.</summary>
+    public bool Fits => ScratchLength <= Quantity.Kind.LargestScratch;
 }

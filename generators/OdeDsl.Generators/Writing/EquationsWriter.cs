@@ -13,7 +13,7 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
     private static readonly string[] Point = ["state", "parameters"];
     private static readonly string[] LockedPoint = ["state", "parameters", "regime"];
 
-    /// <summary>Entries up to which the dense state Jacobian is printed on its own, about the size of a method.</summary>
+    /// <summary>Entries up to which a dense Jacobian is printed on its own, about the size of a method.</summary>
     private const int LargestDenseEntryCount = 400;
 
     private readonly SwitchTexts _texts = new(model, equations);
@@ -42,12 +42,13 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
             Member(new Quantity("Rates", LockedPoint, "rates", model.States.Count, equations.Locked, Rates(equations.LockedRates)));
         else
             WriteUnlockedRates();
-        WriteStateJacobian();
-        Member(Matrix("ParameterJacobian", "jacobian", equations.ParameterJacobian, dense: true));
+        WriteJacobian("StateJacobian", equations.StateJacobian, "StateSparsity");
+        WriteJacobian("ParameterJacobian", equations.ParameterJacobian, "ParameterSparsity");
         Member(Vector("TimeDerivative", LockedPoint, "derivative", equations.TimeDerivative));
         Member(Vector("JacobianVectorProduct", [.. LockedPoint, "direction"], "product", equations.JacobianVectorProduct));
         Member(Observables());
         WriteSwitching();
+        WriteGenericForms();
         writer.Close();
     }
 
@@ -60,45 +61,82 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
         writer.Line($"public static void Rates({Signatures.Parameters(locked)}) => Rates(time, state, parameters, rates);");
     }
 
-    /// <summary>The dense form of a large Jacobian is spread out from its entries: twice the code would cost more than that pass.</summary>
-    private void WriteStateJacobian()
+    /// <summary>
+    /// A matrix in both forms. The dense form of a large one is spread out from its entries: twice the code would cost more than that pass.
+    /// </summary>
+    private void WriteJacobian(string method, SparseMatrix matrix, string sparsity)
     {
-        Quantity dense = Matrix("StateJacobian", "jacobian", equations.StateJacobian, dense: true);
-        if (equations.StateJacobian.Entries.Count <= LargestDenseEntryCount)
+        Quantity dense = Matrix(method, "jacobian", matrix, dense: true);
+        if (matrix.Entries.Count <= LargestDenseEntryCount)
         {
             Member(dense);
         }
         else
         {
-            int length = equations.StateJacobian.Entries.Count;
             writer.Line();
             writer.Line("/// <inheritdoc/>");
-            writer.Open($"public static void StateJacobian({Signatures.Parameters(dense)})");
-            writer.Line($"StateJacobianValues(time, state, parameters, regime, jacobian[..{Literals.Integer(length)}]);");
-            writer.Line("Description.StateSparsity.Expand(jacobian);");
+            writer.Open($"public static void {method}({Signatures.Parameters(dense)})");
+            writer.Line($"{method}Values(time, state, parameters, regime, jacobian[..{Literals.Integer(matrix.Entries.Count)}]);");
+            writer.Line($"Description.{sparsity}.Expand(jacobian);");
             writer.Close();
         }
 
-        Member(Matrix("StateJacobianValues", "values", equations.StateJacobian, dense: false));
+        Member(Matrix(method + "Values", "values", matrix, dense: false));
     }
+
+    /// <summary>Rates and switching functions once more, over any kind of number; left out as a whole where one of them does not fit.</summary>
+    private void WriteGenericForms()
+    {
+        BodyPlan[] plans = [.. GenericQuantities().Select(_body.Plan)];
+        if (!plans.All(static plan => plan.Fits)) return;
+        writer.Line();
+        writer.Line("/// <inheritdoc/>");
+        writer.Line("public static bool HasGenericForms => true;");
+        foreach (BodyPlan plan in plans) Member(plan);
+        if (equations.Switches.Count > 0) return;
+        Quantity locked = new("RatesOver", LockedPoint, "rates", 0, equations.Locked, []) { Kind = NumberKind.Scalar };
+        writer.Line();
+        writer.Line("/// <inheritdoc/>");
+        writer.Line($"public static void {Signatures.Head("RatesOver", locked)} => RatesOver(time, state, parameters, rates);");
+    }
+
+    private IEnumerable<Quantity> GenericQuantities()
+    {
+        int count = model.States.Count;
+        yield return new("RatesOver", Point, "rates", count, equations.Free, Rates(equations.GenericRates)) { Kind = NumberKind.Scalar };
+        if (equations.Switches.Count > 0)
+        {
+            yield return new("RatesOver", LockedPoint, "rates", count, equations.Locked, Rates(equations.GenericLockedRates))
+            {
+                Kind = NumberKind.Scalar,
+            };
+        }
+
+        yield return SwitchingFunctions("SwitchingFunctionsOver", equations.GenericSwitches) with { Kind = NumberKind.Scalar };
+    }
+
+    private Quantity SwitchingFunctions(string method, IReadOnlyList<int> values) => new(
+        method, LockedPoint, "values", values.Count, equations.Locked, [.. values.Select(
+            (value, i) => new Result(value, i, "switch" + Literals.Integer(i), TextOf(equations.Switches[i])))]);
 
     private void WriteSwitching()
     {
         int count = equations.Switches.Count;
-        Member(new Quantity("SwitchingFunctions", LockedPoint, "values", count, equations.Locked, [.. equations.Switches.Select(
-            (function, i) => new Result(function.Value, i, "switch" + Literals.Integer(i), TextOf(function)))]));
+        Member(SwitchingFunctions("SwitchingFunctions", [.. equations.Switches.Select(static function => function.Value)]));
         Member(Matrix("SwitchingJacobian", "jacobian", equations.SwitchingJacobian, dense: true));
         Member(Vector("SwitchingTimeDerivative", LockedPoint, "derivative", equations.SwitchingTimeDerivative));
         Member(new Quantity("Regime", Point, "regime", count, equations.Free, [.. equations.Switches.Select(
             (function, i) => new Result(function.Decision, i, "side" + Literals.Integer(i), TextOf(function)))]));
     }
 
-    private void Member(Quantity quantity)
+    private void Member(Quantity quantity) => Member(_body.Plan(quantity));
+
+    private void Member(BodyPlan plan)
     {
         cancellationToken.ThrowIfCancellationRequested();
         writer.Line();
         writer.Line("/// <inheritdoc/>");
-        _body.Write(quantity, $"public static void {quantity.Method}({Signatures.Parameters(quantity)})");
+        _body.Write(plan);
     }
 
     private Result[] Rates(IEnumerable<int> nodes) => [.. nodes.Select(
@@ -131,7 +169,7 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
 
     private string EntryName(string method, MatrixEntry entry)
     {
-        string column = method == "ParameterJacobian"
+        string column = method.StartsWith("Parameter", StringComparison.Ordinal)
             ? model.Parameters[entry.Column].Property.Name
             : model.States[entry.Column].Property.Name;
         return $"{RowName(method, entry.Row)}By{Identifiers.Part(column)}";

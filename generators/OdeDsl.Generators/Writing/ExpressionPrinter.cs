@@ -12,11 +12,11 @@ namespace OdeDsl.Generators.Writing;
 /// <param name="names">The names of shared values.</param>
 /// <param name="leaf">The text of a state, parameter, time, direction or regime entry.</param>
 /// <param name="tables">The expressions that reach the tables.</param>
-internal sealed class ExpressionPrinter(
+internal class ExpressionPrinter(
     ExpressionGraph graph, IReadOnlyDictionary<int, string> names, Func<Node, string> leaf, IReadOnlyList<string> tables)
 {
     /// <summary>How tightly a printed form holds together; C#'s order of operators.</summary>
-    private enum Binding
+    protected enum Binding
     {
         Conditional,
         Or,
@@ -29,26 +29,33 @@ internal sealed class ExpressionPrinter(
         Primary,
     }
 
+    protected ExpressionGraph Graph => graph;
+
+    /// <summary>The type of the local that holds a value.</summary>
+    public virtual string TypeOf(int index) => graph.IsCondition(index) ? "bool" : "double";
+
     /// <summary>An expression where nothing around it can pull it apart: behind <c>=</c> or inside parentheses.</summary>
     public string Print(int index) => Form(index).Text;
 
     /// <summary>The defining expression of a value that has a name.</summary>
-    public string PrintDefinition(int index) => FormOf(graph[index]).Text;
+    public string PrintDefinition(int index) => FormOf(index).Text;
 
     /// <summary>A value to deliver: a condition as 1 or 0.</summary>
-    public string PrintResult(int index) => graph.IsCondition(index) ? $"{Operand(index, Binding.Or)} ? 1d : 0d" : Print(index);
+    public virtual string PrintResult(int index) => graph.IsCondition(index) ? $"{Operand(index, Binding.Or)} ? 1d : 0d" : Print(index);
 
     private (string Text, Binding Binding) Form(int index) =>
-        names.TryGetValue(index, out string? name) ? (name, Binding.Primary) : FormOf(graph[index]);
+        names.TryGetValue(index, out string? name) ? (name, Binding.Primary) : FormOf(index);
 
     /// <summary>An operand, in parentheses if it does not hold together at least this tightly.</summary>
-    private string Operand(int index, Binding least)
+    protected string Operand(int index, Binding least)
     {
         (string text, Binding binding) = Form(index);
         return binding >= least ? text : "(" + text + ")";
     }
 
-    private (string Text, Binding Binding) FormOf(Node node) => node.Operator switch
+    protected virtual (string Text, Binding Binding) FormOf(int index) => PlainForm(graph[index]);
+
+    private (string Text, Binding Binding) PlainForm(Node node) => node.Operator switch
     {
         Operator.Constant => Constant(node.Constant),
         Operator.BooleanConstant => (node.Payload != 0 ? "true" : "false", Binding.Primary),
@@ -107,6 +114,9 @@ internal sealed class ExpressionPrinter(
         return $"global::System.Math.{function}({arguments})";
     }
 
+    /// <summary>A member of a table, the arguments being printed already.</summary>
+    protected string TableCall(Node node, string member, string arguments) => $"{tables[TableNodes.TableOf(node)]}.{member}({arguments})";
+
     private string TableCall(Node node)
     {
         int order = TableNodes.OrderOf(node);
@@ -120,7 +130,7 @@ internal sealed class ExpressionPrinter(
             _ when order > 0 => "Derivative",
             _ => "At",
         };
-        return $"{tables[TableNodes.TableOf(node)]}.{member}({(order > 0 ? Literals.Integer(order) + ", " : "")}{arguments})";
+        return TableCall(node, member, (order > 0 ? Literals.Integer(order) + ", " : "") + arguments);
     }
 
     /// <summary>Conditions inside arguments stand in parentheses: <c>f(a &lt; b, c &gt; (d))</c> would read as a generic call.</summary>

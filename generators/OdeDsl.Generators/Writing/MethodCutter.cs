@@ -23,11 +23,7 @@ internal sealed record MethodPart(
 /// </summary>
 internal static class MethodCutter
 {
-    private const int LargestOperationCount = 1000;
-    private const int LargestByteCount = 28_000;
-    private const int LargestLocalCount = 500;
-
-    public static IReadOnlyList<MethodPart> Cut(Schedule schedule)
+    public static IReadOnlyList<MethodPart> Cut(Schedule schedule, MethodBudget budget)
     {
         List<List<Step>> groups = [];
         Dictionary<int, int> definedIn = [];
@@ -36,7 +32,8 @@ internal static class MethodCutter
         {
             (int operations, int bytes) = Size(schedule, step);
             total = (total.Operations + operations, total.Bytes + bytes, total.Locals + (step.Output < 0 ? 1 : 0));
-            if (groups.Count == 0 || total is not (<= LargestOperationCount, <= LargestByteCount, <= LargestLocalCount))
+            bool isFull = total.Operations > budget.Operations || total.Bytes > budget.Bytes || total.Locals > budget.Locals;
+            if (groups.Count == 0 || isFull)
             {
                 groups.Add([]);
                 total = (operations, bytes, step.Output < 0 ? 1 : 0);

@@ -1,3 +1,4 @@
+using System;
 using System.Collections.Generic;
 using System.Linq;
 using OdeDsl.Generators.Algebra;
@@ -14,8 +15,11 @@ namespace OdeDsl.Generators.Writing;
 internal sealed record Quantity(
     string Method, IReadOnlyList<string> Inputs, string Target, int Length, ExpressionGraph Graph, IReadOnlyList<Result> Results)
 {
+    /// <summary>What its numbers are.</summary>
+    public NumberKind Kind { get; init; } = NumberKind.Double;
+
     /// <summary>The name stem of the methods it is cut into when it is large: overloads differ in it.</summary>
-    public string PartName => (Inputs.Contains("regime") && Method == "Rates" ? "LockedRates" : Method) + "Part";
+    public string PartName => (Inputs.Contains("regime") && Method.StartsWith("Rates", StringComparison.Ordinal) ? "Locked" : "") + Method + "Part";
 }
 
 /// <summary>One result.</summary>

@@ -3,15 +3,19 @@ using System.Linq;
 
 namespace OdeDsl.Generators.Writing;
 
-/// <summary>The argument lists of printed methods.</summary>
+/// <summary>The heads of printed methods and the calls to them.</summary>
 internal static class Signatures
 {
+    /// <summary>Name, type parameters, parameters and constraint.</summary>
+    public static string Head(string method, Quantity quantity, bool withScratch = false) =>
+        $"{method}{quantity.Kind.TypeParameters}({Parameters(quantity, withScratch)}){quantity.Kind.Constraint}";
+
     public static string Parameters(Quantity quantity, bool withScratch = false)
     {
-        List<string> parameters = ["double time"];
-        parameters.AddRange(quantity.Inputs.Select(static input => "global::System.ReadOnlySpan<double> " + input));
-        if (withScratch) parameters.Add("global::System.Span<double> scratch");
-        parameters.Add("global::System.Span<double> " + quantity.Target);
+        List<string> parameters = [$"{quantity.Kind.Type} time"];
+        parameters.AddRange(quantity.Inputs.Select(input => $"global::System.ReadOnlySpan<{quantity.Kind.TypeOf(input)}> {input}"));
+        if (withScratch) parameters.Add($"global::System.Span<{quantity.Kind.Type}> scratch");
+        parameters.Add($"global::System.Span<{quantity.Kind.Type}> {quantity.Target}");
         return string.Join(", ", parameters);
     }
 

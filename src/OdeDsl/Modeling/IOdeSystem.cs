@@ -1,3 +1,5 @@
+using OdeDsl.Scalars;
+
 namespace OdeDsl.Modeling;
 
 /// <summary>
@@ -59,6 +61,17 @@ public interface IOdeSystem
     /// <param name="jacobian">Receives n × m values by rows. Zeros are written too.</param>
     static abstract void ParameterJacobian(
         double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian);
+
+    /// <summary>
+    /// The derivatives of the rates by the parameters, only the entries of <see cref="ModelDescription.ParameterSparsity"/>, in its order.
+    /// </summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="values">Receives the values of the entries.</param>
+    static abstract void ParameterJacobianValues(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> values);
 
     /// <summary>The explicit derivatives of the rates by time.</summary>
     /// <param name="time">The time.</param>
@@ -127,4 +140,52 @@ public interface IOdeSystem
     /// <param name="parameters">The parameters, m values.</param>
     /// <param name="regime">Receives s values.</param>
     static abstract void Regime(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> regime);
+
+    /// <summary>
+    /// Whether the equations also run on other kinds of numbers, by the members whose names end in <c>Over</c>. Generated equations do,
+    /// save very large ones whose intermediate values would not fit on the stack.
+    /// </summary>
+    static virtual bool HasGenericForms => false;
+
+    /// <summary>
+    /// The rates as written by the user, on any kind of number. At <see cref="ScalarDouble"/> equal to the rates on doubles bit for bit,
+    /// except that nothing throws.
+    /// </summary>
+    /// <typeparam name="TScalar">The kind of number.</typeparam>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="rates">Receives the n time derivatives.</param>
+    /// <exception cref="NotSupportedException"><see cref="HasGenericForms"/> is <see langword="false"/>.</exception>
+    static virtual void RatesOver<TScalar>(
+        TScalar time, ReadOnlySpan<TScalar> state, ReadOnlySpan<TScalar> parameters, Span<TScalar> rates)
+        where TScalar : unmanaged, IScalar<TScalar> => throw GenericForms.Missing(nameof(RatesOver));
+
+    /// <summary>
+    /// The rates within a locked regime, on any kind of number. At <see cref="ScalarDouble"/> equal to the rates on doubles bit for bit.
+    /// </summary>
+    /// <typeparam name="TScalar">The kind of number.</typeparam>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values: one for all lanes, for the whole interval, for the whole series.</param>
+    /// <param name="rates">Receives the n time derivatives.</param>
+    /// <exception cref="NotSupportedException"><see cref="HasGenericForms"/> is <see langword="false"/>.</exception>
+    static virtual void RatesOver<TScalar>(
+        TScalar time, ReadOnlySpan<TScalar> state, ReadOnlySpan<TScalar> parameters, ReadOnlySpan<double> regime, Span<TScalar> rates)
+        where TScalar : unmanaged, IScalar<TScalar> => throw GenericForms.Missing(nameof(RatesOver));
+
+    /// <summary>
+    /// The switching functions, on any kind of number. At <see cref="ScalarDouble"/> equal to those on doubles bit for bit.
+    /// </summary>
+    /// <typeparam name="TScalar">The kind of number.</typeparam>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values; see <see cref="SwitchingFunctions"/>.</param>
+    /// <param name="values">Receives s values.</param>
+    /// <exception cref="NotSupportedException"><see cref="HasGenericForms"/> is <see langword="false"/>.</exception>
+    static virtual void SwitchingFunctionsOver<TScalar>(
+        TScalar time, ReadOnlySpan<TScalar> state, ReadOnlySpan<TScalar> parameters, ReadOnlySpan<double> regime, Span<TScalar> values)
+        where TScalar : unmanaged, IScalar<TScalar> => throw GenericForms.Missing(nameof(SwitchingFunctionsOver));
 }

@@ -169,4 +169,44 @@ public readonly record struct DecoratedInterval(Interval Value, bool IsContinuou
         bool constant = Math.Round(quotient.Value.Lower) == Math.Round(quotient.Value.Upper);
         return new(Interval.IEEERemainder(x.Value, y.Value), quotient.IsContinuous && constant);
     }
+
+    /// <inheritdoc/>
+    public static DecoratedInterval Min(DecoratedInterval left, DecoratedInterval right) =>
+        new(Interval.Min(left.Value, right.Value), left.IsContinuous && right.IsContinuous);
+
+    /// <inheritdoc/>
+    public static DecoratedInterval Max(DecoratedInterval left, DecoratedInterval right) =>
+        new(Interval.Max(left.Value, right.Value), left.IsContinuous && right.IsContinuous);
+
+    /// <inheritdoc/>
+    public static DecoratedInterval Floor(DecoratedInterval x)
+    {
+        Interval value = Interval.Floor(x.Value);
+        return new(value, x.IsContinuous && value.Lower == value.Upper);
+    }
+
+    /// <inheritdoc/>
+    public static DecoratedInterval Condition(bool holds) => new(Interval.Condition(holds), true);
+
+    /// <inheritdoc/>
+    public static DecoratedInterval Less(DecoratedInterval left, DecoratedInterval right) =>
+        new(Interval.Less(left.Value, right.Value), left.IsContinuous && right.IsContinuous);
+
+    /// <inheritdoc/>
+    public static DecoratedInterval LessOrEqual(DecoratedInterval left, DecoratedInterval right) =>
+        new(Interval.LessOrEqual(left.Value, right.Value), left.IsContinuous && right.IsContinuous);
+
+    /// <inheritdoc/>
+    public static DecoratedInterval Equal(DecoratedInterval left, DecoratedInterval right) =>
+        new(Interval.Equal(left.Value, right.Value), left.IsContinuous && right.IsContinuous);
+
+    /// <inheritdoc/>
+    /// <remarks>Called continuous only where the condition is decided.</remarks>
+    public static DecoratedInterval Choose(DecoratedInterval condition, DecoratedInterval whenTrue, DecoratedInterval whenFalse)
+    {
+        bool isDecided = condition.Value.Lower == condition.Value.Upper;
+        DecoratedInterval branch = condition.Value.Lower > 0 ? whenTrue : whenFalse;
+        return new(
+            Interval.Choose(condition.Value, whenTrue.Value, whenFalse.Value), isDecided && condition.IsContinuous && branch.IsContinuous);
+    }
 }

@@ -2,7 +2,7 @@ namespace OdeDsl.Scalars;
 
 /// <summary>
 /// What the vector widths have in common below the level of a formula, so that a function is written once for all of them. A mask is a
-/// vector whose lanes have all bits set or none.
+/// vector whose lanes have all bits set or none; the conditions of <see cref="IScalar{TScalar}"/> are masks.
 /// </summary>
 internal interface ILanes<TLanes> : IScalar<TLanes>
     where TLanes : struct, ILanes<TLanes>
@@ -12,16 +12,10 @@ internal interface ILanes<TLanes> : IScalar<TLanes>
     /// <summary>The nearest whole number, ties to even.</summary>
     static abstract TLanes Round(TLanes x);
 
-    static abstract TLanes Less(TLanes left, TLanes right);
-
-    static abstract TLanes Equal(TLanes left, TLanes right);
-
     static abstract TLanes And(TLanes left, TLanes right);
 
     /// <summary>Left where right is not set.</summary>
     static abstract TLanes AndNot(TLanes left, TLanes right);
-
-    static abstract TLanes Choose(TLanes mask, TLanes whenSet, TLanes whenClear);
 
     static abstract bool All(TLanes mask);
 

@@ -9,10 +9,11 @@ namespace OdeDsl.Scalars;
 /// <para>The contract follows C# and <see cref="System.Math"/>: the same operators and the same function names, so that a formula reads
 /// the same for every kind. Literals stay literals: each operator also takes a double on either side, which is cheaper for the
 /// composite kinds than a converted constant.</para>
-/// <para>Functions with kinks or jumps in an ordinary argument (Abs, Min, Floor, ...) and comparisons are absent: a model is evaluated
-/// within a locked regime, which turns them into plain formulas. A locked condition is one bool for all lanes and coefficients, hence
-/// C#'s own <c>condition ? a : b</c> selects. The remainders and <see cref="CopySign"/> are present for arguments that a regime does
-/// not lock.</para>
+/// <para>A model is mostly evaluated within a locked regime, which turns conditions and functions with kinks or jumps into plain formulas: a
+/// locked condition is one bool for all lanes and coefficients, hence C#'s own <c>condition ? a : b</c> selects. What a regime does not lock
+/// (conditions on parameters, rates as written) is computed by <see cref="Less"/>, <see cref="LessOrEqual"/> and <see cref="Equal"/>, whose
+/// result is a <i>condition</i>: a value of the kind that only <see cref="Choose"/> reads, decided lane by lane, by the value of a series, and
+/// for intervals possibly left open.</para>
 /// <para>No member throws or allocates; an argument outside a function's domain gives the kind's own "not a number". Every kind is a
 /// value without hidden state, safe to use from several threads.</para>
 /// </remarks>
@@ -201,4 +202,45 @@ public interface IScalar<TScalar>
     /// <param name="x">The dividend.</param>
     /// <param name="y">The divisor.</param>
     static abstract TScalar IEEERemainder(TScalar x, TScalar y);
+
+    /// <summary>The smaller of two numbers; NaN if one is, and a negative zero is smaller than a positive one.</summary>
+    /// <param name="left">One number.</param>
+    /// <param name="right">The other number.</param>
+    static abstract TScalar Min(TScalar left, TScalar right);
+
+    /// <summary>The larger of two numbers; NaN if one is, and a positive zero is larger than a negative one.</summary>
+    /// <param name="left">One number.</param>
+    /// <param name="right">The other number.</param>
+    static abstract TScalar Max(TScalar left, TScalar right);
+
+    /// <summary>The largest whole number not above the argument.</summary>
+    /// <param name="x">The argument.</param>
+    static abstract TScalar Floor(TScalar x);
+
+    /// <summary>A condition that does not vary.</summary>
+    /// <param name="holds">Whether it holds.</param>
+    static abstract TScalar Condition(bool holds);
+
+    /// <summary>The condition that one number is below another.</summary>
+    /// <param name="left">Left side.</param>
+    /// <param name="right">Right side.</param>
+    static abstract TScalar Less(TScalar left, TScalar right);
+
+    /// <summary>The condition that one number is at most another.</summary>
+    /// <param name="left">Left side.</param>
+    /// <param name="right">Right side.</param>
+    static abstract TScalar LessOrEqual(TScalar left, TScalar right);
+
+    /// <summary>The condition that two numbers are equal.</summary>
+    /// <param name="left">Left side.</param>
+    /// <param name="right">Right side.</param>
+    static abstract TScalar Equal(TScalar left, TScalar right);
+
+    /// <summary>
+    /// One of two numbers, or of two conditions. Where a condition is open, as it can be for intervals, both are taken into the result.
+    /// </summary>
+    /// <param name="condition">A condition, made by the members above or by this one.</param>
+    /// <param name="whenTrue">What to take where it holds.</param>
+    /// <param name="whenFalse">What to take where it does not hold.</param>
+    static abstract TScalar Choose(TScalar condition, TScalar whenTrue, TScalar whenFalse);
 }

@@ -213,6 +213,44 @@ public readonly partial struct Jet<TOrder> : IScalar<Jet<TOrder>>, IEquatable<Je
     public static Jet<TOrder> CopySign(Jet<TOrder> x, Jet<TOrder> y) =>
         double.IsNegative(x.Value) == double.IsNegative(y.Value) ? x : -x;
 
+    /// <inheritdoc/>
+    public static Jet<TOrder> Min(Jet<TOrder> left, Jet<TOrder> right)
+    {
+        double value = Math.Min(left.Value, right.Value);
+        return value.Equals(left.Value) ? left.WithValue(value) : right.WithValue(value);
+    }
+
+    /// <inheritdoc/>
+    public static Jet<TOrder> Max(Jet<TOrder> left, Jet<TOrder> right)
+    {
+        double value = Math.Max(left.Value, right.Value);
+        return value.Equals(left.Value) ? left.WithValue(value) : right.WithValue(value);
+    }
+
+    /// <inheritdoc/>
+    public static Jet<TOrder> Floor(Jet<TOrder> x) => Constant(Math.Floor(x.Value));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Jet<TOrder> Condition(bool holds) => Constant(holds ? 1 : 0);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Jet<TOrder> Less(Jet<TOrder> left, Jet<TOrder> right) => Condition(left.Value < right.Value);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Jet<TOrder> LessOrEqual(Jet<TOrder> left, Jet<TOrder> right) => Condition(left.Value <= right.Value);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Jet<TOrder> Equal(Jet<TOrder> left, Jet<TOrder> right) => Condition(left.Value == right.Value);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Jet<TOrder> Choose(Jet<TOrder> condition, Jet<TOrder> whenTrue, Jet<TOrder> whenFalse) =>
+        condition.Value != 0 ? whenTrue : whenFalse;
+
     // left - n right with the whole number n that belongs to the value.
     private static Jet<TOrder> Remainder(Jet<TOrder> left, Jet<TOrder> right, double value)
     {

@@ -208,6 +208,39 @@ public readonly struct Lanes4 : ILanes<Lanes4>, IEquatable<Lanes4>
     /// <inheritdoc/>
     public static Lanes4 IEEERemainder(Lanes4 x, Lanes4 y) => Map(Math.IEEERemainder, x, y);
 
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes4 Min(Lanes4 left, Lanes4 right) => new(Vector256.Min(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes4 Max(Lanes4 left, Lanes4 right) => new(Vector256.Max(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes4 Floor(Lanes4 x) => new(Vector256.Floor(x.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes4 Condition(bool holds) => new(holds ? Vector256<double>.AllBitsSet : Vector256<double>.Zero);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes4 Less(Lanes4 left, Lanes4 right) => new(Vector256.LessThan(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes4 LessOrEqual(Lanes4 left, Lanes4 right) => new(Vector256.LessThanOrEqual(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes4 Equal(Lanes4 left, Lanes4 right) => new(Vector256.Equals(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes4 Choose(Lanes4 condition, Lanes4 whenTrue, Lanes4 whenFalse) =>
+        new(Vector256.ConditionalSelect(condition.Vector, whenTrue.Vector, whenFalse.Vector));
+
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     static Lanes4 ILanes<Lanes4>.Abs(Lanes4 x) => new(Vector256.Abs(x.Vector));
 
@@ -215,20 +248,10 @@ public readonly struct Lanes4 : ILanes<Lanes4>, IEquatable<Lanes4>
     static Lanes4 ILanes<Lanes4>.Round(Lanes4 x) => new(Vector256.Round(x.Vector));
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    static Lanes4 ILanes<Lanes4>.Less(Lanes4 left, Lanes4 right) => new(Vector256.LessThan(left.Vector, right.Vector));
-
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    static Lanes4 ILanes<Lanes4>.Equal(Lanes4 left, Lanes4 right) => new(Vector256.Equals(left.Vector, right.Vector));
-
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     static Lanes4 ILanes<Lanes4>.And(Lanes4 left, Lanes4 right) => new(left.Vector & right.Vector);
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     static Lanes4 ILanes<Lanes4>.AndNot(Lanes4 left, Lanes4 right) => new(Vector256.AndNot(left.Vector, right.Vector));
-
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    static Lanes4 ILanes<Lanes4>.Choose(Lanes4 mask, Lanes4 whenSet, Lanes4 whenClear) =>
-        new(Vector256.ConditionalSelect(mask.Vector, whenSet.Vector, whenClear.Vector));
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     static bool ILanes<Lanes4>.All(Lanes4 mask) => Vector256.EqualsAll(mask.Vector.AsInt64(), Vector256<long>.AllBitsSet);

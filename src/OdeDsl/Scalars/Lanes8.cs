@@ -208,6 +208,39 @@ public readonly struct Lanes8 : ILanes<Lanes8>, IEquatable<Lanes8>
     /// <inheritdoc/>
     public static Lanes8 IEEERemainder(Lanes8 x, Lanes8 y) => Map(Math.IEEERemainder, x, y);
 
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes8 Min(Lanes8 left, Lanes8 right) => new(Vector512.Min(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes8 Max(Lanes8 left, Lanes8 right) => new(Vector512.Max(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes8 Floor(Lanes8 x) => new(Vector512.Floor(x.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes8 Condition(bool holds) => new(holds ? Vector512<double>.AllBitsSet : Vector512<double>.Zero);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes8 Less(Lanes8 left, Lanes8 right) => new(Vector512.LessThan(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes8 LessOrEqual(Lanes8 left, Lanes8 right) => new(Vector512.LessThanOrEqual(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes8 Equal(Lanes8 left, Lanes8 right) => new(Vector512.Equals(left.Vector, right.Vector));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static Lanes8 Choose(Lanes8 condition, Lanes8 whenTrue, Lanes8 whenFalse) =>
+        new(Vector512.ConditionalSelect(condition.Vector, whenTrue.Vector, whenFalse.Vector));
+
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     static Lanes8 ILanes<Lanes8>.Abs(Lanes8 x) => new(Vector512.Abs(x.Vector));
 
@@ -215,20 +248,10 @@ public readonly struct Lanes8 : ILanes<Lanes8>, IEquatable<Lanes8>
     static Lanes8 ILanes<Lanes8>.Round(Lanes8 x) => new(Vector512.Round(x.Vector));
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    static Lanes8 ILanes<Lanes8>.Less(Lanes8 left, Lanes8 right) => new(Vector512.LessThan(left.Vector, right.Vector));
-
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    static Lanes8 ILanes<Lanes8>.Equal(Lanes8 left, Lanes8 right) => new(Vector512.Equals(left.Vector, right.Vector));
-
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
     static Lanes8 ILanes<Lanes8>.And(Lanes8 left, Lanes8 right) => new(left.Vector & right.Vector);
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     static Lanes8 ILanes<Lanes8>.AndNot(Lanes8 left, Lanes8 right) => new(Vector512.AndNot(left.Vector, right.Vector));
-
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    static Lanes8 ILanes<Lanes8>.Choose(Lanes8 mask, Lanes8 whenSet, Lanes8 whenClear) =>
-        new(Vector512.ConditionalSelect(mask.Vector, whenSet.Vector, whenClear.Vector));
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     static bool ILanes<Lanes8>.All(Lanes8 mask) => Vector512.EqualsAll(mask.Vector.AsInt64(), Vector512<long>.AllBitsSet);

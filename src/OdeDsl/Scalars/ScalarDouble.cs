@@ -169,4 +169,37 @@ public readonly record struct ScalarDouble(double Value) : IScalar<ScalarDouble>
     /// <inheritdoc/>
     [MethodImpl(MethodImplOptions.AggressiveInlining)]
     public static ScalarDouble IEEERemainder(ScalarDouble x, ScalarDouble y) => new(Math.IEEERemainder(x.Value, y.Value));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ScalarDouble Min(ScalarDouble left, ScalarDouble right) => new(Math.Min(left.Value, right.Value));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ScalarDouble Max(ScalarDouble left, ScalarDouble right) => new(Math.Max(left.Value, right.Value));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ScalarDouble Floor(ScalarDouble x) => new(Math.Floor(x.Value));
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ScalarDouble Condition(bool holds) => new(holds ? 1.0 : 0.0);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ScalarDouble Less(ScalarDouble left, ScalarDouble right) => Condition(left.Value < right.Value);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ScalarDouble LessOrEqual(ScalarDouble left, ScalarDouble right) => Condition(left.Value <= right.Value);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ScalarDouble Equal(ScalarDouble left, ScalarDouble right) => Condition(left.Value == right.Value);
+
+    /// <inheritdoc/>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    public static ScalarDouble Choose(ScalarDouble condition, ScalarDouble whenTrue, ScalarDouble whenFalse) =>
+        condition.Value != 0.0 ? whenTrue : whenFalse;
 }

@@ -1,4 +1,5 @@
 using OdeDsl.Modeling;
+using OdeDsl.Scalars;
 
 namespace OdeDsl.Generators.Tests.Emitted;
 
@@ -17,6 +18,8 @@ internal interface IEmittedCalls
 
     double[] ParameterJacobian(double time, double[] state, double[] parameters, double[] regime);
 
+    double[] ParameterJacobianValues(double time, double[] state, double[] parameters, double[] regime);
+
     double[] TimeDerivative(double time, double[] state, double[] parameters, double[] regime);
 
     double[] JacobianVectorProduct(double time, double[] state, double[] parameters, double[] regime, double[] direction);
@@ -30,6 +33,21 @@ internal interface IEmittedCalls
     double[] SwitchingTimeDerivative(double time, double[] state, double[] parameters, double[] regime);
 
     double[] Regime(double time, double[] state, double[] parameters);
+
+    /// <summary>Whether the generic forms are there.</summary>
+    bool HasGenericForms { get; }
+
+    T[] RatesOver<T>(T time, T[] state, T[] parameters)
+        where T : unmanaged, IScalar<T>;
+
+    T[] RatesOver<T>(T time, T[] state, T[] parameters, double[] regime)
+        where T : unmanaged, IScalar<T>;
+
+    T[] SwitchingFunctionsOver<T>(T time, T[] state, T[] parameters, double[] regime)
+        where T : unmanaged, IScalar<T>;
+
+    /// <summary>The rates as written, into a vector of the caller's.</summary>
+    void RatesInto(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> rates);
 
     /// <summary>Calls every member once and returns the bytes the calls allocated on this thread.</summary>
     long AllocatedByEveryMember(double time, double[] state, double[] parameters);
@@ -84,6 +102,13 @@ internal sealed class EmittedCalls<TModel, TSystem> : IEmittedCalls
         return result;
     }
 
+    public double[] ParameterJacobianValues(double time, double[] state, double[] parameters, double[] regime)
+    {
+        double[] result = Poisoned(Description.ParameterSparsity.EntryCount);
+        TSystem.ParameterJacobianValues(time, state, parameters, regime, result);
+        return result;
+    }
+
     public double[] TimeDerivative(double time, double[] state, double[] parameters, double[] regime)
     {
         double[] result = Poisoned(States);
@@ -133,13 +158,48 @@ internal sealed class EmittedCalls<TModel, TSystem> : IEmittedCalls
         return result;
     }
 
+    public bool HasGenericForms => TSystem.HasGenericForms;
+
+    public T[] RatesOver<T>(T time, T[] state, T[] parameters)
+        where T : unmanaged, IScalar<T>
+    {
+        T[] result = Poisoned<T>(States);
+        TSystem.RatesOver<T>(time, state, parameters, result);
+        return result;
+    }
+
+    public T[] RatesOver<T>(T time, T[] state, T[] parameters, double[] regime)
+        where T : unmanaged, IScalar<T>
+    {
+        T[] result = Poisoned<T>(States);
+        TSystem.RatesOver<T>(time, state, parameters, regime, result);
+        return result;
+    }
+
+    public T[] SwitchingFunctionsOver<T>(T time, T[] state, T[] parameters, double[] regime)
+        where T : unmanaged, IScalar<T>
+    {
+        T[] result = Poisoned<T>(Switches);
+        TSystem.SwitchingFunctionsOver<T>(time, state, parameters, regime, result);
+        return result;
+    }
+
+    public void RatesInto(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> rates) =>
+        TSystem.Rates(time, state, parameters, rates);
+
     public long AllocatedByEveryMember(double time, double[] state, double[] parameters)
     {
         double[] regime = Regime(time, state, parameters);
         double[] result = new double[Math.Max(States * Math.Max(States, Description.Parameters.Length), Math.Max(Switches * States, 1) + Description.Observables.Length)];
+        ScalarDouble[] scalarState = Lift<ScalarDouble>(state), scalarParameters = Lift<ScalarDouble>(parameters), scalarResult = Poisoned<ScalarDouble>(result.Length);
+        Jet<Order3>[] jetState = Lift<Jet<Order3>>(state), jetParameters = Lift<Jet<Order3>>(parameters), jetResult = Poisoned<Jet<Order3>>(result.Length);
         CallAll(time, state, parameters, regime, result);
+        CallGeneric(ScalarDouble.Constant(time), scalarState, scalarParameters, regime, scalarResult);
+        CallGeneric(Jet<Order3>.Constant(time), jetState, jetParameters, regime, jetResult);
         long before = GC.GetAllocatedBytesForCurrentThread();
         CallAll(time, state, parameters, regime, result);
+        CallGeneric(ScalarDouble.Constant(time), scalarState, scalarParameters, regime, scalarResult);
+        CallGeneric(Jet<Order3>.Constant(time), jetState, jetParameters, regime, jetResult);
         return GC.GetAllocatedBytesForCurrentThread() - before;
     }
 
@@ -164,6 +224,7 @@ internal sealed class EmittedCalls<TModel, TSystem> : IEmittedCalls
         TSystem.StateJacobian(time, state, parameters, regime, result);
         TSystem.StateJacobianValues(time, state, parameters, regime, result);
         TSystem.ParameterJacobian(time, state, parameters, regime, result);
+        TSystem.ParameterJacobianValues(time, state, parameters, regime, result);
         TSystem.TimeDerivative(time, state, parameters, regime, result);
         TSystem.JacobianVectorProduct(time, state, parameters, regime, state, result);
         TSystem.Observables(time, state, parameters, result);
@@ -172,6 +233,21 @@ internal sealed class EmittedCalls<TModel, TSystem> : IEmittedCalls
         TSystem.SwitchingTimeDerivative(time, state, parameters, regime, result);
         TSystem.Regime(time, state, parameters, result);
     }
+
+    private static void CallGeneric<T>(T time, T[] state, T[] parameters, double[] regime, T[] result)
+        where T : unmanaged, IScalar<T>
+    {
+        if (!TSystem.HasGenericForms) return;
+        TSystem.RatesOver<T>(time, state, parameters, result);
+        TSystem.RatesOver<T>(time, state, parameters, regime, result);
+        TSystem.SwitchingFunctionsOver<T>(time, state, parameters, regime, result);
+    }
+
+    private static T[] Lift<T>(double[] values)
+        where T : unmanaged, IScalar<T> => [.. values.Select(T.Constant)];
+
+    private static T[] Poisoned<T>(int length)
+        where T : unmanaged, IScalar<T> => Lift<T>(Poisoned(length));
 
     private static double[] Poisoned(int length)
     {

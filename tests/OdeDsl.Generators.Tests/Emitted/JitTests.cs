@@ -20,7 +20,7 @@ public sealed class JitTests
         string folder = Directory.CreateTempSubdirectory("odedsl-jit-").FullName;
         try
         {
-            WriteProgram(folder, Network.Of(400));
+            WriteProgram(folder, Network.Of(120));
             string summary = Run(folder);
             string[] methods = [.. summary.Split('\n').Where(static line => line.Contains("Equations:", StringComparison.Ordinal))];
             Assert.True(methods.Length >= 20, summary);
@@ -36,10 +36,16 @@ public sealed class JitTests
     private static void WriteProgram(string folder, ModelDefinition model)
     {
         string main = $$"""
+            using System;
             using System.Reflection;
             using System.Runtime.CompilerServices;
+            using OdeDsl.Scalars;
+            RuntimeTypeHandle[] kinds = [typeof(ScalarDouble).TypeHandle, typeof(Lanes8).TypeHandle, typeof(Interval).TypeHandle, typeof(Jet<Order3>).TypeHandle];
             foreach (MethodInfo method in typeof(Models.{{model.Type.Types[0].Name}}.Equations).GetMethods(BindingFlags.Static | BindingFlags.Public | BindingFlags.NonPublic | BindingFlags.DeclaredOnly))
-                RuntimeHelpers.PrepareMethod(method.MethodHandle);
+            {
+                if (!method.IsGenericMethodDefinition) RuntimeHelpers.PrepareMethod(method.MethodHandle);
+                else foreach (RuntimeTypeHandle kind in kinds) RuntimeHelpers.PrepareMethod(method.MethodHandle, [kind]);
+            }
             """;
         CSharpParseOptions parse = new(LanguageVersion.CSharp13);
         string[] sources = [main, ModelWriter.Write(model, CancellationToken.None), EmittedModel.UserHalf(model)];

@@ -4,7 +4,7 @@ using OdeDsl.Generators.Reading;
 
 namespace OdeDsl.Generators.Tests.Emitted;
 
-public sealed class RandomModelTests(RandomModelBatch batch) : IClassFixture<RandomModelBatch>
+public sealed partial class RandomModelTests(RandomModelBatch batch) : IClassFixture<RandomModelBatch>
 {
     private const double Tolerance = 1e-12;
 
@@ -91,6 +91,8 @@ public sealed class RandomModelTests(RandomModelBatch batch) : IClassFixture<Ran
         double[] byParameters = calls.ParameterJacobian(point.Time, point.State, point.Parameters, regime);
         Assert.All(Enumerable.Range(0, byParameters.Length), k => Assert.True(
             byParameters[k] == 0 || calls.Description.ParameterSparsity.Contains(k / RandomModels.ParameterCount, k % RandomModels.ParameterCount)));
+        double[] byParameterValues = calls.ParameterJacobianValues(point.Time, point.State, point.Parameters, regime);
+        SameBits(Dense(calls.Description.ParameterSparsity, byParameterValues), byParameters);
         double[] byTime = calls.TimeDerivative(point.Time, point.State, point.Parameters, regime);
         double[] product = calls.JacobianVectorProduct(point.Time, point.State, point.Parameters, regime, point.Parameters);
         return Compare(graph, values, rates, Operator.State, RandomModels.StateCount, jacobian)

@@ -4,6 +4,7 @@ using Microsoft.CodeAnalysis.CSharp.Syntax;
 using OdeDsl.Generators.Algebra;
 using OdeDsl.Generators.Reading;
 using OdeDsl.Generators.Tests.Harness;
+using OdeDsl.Scalars;
 
 namespace OdeDsl.Generators.Tests.Emitted;
 
@@ -20,14 +21,7 @@ public sealed class SampleModelTests
     [MemberData(nameof(Files))]
     public void Jacobians_agree_with_dual_numbers_to_twelve_digits(string file)
     {
-        CSharpCompilation compilation = Compiling.Compile("global using System;", File.ReadAllText(Path.Combine(Root, "samples", "Tarnwater", file)));
-        SyntaxTree tree = compilation.SyntaxTrees[1];
-        ClassDeclarationSyntax declaration = tree.GetRoot().DescendantNodes().OfType<ClassDeclarationSyntax>().Single();
-        INamedTypeSymbol symbol = compilation.GetSemanticModel(tree).GetDeclaredSymbol(declaration)!;
-        ModelDefinition model = new ModelReader(symbol, declaration, compilation, CancellationToken.None).Read().Model!;
-        // Where the harness declares its models.
-        model = model with { Type = new("Models", model.Type.Types, "Models." + symbol.Name) };
-        IEmittedCalls calls = EmittedModel.Of(model).Calls;
+        (ModelDefinition model, IEmittedCalls calls) = Read(file);
         ExpressionGraph graph = new(model.Nodes);
         int[] rates = [.. model.States.Select(static state => state.Rate)];
         Random random = new(7);
@@ -43,6 +37,42 @@ public sealed class SampleModelTests
         }
 
         Assert.True(compared >= Points * rates.Length, $"only {compared} entries compared");
+    }
+
+    [Theory]
+    [MemberData(nameof(Files))]
+    public void Generic_forms_at_double_equal_the_plain_ones_bit_for_bit(string file)
+    {
+        (ModelDefinition model, IEmittedCalls calls) = Read(file);
+        Assert.True(calls.HasGenericForms);
+        Random random = new(11);
+        for (int point = 0; point < 500; point++)
+        {
+            double[] state = [.. model.States.Select(item => Between(item.LowerBits, item.UpperBits, random))];
+            double[] parameters = [.. model.Parameters.Select(item => Between(item.LowerBits, item.UpperBits, random))];
+            double[] regime = calls.Regime(0, state, parameters);
+            ScalarDouble time = new(0);
+            ScalarDouble[] x = [.. state.Select(ScalarDouble.Constant)], p = [.. parameters.Select(ScalarDouble.Constant)];
+            Assert.Equal(Bits(calls.Rates(0, state, parameters)), Bits(calls.RatesOver(time, x, p)));
+            Assert.Equal(Bits(calls.Rates(0, state, parameters, regime)), Bits(calls.RatesOver(time, x, p, regime)));
+            Assert.Equal(Bits(calls.SwitchingFunctions(0, state, parameters, regime)), Bits(calls.SwitchingFunctionsOver(time, x, p, regime)));
+        }
+    }
+
+    private static long[] Bits(double[] values) => [.. values.Select(BitConverter.DoubleToInt64Bits)];
+
+    private static long[] Bits(ScalarDouble[] values) => [.. values.Select(static value => BitConverter.DoubleToInt64Bits(value.Value))];
+
+    private static (ModelDefinition Model, IEmittedCalls Calls) Read(string file)
+    {
+        CSharpCompilation compilation = Compiling.Compile("global using System;", File.ReadAllText(Path.Combine(Root, "samples", "Tarnwater", file)));
+        SyntaxTree tree = compilation.SyntaxTrees[1];
+        ClassDeclarationSyntax declaration = tree.GetRoot().DescendantNodes().OfType<ClassDeclarationSyntax>().Single();
+        INamedTypeSymbol symbol = compilation.GetSemanticModel(tree).GetDeclaredSymbol(declaration)!;
+        ModelDefinition model = new ModelReader(symbol, declaration, compilation, CancellationToken.None).Read().Model!;
+        // Where the harness declares its models.
+        model = model with { Type = new("Models", model.Type.Types, "Models." + symbol.Name) };
+        return (model, EmittedModel.Of(model).Calls);
     }
 
     private static int Compare(ExpressionGraph graph, Interpreter values, int[] rates, Operator leaf, int columns, double[] jacobian)

@@ -64,6 +64,11 @@ internal interface IHandWritten<TSelf> : IOdeSystem
     {
     }
 
+    static void IOdeSystem.ParameterJacobianValues(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> values)
+    {
+    }
+
     static void IOdeSystem.TimeDerivative(
         double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> derivative) =>
         throw new NotSupportedException();

@@ -98,4 +98,21 @@ internal readonly record struct Dual<T>(T Value, T Slope) : IScalar<Dual<T>>
     public static Dual<T> CopySign(Dual<T> x, Dual<T> y) => throw new NotSupportedException();
 
     public static Dual<T> IEEERemainder(Dual<T> x, Dual<T> y) => throw new NotSupportedException();
+
+    public static Dual<T> Min(Dual<T> left, Dual<T> right) => Choose(Less(left, right), left, right);
+
+    public static Dual<T> Max(Dual<T> left, Dual<T> right) => Choose(Less(right, left), left, right);
+
+    public static Dual<T> Floor(Dual<T> x) => new(T.Floor(x.Value), T.Constant(0));
+
+    public static Dual<T> Condition(bool holds) => new(T.Condition(holds), T.Constant(0));
+
+    public static Dual<T> Less(Dual<T> left, Dual<T> right) => new(T.Less(left.Value, right.Value), T.Constant(0));
+
+    public static Dual<T> LessOrEqual(Dual<T> left, Dual<T> right) => new(T.LessOrEqual(left.Value, right.Value), T.Constant(0));
+
+    public static Dual<T> Equal(Dual<T> left, Dual<T> right) => new(T.Equal(left.Value, right.Value), T.Constant(0));
+
+    public static Dual<T> Choose(Dual<T> condition, Dual<T> whenTrue, Dual<T> whenFalse) => new(
+        T.Choose(condition.Value, whenTrue.Value, whenFalse.Value), T.Choose(condition.Value, whenTrue.Slope, whenFalse.Slope));
 }
