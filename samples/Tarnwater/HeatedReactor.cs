@@ -14,10 +14,12 @@ namespace Tarnwater;
 [OdeModel(TimeUnit = "min")]
 public sealed partial class HeatedReactor
 {
-    /// <summary>Molar gas constant in J/(mol·K), exact in the SI since 2019.</summary>
+    /// <summary>Molar gas constant, exact in the SI since 2019.</summary>
+    [Unit("J/(mol.K)")]
     private const double GasConstant = 8.31446261815324;
 
-    /// <summary>Temperature at which <see cref="Rate320"/> is given, in K.</summary>
+    /// <summary>Temperature at which <see cref="Rate320"/> is given.</summary>
+    [Unit("K")]
     private const double ReferenceTemperature = 320;
 
     /// <summary>Concentration of the reagent in the tank.</summary>

@@ -21,10 +21,12 @@ namespace Tarnwater;
 [OdeModel(TimeUnit = "s")]
 public sealed partial class SurgeTank
 {
-    /// <summary>Density of water in kg/m³.</summary>
+    /// <summary>Density of water.</summary>
+    [Unit("kg/m3")]
     private const double Density = 1000;
 
-    /// <summary>Acceleration of gravity in m/s².</summary>
+    /// <summary>Acceleration of gravity.</summary>
+    [Unit("m/s2")]
     private const double Gravity = 9.81;
 
     /// <summary>Water level in the surge tank above the reservoir's surface.</summary>

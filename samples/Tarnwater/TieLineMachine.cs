@@ -19,7 +19,8 @@ namespace Tarnwater;
 [OdeModel(TimeUnit = "s")]
 public sealed partial class TieLineMachine
 {
-    /// <summary>Electrical angular velocity of the 50 Hz grid in rad/s.</summary>
+    /// <summary>Electrical angular velocity of the 50 Hz grid.</summary>
+    [Unit("rad/s")]
     private const double GridSpeed = 2 * Math.PI * 50;
 
     /// <summary>Angle of the rotor ahead of the grid, electrical.</summary>

@@ -14,7 +14,8 @@ namespace Tarnwater;
 [OdeModel(TimeUnit = "s")]
 public sealed partial class UnbalancedDrum
 {
-    /// <summary>Acceleration of gravity in m/s².</summary>
+    /// <summary>Acceleration of gravity.</summary>
+    [Unit("m/s2")]
     private const double Gravity = 9.81;
 
     /// <summary>Angle of the centre of mass from hanging straight down, in the sense of rotation.</summary>

@@ -6,7 +6,7 @@ namespace OdeDsl.Generators.Diagnostics;
 /// Every problem the generator reports, in one table. A number is never used again; each has a page in docs/diagnostics.
 /// Arguments are texts, so that a message never depends on the culture.
 /// </summary>
-internal static class Descriptors
+internal static partial class Descriptors
 {
     /// <summary>The category of all problems.</summary>
     public const string Category = "OdeDsl";

@@ -24,10 +24,14 @@ internal static class Attributes
         member.GetAttributes().FirstOrDefault(attribute => Is(attribute, shortName));
 
     public static bool Is(AttributeData attribute, string shortName) =>
-        attribute.AttributeClass is { ContainingType: null } type
-        && type.ContainingNamespace is { Name: Namespace, ContainingNamespace.IsGlobalNamespace: true }
+        IsOurs(attribute)
+        && attribute.AttributeClass is { } type
         && type.Name.Length == shortName.Length + nameof(Attribute).Length
         && type.Name.StartsWith(shortName, StringComparison.Ordinal);
+
+    /// <summary>Whether an attribute is one of the modelling attributes.</summary>
+    public static bool IsOurs(AttributeData attribute) =>
+        attribute.AttributeClass is { ContainingType: null, ContainingNamespace: { Name: Namespace, ContainingNamespace.IsGlobalNamespace: true } };
 
     /// <summary>Where an attribute stands.</summary>
     public static Location Place(AttributeData attribute, ISymbol member) =>

@@ -6,6 +6,7 @@ using Microsoft.CodeAnalysis.CSharp;
 using Microsoft.CodeAnalysis.CSharp.Syntax;
 using OdeDsl.Generators.Algebra;
 using OdeDsl.Generators.Diagnostics;
+using OdeDsl.Generators.Units;
 
 namespace OdeDsl.Generators.Reading;
 
@@ -39,7 +40,14 @@ internal sealed class ModelReader(
         EquationReader equations = new(model, properties, compilation, _problems, cancellation);
         equations.Read();
         ModelDefinition definition = Define(chain, type.TakenNames(), properties, equations);
-        return new(definition, new(_problems.Found.ToArray()));
+        Problems advice = new();
+        if (_problems.Found.Count == 0)
+        {
+            var rates = properties.States.Select(state => ((ISymbol)state.Symbol, equations.RateOf(state.Property.Name)));
+            UnitChecker.Check(model, rates, compilation, advice, cancellation);
+        }
+
+        return new(definition, new([.. _problems.Found, .. advice.Found]));
     }
 
     /// <summary>Where the attribute of this part stands, if another part of the class carries it before.</summary>

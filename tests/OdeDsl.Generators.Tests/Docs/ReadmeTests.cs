@@ -13,7 +13,7 @@ public sealed partial class ReadmeTests
     [Fact]
     public void The_code_of_the_readme_compiles_without_a_warning_and_runs()
     {
-        string readme = File.ReadAllText(Path.Combine(Root(), "README.md")).ReplaceLineEndings("\n");
+        string readme = File.ReadAllText(Path.Combine(Repository.Root, "README.md")).ReplaceLineEndings("\n");
         string[] blocks = [.. CodeBlock().Matches(readme).Select(static match => match.Groups[1].Value)];
         Assert.Equal(2, blocks.Length);
 
@@ -32,11 +32,4 @@ public sealed partial class ReadmeTests
 
     [GeneratedRegex("```csharp\n(.*?)```", RegexOptions.Singleline)]
     private static partial Regex CodeBlock();
-
-    private static string Root()
-    {
-        string? folder = AppContext.BaseDirectory;
-        while (folder is not null && !File.Exists(Path.Combine(folder, "OdeDsl.sln"))) folder = Path.GetDirectoryName(folder);
-        return folder ?? throw new InvalidOperationException("The repository is not found above the tests.");
-    }
 }

@@ -14,7 +14,7 @@ public sealed class SampleModelTests
     private const double Tolerance = 1e-12;
     private const int Points = 40;
 
-    public static TheoryData<string> Files => [.. Directory.GetFiles(Path.Combine(Root, "samples", "Tarnwater"), "*.cs")
+    public static TheoryData<string> Files => [.. Directory.GetFiles(Path.Combine(Repository.Root, "samples", "Tarnwater"), "*.cs")
         .Where(static file => File.ReadAllText(file).Contains("[OdeModel", StringComparison.Ordinal)).Select(static file => Path.GetFileName(file)).Order()];
 
     [Theory]
@@ -65,7 +65,7 @@ public sealed class SampleModelTests
 
     private static (ModelDefinition Model, IEmittedCalls Calls) Read(string file)
     {
-        CSharpCompilation compilation = Compiling.Compile("global using System;", File.ReadAllText(Path.Combine(Root, "samples", "Tarnwater", file)));
+        CSharpCompilation compilation = Compiling.Compile("global using System;", File.ReadAllText(Path.Combine(Repository.Root, "samples", "Tarnwater", file)));
         SyntaxTree tree = compilation.SyntaxTrees[1];
         ClassDeclarationSyntax declaration = tree.GetRoot().DescendantNodes().OfType<ClassDeclarationSyntax>().Single();
         INamedTypeSymbol symbol = compilation.GetSemanticModel(tree).GetDeclaredSymbol(declaration)!;
@@ -98,15 +98,5 @@ public sealed class SampleModelTests
     {
         double lower = BitConverter.Int64BitsToDouble(lowerBits), upper = BitConverter.Int64BitsToDouble(upperBits);
         return lower + ((upper - lower) * random.NextDouble());
-    }
-
-    private static string Root
-    {
-        get
-        {
-            string? folder = AppContext.BaseDirectory;
-            while (folder is not null && !File.Exists(Path.Combine(folder, "OdeDsl.sln"))) folder = Path.GetDirectoryName(folder);
-            return folder ?? throw new InvalidOperationException("The repository is not found above the tests.");
-        }
     }
 }
