@@ -13,12 +13,22 @@ public sealed partial class ReadmeTests
     [Fact]
     public void The_code_of_the_readme_compiles_without_a_warning_and_runs()
     {
-        string readme = File.ReadAllText(Path.Combine(Repository.Root, "README.md")).ReplaceLineEndings("\n");
-        string[] blocks = [.. CodeBlock().Matches(readme).Select(static match => match.Groups[1].Value)];
+        string[] blocks = Blocks("README.md");
         Assert.Equal(2, blocks.Length);
+        CompilesAndRuns(blocks[0], "using OdeDsl;\n" + blocks[1]);
+    }
 
-        // What a new console project brings along: System, and the second block as its program.
-        CSharpCompilation program = Compiling.Compile("global using System;", blocks[0], "using OdeDsl;\n" + blocks[1])
+    [Fact]
+    public void The_code_of_the_package_readme_compiles_without_a_warning_and_runs() =>
+        CompilesAndRuns(Assert.Single(Blocks(Path.Combine("src", "OdeDsl", "PACKAGE.md"))));
+
+    private static string[] Blocks(string page) =>
+        [.. CodeBlock().Matches(File.ReadAllText(Path.Combine(Repository.Root, page)).ReplaceLineEndings("\n")).Select(static match => match.Groups[1].Value)];
+
+    private static void CompilesAndRuns(params string[] files)
+    {
+        // A new console project brings System along.
+        CSharpCompilation program = Compiling.Compile(["global using System;", .. files])
             .WithOptions(new(OutputKind.ConsoleApplication, nullableContextOptions: NullableContextOptions.Enable));
         GeneratorRun run = Compiling.Run(program).WithoutProblems();
         Assert.DoesNotContain(run.Output.GetDiagnostics(), static diagnostic => diagnostic.Severity >= DiagnosticSeverity.Warning);
