@@ -24,7 +24,10 @@ public abstract class ModelCodeFix : CodeFixProvider
             SyntaxNode place = root.FindNode(diagnostic.Location.SourceSpan, getInnermostNodeForTie: true);
             if (Mend(place, diagnostic) is not { } change) continue;
             context.RegisterCodeFix(
-                CodeAction.Create(change.Title, _ => Task.FromResult(Changed(context.Document, root, change)), equivalenceKey: GetType().Name + diagnostic.Id),
+                CodeAction.Create(
+                    change.Title,
+                    _ => Task.FromResult(context.Document.WithSyntaxRoot(root.ReplaceNode(change.Old, change.New))),
+                    equivalenceKey: GetType().Name + diagnostic.Id),
                 diagnostic);
         }
     }
@@ -34,14 +37,6 @@ public abstract class ModelCodeFix : CodeFixProvider
     /// <param name="diagnostic">The report.</param>
     /// <returns>The change, or null where the fix does not apply.</returns>
     private protected abstract Change? Mend(SyntaxNode place, Diagnostic diagnostic);
-
-    private static Document Changed(Document document, SyntaxNode root, Change change)
-    {
-        SyntaxNode? mended = change.New is null
-            ? root.RemoveNode(change.Old, SyntaxRemoveOptions.KeepExteriorTrivia | SyntaxRemoveOptions.KeepUnbalancedDirectives)
-            : root.ReplaceNode(change.Old, change.New);
-        return document.WithSyntaxRoot(mended ?? root);
-    }
 
     private protected static ImmutableArray<string> Ids(params DiagnosticDescriptor[] descriptors)
     {

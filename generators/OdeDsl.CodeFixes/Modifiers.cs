@@ -13,39 +13,30 @@ internal static class Modifiers
     {
         SyntaxTokenList modifiers = declaration.Modifiers;
         SyntaxToken added = SyntaxFactory.Token(modifier).WithTrailingTrivia(SyntaxFactory.Space);
-        if (modifiers.Count == 0)
-        {
-            SyntaxToken next = FirstAfterModifiers(declaration);
-            declaration = declaration.ReplaceToken(next, next.WithLeadingTrivia());
-            return declaration.WithModifiers(SyntaxFactory.TokenList(added.WithLeadingTrivia(next.LeadingTrivia)));
-        }
+        int partial = modifiers.IndexOf(SyntaxKind.PartialKeyword);
+        int at = partial < 0 ? modifiers.Count : partial;
+        if (at > 0) return declaration.WithModifiers(modifiers.Insert(at, added));
 
-        int at = modifiers.IndexOf(SyntaxKind.PartialKeyword);
-        if (at != 0) return declaration.WithModifiers(modifiers.Insert(at < 0 ? modifiers.Count : at, added));
-        SyntaxToken first = modifiers[0];
-        return declaration.WithModifiers(
-            modifiers.Replace(first, first.WithLeadingTrivia()).Insert(0, added.WithLeadingTrivia(first.LeadingTrivia)));
+        // Before the first word: what stood before that word, such as the line's indentation, now stands before this one.
+        SyntaxToken next = partial < 0 ? FirstAfterAttributes(declaration) : modifiers[0];
+        declaration = declaration.ReplaceToken(next, next.WithLeadingTrivia());
+        return declaration.WithModifiers(declaration.Modifiers.Insert(0, added.WithLeadingTrivia(next.LeadingTrivia)));
     }
 
-    /// <returns>The declaration without the modifier, or null if it has none of that kind.</returns>
-    public static MemberDeclarationSyntax? Remove(MemberDeclarationSyntax declaration, params SyntaxKind[] kinds)
+    /// <returns>The declaration without the first modifier of these kinds, and that word; null if it has none.</returns>
+    public static (MemberDeclarationSyntax Declaration, string Word)? Remove(MemberDeclarationSyntax declaration, params SyntaxKind[] kinds)
     {
         SyntaxToken gone = declaration.Modifiers.FirstOrDefault(modifier => kinds.Contains(modifier.Kind()));
         if (gone.IsKind(SyntaxKind.None)) return null;
+        int at = declaration.Modifiers.IndexOf(gone);
         SyntaxToken next = gone.GetNextToken();
         if (!declaration.FullSpan.Contains(next.Span)) return null;
-        // What stood before the modifier, such as a comment or the line's indentation, now stands before what followed it.
-        MemberDeclarationSyntax moved = declaration.ReplaceToken(next, next.WithLeadingTrivia(gone.LeadingTrivia.AddRange(Telling(next.LeadingTrivia))));
-        int at = declaration.Modifiers.IndexOf(gone);
-        return moved.WithModifiers(moved.Modifiers.RemoveAt(at));
+        declaration = declaration.ReplaceToken(next, next.WithLeadingTrivia(Trivia.Join(gone.LeadingTrivia, next.LeadingTrivia)));
+        return (declaration.WithModifiers(declaration.Modifiers.RemoveAt(at)), gone.Text);
     }
 
-    private static SyntaxTriviaList Telling(SyntaxTriviaList trivia) =>
-        trivia.All(static part => part.IsKind(SyntaxKind.WhitespaceTrivia)) ? default : trivia;
-
-    private static SyntaxToken FirstAfterModifiers(MemberDeclarationSyntax declaration)
-    {
-        int attributes = declaration.AttributeLists.Count;
-        return attributes == 0 ? declaration.GetFirstToken() : declaration.AttributeLists[attributes - 1].GetLastToken().GetNextToken();
-    }
+    private static SyntaxToken FirstAfterAttributes(MemberDeclarationSyntax declaration) =>
+        declaration.AttributeLists.Count == 0
+            ? declaration.GetFirstToken(includeZeroWidth: true)
+            : declaration.AttributeLists[declaration.AttributeLists.Count - 1].GetLastToken(includeZeroWidth: true).GetNextToken(includeZeroWidth: true);
 }

@@ -337,4 +337,41 @@ internal static partial class Descriptors
         "ODE0084", "Equations read tables by At",
         "'{0}' uses '{1}' of a table; an equation reads a table only by 'At(x)'",
         Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0084");
+
+    // Advice: models that work, and could be better.
+
+    public static readonly DiagnosticDescriptor UnreadState = new(
+        "ODE0120", "A state is never read",
+        "No rate and no observable reads state '{0}'; remove it, or show it as an observable if it only adds something up",
+        Category, DiagnosticSeverity.Info, isEnabledByDefault: true, helpLinkUri: Help + "ODE0120");
+
+    public static readonly DiagnosticDescriptor UnusedParameter = new(
+        "ODE0121", "A parameter has no effect",
+        "Nothing in model '{1}' reads parameter '{0}', so that setting it changes nothing; use it or remove it",
+        Category, DiagnosticSeverity.Warning, isEnabledByDefault: true, helpLinkUri: Help + "ODE0121");
+
+    public static readonly DiagnosticDescriptor VanishingDivisor = new(
+        "ODE0122", "A divisor can be zero within the bounds of the states",
+        "Divisor '{0}' is zero somewhere within the bounds of {1}; tighten the bounds, or write an equation that stays finite there",
+        Category, DiagnosticSeverity.Info, isEnabledByDefault: true, helpLinkUri: Help + "ODE0122");
+
+    public static readonly DiagnosticDescriptor InexactDivision = new(
+        "ODE0123", "A division of whole numbers drops its remainder",
+        "'{0}' is {1} because C# divides whole numbers without remainder; write one of them with a decimal point",
+        Category, DiagnosticSeverity.Warning, isEnabledByDefault: true, helpLinkUri: Help + "ODE0123");
+
+    public static readonly DiagnosticDescriptor ExactComparison = new(
+        "ODE0124", "Moving numbers are compared for equality",
+        "'{0}' holds at single instants, which a motion passes without noticing; compare with < or >",
+        Category, DiagnosticSeverity.Info, isEnabledByDefault: true, helpLinkUri: Help + "ODE0124");
+
+    public static readonly DiagnosticDescriptor JumpInEquation = new(
+        "ODE0125", "An equation jumps",
+        "'{1}' jumps where '{0}' changes, at each crossing and in both directions; if it stands for something that happens once or stays, declare an event",
+        Category, DiagnosticSeverity.Info, isEnabledByDefault: true, helpLinkUri: Help + "ODE0125");
+
+    public static readonly DiagnosticDescriptor HelperNotStatic = new(
+        "ODE0126", "A helper can be static",
+        "Helper '{0}' uses neither states nor parameters; make it static so that this can be seen",
+        Category, DiagnosticSeverity.Info, isEnabledByDefault: true, helpLinkUri: Help + "ODE0126");
 }
