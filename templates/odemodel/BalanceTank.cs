@@ -11,6 +11,8 @@ using OdeDsl;
 [OdeModel(TimeUnit = "s")]
 public sealed partial class BalanceTank
 {
+    /// <summary>Acceleration of gravity.</summary>
+    [Unit("m/s2")]
     private const double Gravity = 9.81;
 
     /// <summary>Level of the water.</summary>

@@ -37,6 +37,11 @@ public sealed class PackageTests(Workplace place)
         Assert.InRange(found["rest.Saddle.leading"], saddle - Tolerance, saddle + Tolerance);
         Assert.Equal(1, found["text.length"]);
         Assert.Equal(1, found["document.holds.rests"]);
+
+        // The analyzers come along: a model that forgets a parameter is told of.
+        InvalidOperationException told = Assert.Throws<InvalidOperationException>(() =>
+            place.Dotnet(plain, "build", "-c", "Release", "-o", "out", "--no-restore", Version, "-p:DefineConstants=FORGETFUL"));
+        Assert.Contains("error ODE0121: Nothing in model 'Forgetful' reads parameter 'Unused'", told.Message, StringComparison.Ordinal);
     }
 
     [Fact]

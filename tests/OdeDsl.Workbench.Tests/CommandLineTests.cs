@@ -52,6 +52,19 @@ public class CommandLineTests
         Assert.Contains("--help", error, StringComparison.Ordinal);
     }
 
+    [Theory]
+    [InlineData("abc")]
+    [InlineData("1.5")]
+    [InlineData("99999999999")]
+    public async Task A_seed_that_is_no_whole_number_is_answered_in_plain_words(string seed)
+    {
+        (int code, _, string error) = await Hosts.Run(Program, ["--seed", seed]);
+
+        Assert.Equal(2, code);
+        Assert.Contains($"--seed needs a whole number between -2147483648 and 2147483647; '{seed}' is none.", error, StringComparison.Ordinal);
+        Assert.DoesNotContain("Int32", error, StringComparison.Ordinal);
+    }
+
     [Fact]
     public async Task An_unknown_model_is_answered_with_those_there_are()
     {

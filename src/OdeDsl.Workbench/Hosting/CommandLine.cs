@@ -1,5 +1,6 @@
 using System.CommandLine;
 using System.CommandLine.Parsing;
+using System.Globalization;
 using OdeDsl.Assessment;
 using OdeDsl.Modeling;
 
@@ -67,6 +68,13 @@ internal static class CommandLine
             Description = "The seed of all sampling: equal seeds give equal results.",
             HelpName = "N",
             DefaultValueFactory = _ => options.Seed,
+            CustomParser = static result =>
+            {
+                string text = result.Tokens.Count == 1 ? result.Tokens[0].Value : "";
+                if (int.TryParse(text, NumberStyles.AllowLeadingSign, CultureInfo.InvariantCulture, out int value)) return value;
+                result.AddError($"--seed needs a whole number between {int.MinValue} and {int.MaxValue}; '{text}' is none.");
+                return default;
+            },
         };
         Option<bool> figures = new("--figures") { Description = "Also write each figure as an SVG file of its own." };
         RootCommand root = new($"{title}: assesses each model and writes report.html and assessment.json. "

@@ -22,6 +22,20 @@ public sealed partial class ReadmeTests
     public void The_code_of_the_package_readme_compiles_without_a_warning_and_runs() =>
         CompilesAndRuns(Assert.Single(Blocks(Path.Combine("src", "OdeDsl", "PACKAGE.md"))));
 
+    [Fact]
+    public void The_surge_tank_of_the_readme_has_the_numbers_of_the_sample_whose_picture_stands_beside_it()
+    {
+        Dictionary<string, string> shown = Numbers(Blocks("README.md")[0]);
+        Assert.Equal(Numbers(File.ReadAllText(Path.Combine(Repository.Root, "samples", "Tarnwater", "SurgeTank.cs"))), shown);
+        Assert.Equal(8, shown.Count);
+    }
+
+    private static Dictionary<string, string> Numbers(string model) =>
+        Declaration().Matches(model).ToDictionary(static match => match.Groups[2].Value, static match => match.Groups[1].Value);
+
+    [GeneratedRegex(@"\[((?:State|Parameter)\([^)]*\))\]\s+public partial double (\w+)")]
+    private static partial Regex Declaration();
+
     private static string[] Blocks(string page) =>
         [.. CodeBlock().Matches(File.ReadAllText(Path.Combine(Repository.Root, page)).ReplaceLineEndings("\n")).Select(static match => match.Groups[1].Value)];
 

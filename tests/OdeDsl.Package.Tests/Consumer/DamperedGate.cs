@@ -4,7 +4,7 @@ namespace Consumer;
 
 /// <summary>
 /// A gate at the end of a channel, held by a spring and slowed by a damper with dry friction: a state on a circle, functions with kinks,
-/// a helper, a rate that takes the time, and an observable.
+/// a helper, units, a rate that takes the time, and an observable.
 /// </summary>
 [OdeModel(TimeUnit = "s")]
 public sealed partial class DamperedGate
@@ -29,7 +29,10 @@ public sealed partial class DamperedGate
     [Parameter(0.9, Lower = -4, Upper = 4, Unit = "1/s2")]
     public partial double Load { get; set; }
 
-    private double Drag => Damping * Speed * (1 + 0.25 * Math.Abs(Speed));
+    [Unit("s")]
+    private const double Roughness = 0.25;
+
+    private double Drag => Damping * Speed * (1 + Roughness * Math.Abs(Speed));
 
     /// <summary>Energy per moment of inertia.</summary>
     [Observable(Unit = "1/s2")]
