@@ -7,6 +7,7 @@ using OdeDsl.Workbench.Hosting;
 using OdeDsl.Workbench.Report;
 using OdeDsl.Workbench.Wording;
 using Spectre.Console;
+using ConsoleTable = Spectre.Console.Table;
 
 namespace OdeDsl.Workbench.Terminal;
 
@@ -40,7 +41,7 @@ internal sealed class AssessmentPrinter
             return;
         }
 
-        Table answers = Grid("", "");
+        ConsoleTable answers = Grid("", "");
         answers.ShowHeaders = false;
         foreach (Answer answer in Answers.Of(assessment)) answers.AddRow(new Text(answer.Question), new Text(answer.Full));
         foreach (string remark in assessment.Remarks) answers.AddRow(new Text("Remark"), new Text(remark));
@@ -59,10 +60,10 @@ internal sealed class AssessmentPrinter
         console.Write(new Text("Caution. " + Words.Caution + "\n"));
     }
 
-    private static Table Rests(ModelAssessment assessment)
+    private static ConsoleTable Rests(ModelAssessment assessment)
     {
         ModelDescription description = assessment.Description;
-        Table table = Grid(["Rest", "Kind", .. description.States.Select(static state => Heading(state.Name, state.Unit)), Heading("Changes by e in", description.TimeUnit)]);
+        ConsoleTable table = Grid(["Rest", "Kind", .. description.States.Select(static state => Heading(state.Name, state.Unit)), Heading("Changes by e in", description.TimeUnit)]);
         foreach ((int index, Equilibrium rest) in assessment.Rests.Equilibria.Index())
         {
             Add(
@@ -78,10 +79,10 @@ internal sealed class AssessmentPrinter
         return table;
     }
 
-    private static Table Cycles(ModelAssessment assessment)
+    private static ConsoleTable Cycles(ModelAssessment assessment)
     {
         ModelDescription description = assessment.Description;
-        Table table = Grid(["Cycle", "Kind", Heading("Period", description.TimeUnit), .. description.States.Select(static state => Heading(state.Name, state.Unit))]);
+        ConsoleTable table = Grid(["Cycle", "Kind", Heading("Period", description.TimeUnit), .. description.States.Select(static state => Heading(state.Name, state.Unit))]);
         foreach ((int index, LimitCycle cycle) in assessment.Motions.Cycles.Index())
         {
             Add(
@@ -101,9 +102,9 @@ internal sealed class AssessmentPrinter
 
     private static string Range((double Minimum, double Maximum) ends) => $"{NumberText.Plain(ends.Minimum)} to {NumberText.Plain(ends.Maximum)}";
 
-    private static Table Margins(MarginsAnswer margins)
+    private static ConsoleTable Margins(MarginsAnswer margins)
     {
-        Table table = Grid("Parameter", "Value", "Nearest change below", "Nearest change above");
+        ConsoleTable table = Grid("Parameter", "Value", "Nearest change below", "Nearest change above");
         foreach (ParameterMargin margin in margins.Parameters)
         {
             string unit = margin.Parameter.Unit;
@@ -122,14 +123,14 @@ internal sealed class AssessmentPrinter
             $"{NumberText.PlainWith(edge.Value ?? double.NaN, unit, 6)} ({edge.Percent:+0.#;-0.#} %), {Words.Of(edge.Event)}"),
     };
 
-    private static Table Grid(params ReadOnlySpan<string> headings)
+    private static ConsoleTable Grid(params ReadOnlySpan<string> headings)
     {
-        Table table = new() { Border = TableBorder.Horizontal };
+        ConsoleTable table = new() { Border = TableBorder.Horizontal };
         foreach (string heading in headings) table.AddColumn(new TableColumn(new Text(heading)));
         return table;
     }
 
-    private static void Add(Table table, IReadOnlyList<string> cells) => table.AddRow(cells.Select(static cell => new Text(cell)));
+    private static void Add(ConsoleTable table, IReadOnlyList<string> cells) => table.AddRow(cells.Select(static cell => new Text(cell)));
 
     private static string Heading(string name, string unit) => unit.Length == 0 ? name : $"{name} ({unit})";
 

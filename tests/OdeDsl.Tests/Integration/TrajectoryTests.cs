@@ -45,7 +45,7 @@ public class TrajectoryTests
         Assert.Equal("m", run[pendulum.X].Unit);
         Assert.Equal(run["V"].Values, run[pendulum.V].Values);
         Series energy = run["Energy"];
-        Assert.Equal("J", energy.Unit);
+        Assert.Equal("J/kg", energy.Unit);
         double[] at = run.At(1.7);
         Assert.Equal(at[1] * at[1] / 2 + 4 * at[0] * at[0] / 2, energy.At(1.7), 1e-14);
         Assert.Equal(run.Times.Length, energy.Values.Length);
@@ -145,6 +145,6 @@ internal sealed partial class Swing
     [Parameter(4)] public partial double Stiffness { get; set; }
     [Rate(nameof(X))] private double XRate => V;
     [Rate(nameof(V))] private double VRate => -Stiffness * X;
-    [Observable(Unit = "J")] private double Energy => V * V / 2 + Stiffness * X * X / 2;
+    [Observable(Unit = "J/kg")] private double Energy => V * V / 2 + Stiffness * X * X / 2;
     [Observable] private double Doubled => 2 * X;
 }
