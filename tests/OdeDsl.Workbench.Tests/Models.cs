@@ -22,8 +22,13 @@ public sealed partial class Swing
     private double TiltRate => Rate;
 
     [Rate(nameof(Rate))]
-    private double RateRate => -4 * Tilt - Drag * Rate;
+    private double RateRate => -Stiffness * Tilt - Drag * Rate;
+
+    [Unit("1/s2")]
+    private const double Stiffness = 4;
 }
+
+#pragma warning disable ODE0100 // No units on purpose: this is about what texts can do to a report.
 
 /// <summary>Units that try to be &lt;script&gt;alert('x')&lt;/script&gt; markup, and [red]markup[/] of the console.</summary>
 [OdeModel(TimeUnit = "\"><script>alert(1)</script>")]
@@ -49,6 +54,8 @@ public sealed partial class Hostile
     [Rate(nameof(Second))]
     private double SecondRate => -First - Third * Second;
 }
+
+#pragma warning restore ODE0100
 
 /// <summary>A model whose rates are not numbers anywhere.</summary>
 [OdeModel]
