@@ -50,7 +50,7 @@ public class ReportTests
         Assert.All(
             [
                 "Where it rests", "Whether it keeps moving", "How far each parameter is from a change", "Which method computes it",
-                "dRate/dt = -4 * Tilt - Drag * Rate", "Damping.", "licensed engineers", "seed 1", "OdeDsl 0.1.0",
+                "dRate/dt = -Stiffness * Tilt - Drag * Rate", "Damping.", "licensed engineers", "seed 1", "OdeDsl 0.1.0",
             ],
             part => Assert.Contains(part, text, StringComparison.Ordinal));
     }

@@ -31,15 +31,18 @@ public sealed class MutationTests
             [State(Initial = -1.5, Lower = -10, Upper = 10, Unit = "m"), Angle] public partial double X { get; set; }
             [State] /* still without a rate */ public partial double Y { get; private set; }
             [Parameter(2.5, Lower = 0)] public double P { get; init; }
-            [Parameter(1)] public static partial float Q { set; }
+            [Parameter(1)] public static partial double Q { get; set; }
+            [Parameter(1)] public partial float S { get; set; }
+            [Parameter(1)] public partial double T { set; }
             [Parameter(1), Observable, Angle] public virtual partial double R { get; set; }
             private double Half(double level) => level / 2;
             [Rate(nameof(X))] private double XRate => X == 0 ? 1 / 2 * P : (X > 1 ? 2.0 : 0.0) / X;
-            [Observable] public static int Share => X switch { < 0 => 1, >= 1 and < 2 => 2 };
-            [Observable] public double Lost => MathF.Abs((float)X) + Half(R) + Two;
+            [Observable] public static double Two => 2;
+            [Observable] public double Share => X switch { < 0 => 1, >= 1 and < 2 => 2 };
+            [Observable] public double Lost => MathF.Abs((float)X) + Half(R) + Three;
         }
         [OdeModel] partial class Model { [Rate("Z")] double ZRate(double time) { if (time < 3) return time; return 1 / Y; } }
-        public class Base { protected virtual double Two => 2; [Observable] double B => 1; }
+        public class Base { protected virtual double Three => 3; [Observable] double B => 1; }
         """;
 
     private static readonly string[] Fragments =
@@ -52,13 +55,12 @@ public sealed class MutationTests
     [Theory]
     [InlineData(1)]
     [InlineData(2)]
-    [InlineData(3)]
     public async Task No_mutation_makes_the_generator_an_analyzer_or_a_fix_throw(int seed)
     {
         Random random = new(seed);
         SyntaxNode root = CSharpSyntaxTree.ParseText(Faulty, Compiling.ParseOptions).GetRoot();
         string[] tokens = [.. root.DescendantTokens().Select(static token => token.ToFullString())];
-        for (int i = 0; i < 40; i++)
+        for (int i = 0; i < 25; i++)
         {
             List<string> mutated = [.. tokens];
             for (int edits = random.Next(1, 6); edits > 0; edits--)
@@ -77,13 +79,11 @@ public sealed class MutationTests
         }
     }
 
-    [Theory]
-    [InlineData(1)]
-    [InlineData(2)]
-    public async Task No_garbage_makes_the_generator_an_analyzer_or_a_fix_throw(int seed)
+    [Fact]
+    public async Task No_garbage_makes_the_generator_an_analyzer_or_a_fix_throw()
     {
-        Random random = new(seed);
-        for (int i = 0; i < 40; i++)
+        Random random = new(3);
+        for (int i = 0; i < 30; i++)
         {
             // Cuts of the file in any order, words at random and characters at random.
             StringBuilder garbage = new("using OdeDsl; [OdeModel] ");
