@@ -23,9 +23,9 @@ internal static class Dependences
             Node node = graph[i];
             dependences[i] = node.Operator switch
             {
-                Operator.State => Dependence.State,
+                Operator.State or Operator.StateElement => Dependence.State,
                 Operator.Time => Dependence.Time,
-                Operator.Parameter => Dependence.Parameter,
+                Operator.Parameter or Operator.ParameterElement => Dependence.Parameter,
                 _ => Dependence.None,
             };
             foreach (int operand in node.Operands) dependences[i] |= dependences[operand];

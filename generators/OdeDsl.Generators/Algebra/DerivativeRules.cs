@@ -33,6 +33,8 @@ internal sealed class DerivativeRules(ExpressionGraph graph)
             Operator.Atan2 => Algebra.Divide(
                 Algebra.Subtract(Algebra.Multiply(b, da), Algebra.Multiply(a, db)), Algebra.Add(Algebra.Square(a), Algebra.Square(b))),
             Operator.Conditional => Algebra.Conditional(a, db, of(node.Third)),
+            Operator.Fold => Algebra.Add(da, Algebra.Sum(node.Symbol, db)), // What was added up before counts for nothing in a pass.
+            Operator.Sum => Algebra.Sum(node.Symbol, da),
             Operator.Clamp => Clamped(node, da, db, of(node.Third)),
             Operator.Min => Algebra.Conditional(Greater(a, b), db, da),
             Operator.Max => Algebra.Conditional(Greater(b, a), db, da),

@@ -19,7 +19,7 @@ internal static class FlatZero
         int condition = graph.Binary(Operator.Equal, value, differentiator.Zero);
         foreach (int leaf in Reach.Of(graph, [value]))
         {
-            if (graph[leaf].Operator is not (Operator.State or Operator.Time)) continue;
+            if (graph[leaf].Operator is not (Operator.State or Operator.StateElement or Operator.Time)) continue;
             Dictionary<int, int> derivatives = differentiator.Along([new(leaf, differentiator.One)], cancellationToken);
             if (!derivatives.TryGetValue(value, out int derivative)) continue;
             if (graph[derivative].Operator == Operator.Constant) return graph.Constant(false);

@@ -13,6 +13,11 @@ internal readonly record struct Node(Operator Operator, int First, int Second, i
 
     public int Index => (int)Payload;
 
+    /// <summary>The index of a loop; see <see cref="FoldPayload"/>.</summary>
+    public int Symbol => (int)(Payload >> 32);
+
+    public static long FoldPayload(int symbol, int fold) => ((long)symbol << 32) | (uint)fold;
+
     public bool IsLeaf => First < 0;
 
     /// <summary>The operands, in order.</summary>

@@ -103,4 +103,23 @@ internal enum Operator : byte
 
     /// <summary>The derivative of that position.</summary>
     TablePositionSlope,
+
+    // Only in models with vectors (tables: VectorPart).
+
+    /// <summary>An element of a vector-valued state, parameter or direction. Payload: access.</summary>
+    StateElement,
+    ParameterElement,
+    DirectionElement,
+
+    /// <summary>A whole number as a double. Payload: number.</summary>
+    IndexNumber,
+
+    /// <summary>What a loop has added up before a pass. Payload: fold and index.</summary>
+    Accumulator,
+
+    /// <summary>A loop: starts with First, and each pass makes Second of what there is. Payload: fold and index.</summary>
+    Fold,
+
+    /// <summary>The sum of First over an index, only in derivatives. Payload: index.</summary>
+    Sum,
 }

@@ -96,6 +96,8 @@ internal sealed class Simplifier(ExpressionGraph graph)
         return graph.Ternary(Operator.Conditional, condition, a, b);
     }
 
+    public int Sum(int symbol, int term) => IsZero(term) ? Zero : graph.Intern(new Node(Operator.Sum, term, -1, -1, Node.FoldPayload(symbol, 0)));
+
     /// <summary>
     /// Whether a choice is zero on one branch. Factors move inside it: where Math.Sqrt(Math.Max(level, 0)) rests on its bound, the
     /// slope of the root is infinite and its product with a zero would be no number.

@@ -71,6 +71,7 @@ internal sealed partial class BodyReader
             NumberValue number => new NumberValue(_graph.Binary(up ? Operator.Add : Operator.Subtract, number.Node, _graph.Constant(1.0))),
             WholeValue whole => Whole(operation, () => whole.Choice.Select(a =>
                 WholeNumbers.Fit(up ? a + BigInteger.One : a - BigInteger.One, operation.Type!, operation.IsChecked))),
+            IndexValue index => WholeOf(index.Number.Plus(up ? 1 : -1)),
             LiteralValue literal => Imprecise(operation, literal),
             _ => UnknownValue.Instance,
         };

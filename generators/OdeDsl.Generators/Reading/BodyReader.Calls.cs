@@ -15,6 +15,7 @@ internal sealed partial class BodyReader
     private Value Invocation(IInvocationOperation operation)
     {
         IMethodSymbol method = operation.TargetMethod;
+        if (LengthOf(operation) is { } length) return length;
         if (MathFunctions.IsHome(method.ContainingType)) return MathCall(operation, method);
         if (TableReader.IsTable(method.ContainingType)) return TableCall(operation);
         if (method.MethodKind is not (MethodKind.Ordinary or MethodKind.LocalFunction)) return Unsupported(operation);
@@ -60,8 +61,7 @@ internal sealed partial class BodyReader
         CallKey key = new(member, new(arguments));
         if (isReusable && _known.TryGetValue(key, out Value? known)) return known;
         Value value = Run(definition, arguments);
-        if (isReusable) _known[key] = value;
-        return value;
+        return isReusable ? Know(key, value) : value;
     }
 
     private UnknownValue Recursion(ISymbol definition)
@@ -123,6 +123,7 @@ internal sealed partial class BodyReader
         if (Arguments(operation, isLocal: false) is not { } arguments) return UnknownValue.Instance;
         if (arguments.Any(static argument => argument is UnknownValue)) return UnknownValue.Instance;
         if (function is { } known) return MathCall(operation, known, arguments);
+        if (isWhole && OnIndices(operation, method.Name, arguments) is { } index) return index;
         if (isWhole) return WholeCall(operation, method, arguments);
         return arguments[1] is WholeValue { Choice: ChoiceLeaf<BigInteger> mode } && Rounding(mode.Value) is { } rounding
             ? MathCall(operation, rounding, [arguments[0]])

@@ -80,6 +80,7 @@ internal sealed partial class BodyReader
         (WholeValue first, WholeValue second) => Bounded(Choice.Between(condition, first.Choice, second.Choice)),
         (LiteralValue { Constant: float or decimal } first, LiteralValue) => Imprecise(_current!, first),
         (UnknownValue, _) or (_, UnknownValue) => UnknownValue.Instance,
+        (IndexValue, _) or (_, IndexValue) => NotAffine(_current!, "it depends on conditions"),
         _ => Unsupported(_current!),
     };
 

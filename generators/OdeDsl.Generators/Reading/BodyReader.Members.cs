@@ -29,7 +29,9 @@ internal sealed partial class BodyReader
         if (TableReader.IsTable(property.ContainingType)) return OfTable(operation, property);
         if (operation.Arguments.Length > 0) return Unsupported(operation);
         if (TableReader.IsTable(property.Type)) return Table(operation, property);
+        if (LengthOf(operation) is { } length) return length;
         if (!property.IsStatic && !BelongsToModel(operation.Instance, operation, property)) return UnknownValue.Instance;
+        if (VectorOrLength(property) is { } vector) return vector;
         if (_leaves.TryGetValue(property.OriginalDefinition, out int leaf)) return new NumberValue(leaf);
         if (Attributes.Find(property, Attributes.State) is not null || Attributes.Find(property, Attributes.Parameter) is not null)
             return UnknownValue.Instance; // Its declaration has a problem that is reported there.
@@ -103,9 +105,7 @@ internal sealed partial class BodyReader
         if (Constructors.Mention(member, _cancellation)) return Problem(Descriptors.ConstructorSetsValue, operation, member.Name);
         CallKey key = new(member, EquatableArray<Value>.Empty);
         if (_known.TryGetValue(key, out Value? known)) return known;
-        Value value = Initializer(member) is { } initializer ? RunInitializer(member, initializer) : DefaultOf(operation, member);
-        _known[key] = value;
-        return value;
+        return Know(key, Initializer(member) is { } initializer ? RunInitializer(member, initializer) : DefaultOf(operation, member));
     }
 
     private EqualsValueClauseSyntax? Initializer(ISymbol member) =>

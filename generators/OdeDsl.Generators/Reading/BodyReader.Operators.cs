@@ -53,6 +53,7 @@ internal sealed partial class BodyReader
     /// <param name="type">The type in which whole numbers are computed.</param>
     private Value Apply(IOperation operation, BinaryOperatorKind kind, Value first, Value second, ITypeSymbol? type, bool isChecked)
     {
+        if (OnIndices(operation, kind, first, second) is { } index) return index;
         return (first, second) switch
         {
             (UnknownValue, _) or (_, UnknownValue) => UnknownValue.Instance,
@@ -156,7 +157,8 @@ internal sealed partial class BodyReader
         return (operation.OperatorKind, value) switch
         {
             (_, UnknownValue) => value,
-            (UnaryOperatorKind.Plus, NumberValue or WholeValue) => value,
+            (UnaryOperatorKind.Plus, NumberValue or WholeValue or IndexValue) => value,
+            (UnaryOperatorKind.Minus, IndexValue index) => WholeOf(index.Number.Times(-1)),
             (UnaryOperatorKind.Minus, NumberValue number) => new NumberValue(_graph.Unary(Operator.Negate, number.Node)),
             (UnaryOperatorKind.Not, ConditionValue condition) => new ConditionValue(_conditions.Not(condition.Node)),
             (UnaryOperatorKind.Minus, WholeValue whole) when WholeNumbers.IsWhole(operation.Type) =>
@@ -178,7 +180,8 @@ internal sealed partial class BodyReader
         return (value, target?.SpecialType) switch
         {
             (NumberValue, SpecialType.System_Double) => value,
-            (WholeValue, SpecialType.System_Double) => new NumberValue(Node(value)),
+            (WholeValue or IndexValue, SpecialType.System_Double) => new NumberValue(Node(value)),
+            (IndexValue, SpecialType.System_Int32 or SpecialType.System_Int64) => value,
             (LiteralValue { Constant: float single }, SpecialType.System_Double) => new NumberValue(_graph.Constant((double)single)),
             (WholeValue whole, _) when WholeNumbers.IsWhole(target) =>
                 Whole(operation, () => whole.Choice.Select(a => WholeNumbers.Fit(a, target!, operation.IsChecked))),

@@ -102,6 +102,7 @@ internal sealed partial class BodyReader
                     (NumberValue a, NumberValue b) => ConditionOf(
                         Relation(pattern, relational.OperatorKind, a.Node, b.Node, inputText + " " + UserText.Of(pattern.Syntax))),
                     (WholeValue a, WholeValue b) => ConditionOf(Apply(pattern, relational.OperatorKind, a.Choice, b.Choice, null, false)),
+                    (IndexValue, WholeValue) => ConditionOf(Apply(pattern, relational.OperatorKind, input, bound, null, false)),
                     _ => NoMatch(pattern),
                 };
             case INegatedPatternOperation negated:
@@ -131,6 +132,7 @@ internal sealed partial class BodyReader
         (NumberValue a, NumberValue b) => _graph.Binary(Operator.Equal, a.Node, b.Node),
         (ConditionValue a, ConditionValue b) => _conditions.Equal(a.Node, b.Node),
         (WholeValue a, WholeValue b) => ConditionOf(Apply(pattern, BinaryOperatorKind.Equals, a.Choice, b.Choice, null, false)),
+        (IndexValue, WholeValue) => ConditionOf(Apply(pattern, BinaryOperatorKind.Equals, input, constant, null, false)),
         _ => NoMatch(pattern),
     };
 

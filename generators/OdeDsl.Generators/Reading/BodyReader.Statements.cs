@@ -47,6 +47,9 @@ internal sealed partial class BodyReader
             case ISwitchOperation choice:
                 Switch(choice);
                 break;
+            case IForLoopOperation loop:
+                Loop(loop);
+                break;
             case IBranchOperation { BranchKind: BranchKind.Break }:
                 Break();
                 break;

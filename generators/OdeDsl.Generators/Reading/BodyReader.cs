@@ -28,21 +28,25 @@ internal sealed partial class BodyReader
     private readonly INamedTypeSymbol _model;
     private readonly Compilation _compilation;
     private readonly IReadOnlyDictionary<ISymbol, int> _leaves;
+    private readonly VectorTables _tables;
     private readonly ExpressionGraph _graph;
     private readonly Conditions _conditions;
     private readonly Problems _problems;
     private readonly CancellationToken _cancellation;
 
     private readonly Dictionary<CallKey, Value> _known = [];
+    private readonly List<CallKey> _knownInOrder = [];
     private readonly List<ISymbol> _active = [];
     private Flow _flow;
     private IOperation? _current;
 
     /// <param name="leaves">The nodes of the states and parameters.</param>
+    /// <param name="tables">Vectors and lengths.</param>
     public BodyReader(
         INamedTypeSymbol model,
         Compilation compilation,
         IReadOnlyDictionary<ISymbol, int> leaves,
+        VectorTables tables,
         ExpressionGraph graph,
         Problems problems,
         CancellationToken cancellation)
@@ -50,6 +54,7 @@ internal sealed partial class BodyReader
         _model = model;
         _compilation = compilation;
         _leaves = leaves;
+        _tables = tables;
         _graph = graph;
         _conditions = new(graph);
         _problems = problems;
@@ -62,9 +67,15 @@ internal sealed partial class BodyReader
 
     /// <summary>Reads a rate or an observable.</summary>
     /// <returns>The node of its value, or null with a problem reported.</returns>
-    public int? Read(ISymbol member)
+    public int? Read(ISymbol member) => Read(member, []);
+
+    /// <summary>Reads the rate of an element of a vector.</summary>
+    /// <param name="indices">The element's indices, in the order of the member's whole-number arguments.</param>
+    public int? Read(ISymbol member, IReadOnlyList<Affine> indices)
     {
-        Value[] arguments = member is IMethodSymbol { Parameters.Length: 1 } ? [new NumberValue(_graph.Leaf(Operator.Time))] : [];
+        Queue<Affine> left = new(indices);
+        Value[] arguments = [.. (member is IMethodSymbol method ? method.Parameters : ImmutableArray<IParameterSymbol>.Empty).Select(parameter =>
+            parameter.Type.SpecialType == SpecialType.System_Double ? new NumberValue(_graph.Leaf(Operator.Time)) : WholeOf(left.Dequeue()))];
         try
         {
             return Call(member, arguments) is NumberValue number ? number.Node : null;
@@ -74,6 +85,24 @@ internal sealed partial class BodyReader
             _problems.Report(Descriptors.EquationTooDeep, member.Locations[0], member.Name);
             return null;
         }
+    }
+
+    /// <summary>How much is known now, to go back to.</summary>
+    public (int Problems, int Known) Mark => (_problems.Found.Count, _knownInOrder.Count);
+
+    /// <summary>Forgets what was read since a mark, because the range of an index has been split since.</summary>
+    public void GoBackTo((int Problems, int Known) mark)
+    {
+        _problems.ForgetSince(mark.Problems);
+        foreach (CallKey key in _knownInOrder.Skip(mark.Known)) _known.Remove(key);
+        _knownInOrder.RemoveRange(mark.Known, _knownInOrder.Count - mark.Known);
+    }
+
+    private Value Know(CallKey key, Value value)
+    {
+        _known.Add(key, value);
+        _knownInOrder.Add(key);
+        return value;
     }
 
     private Flow Start(ImmutableDictionary<ISymbol, Value> variables) =>
@@ -90,6 +119,7 @@ internal sealed partial class BodyReader
             ILocalReferenceOperation local => Variable(local.Local, operation),
             IParameterReferenceOperation parameter => Variable(parameter.Parameter, operation),
             IInstanceReferenceOperation { ReferenceKind: InstanceReferenceKind.ContainingTypeInstance } => ModelValue.Instance,
+            IArrayElementReferenceOperation element => Element(element),
             IFieldReferenceOperation field => Field(field),
             IPropertyReferenceOperation property => Property(property),
             IInvocationOperation invocation => Invocation(invocation),
@@ -144,6 +174,7 @@ internal sealed partial class BodyReader
     {
         NumberValue number => number.Node,
         WholeValue { Number: { } number } => number,
+        IndexValue index => NumberOf(index.Number),
         WholeValue whole => whole.Choice.Fold(leaf => _graph.Constant(WholeNumbers.ToDouble(leaf)), _conditions.ChooseNumber),
         _ => _graph.Constant(double.NaN),
     };

@@ -29,25 +29,25 @@ internal sealed class EquationReader(
             if (Attributes.Find(member, Attributes.Observable) is { } observable) ReadObservable(member, observable);
         }
 
-        foreach (DeclaredState state in properties.States)
+        foreach (ISymbol state in properties.States.Select(static state => state.Symbol).Concat(properties.VectorStates.Select(static state => state.Symbol)))
         {
-            if (!_rates.ContainsKey(state.Property.Name))
-                problems.Report(Descriptors.MissingRate, state.Symbol.Locations[0], state.Property.Name);
+            if (!_rates.ContainsKey(state.Name)) problems.Report(Descriptors.MissingRate, state.Locations[0], state.Name);
         }
     }
 
     private void ReadRate(ISymbol member, AttributeData attribute)
     {
         Location place = Attributes.Place(attribute, member);
-        bool readable = IsReadable(member, Attributes.Rate);
         string? name = Attributes.First<string>(attribute);
+        DeclaredVector? vector = properties.VectorStates.FirstOrDefault(state => state.Property.Name == name);
+        bool readable = IsReadable(member, Attributes.Rate, vector);
         if (name is null)
         {
             problems.Report(Descriptors.AttributeNotReadable, place, Attributes.Rate, member.Name);
             return;
         }
 
-        bool isState = properties.States.Any(state => state.Property.Name == name) || properties.FailedStates.Contains(name);
+        bool isState = properties.States.Any(state => state.Property.Name == name) || vector is not null || properties.FailedStates.Contains(name);
         if (!isState && model.GetMembers(name).IsEmpty)
             problems.Report(Descriptors.RateOfUnknownMember, place, member.Name, name, model.Name);
         else if (!isState)
@@ -60,7 +60,7 @@ internal sealed class EquationReader(
 
     private void ReadObservable(ISymbol member, AttributeData attribute)
     {
-        if (!IsReadable(member, Attributes.Observable)) return;
+        if (!IsReadable(member, Attributes.Observable, null)) return;
         string? unit = Attributes.Named(attribute, "Unit", "");
         if (Observables.Any(other => other.Member.Name == member.Name))
             problems.Report(Descriptors.DuplicateObservable, member.Locations[0], member.Name);
@@ -68,7 +68,7 @@ internal sealed class EquationReader(
             Observables.Add((member, unit ?? ""));
     }
 
-    private bool IsReadable(ISymbol member, string role)
+    private bool IsReadable(ISymbol member, string role, DeclaredVector? vector)
     {
         Location place = member.Locations[0];
         ITypeSymbol? type = member switch
@@ -81,7 +81,9 @@ internal sealed class EquationReader(
         else if (member is IMethodSymbol { IsGenericMethod: true }) problems.Report(Descriptors.EquationGeneric, place, role, member.Name);
         else if (type?.SpecialType != SpecialType.System_Double)
             problems.Report(Descriptors.EquationNotDouble, TypePlace(member) ?? place, role, member.Name, type?.ToDisplayString() ?? "");
-        else if (!TakesOnlyTime(member)) problems.Report(Descriptors.EquationArguments, place, role, member.Name);
+        else if (vector is not null && !TakesIndices(member, vector.Lengths.Count))
+            problems.Report(Descriptors.RateIndices, place, member.Name, vector.Property.Name, vector.Lengths.Count == 1 ? "one int" : "two ints");
+        else if (vector is null && !TakesOnlyTime(member)) problems.Report(Descriptors.EquationArguments, place, role, member.Name);
         else if (Bodies.Find(member, compilation, cancellation) is null)
             problems.Report(Descriptors.EquationWithoutBody, place, role, member.Name);
         else if (Overriding.CanBeOverridden(member, model)) problems.Report(Descriptors.MemberOverridable, place, member.Name, model.Name);
@@ -98,6 +100,13 @@ internal sealed class EquationReader(
         IPropertySymbol { IsIndexer: false } => true,
         _ => false,
     };
+
+    /// <summary>Whether the member takes the indices of an element and, apart from them, at most the time.</summary>
+    private static bool TakesIndices(ISymbol member, int count) => member is IMethodSymbol method
+        && method.Parameters.All(static parameter => parameter.RefKind == RefKind.None)
+        && method.Parameters.Count(static parameter => parameter.Type.SpecialType == SpecialType.System_Int32) == count
+        && method.Parameters.Where(static parameter => parameter.Type.SpecialType != SpecialType.System_Int32).ToArray() is []
+            or [{ Type.SpecialType: SpecialType.System_Double, Name: "time" or "t" }];
 
     private Location? TypePlace(ISymbol member) =>
         member.DeclaringSyntaxReferences.FirstOrDefault()?.GetSyntax(cancellation) switch

@@ -25,6 +25,9 @@ internal sealed record ModelDefinition(
 
     /// <summary>The tables that the equations read; nodes name them by position.</summary>
     public EquatableArray<TableDefinition> Tables { get; init; } = EquatableArray<TableDefinition>.Empty;
+
+    /// <summary>Vectors and lengths, or null for a model without any.</summary>
+    public VectorPart? Vectors { get; init; }
 }
 
 /// <summary>Where the model class stands: enough to reopen it in a generated file.</summary>
@@ -56,7 +59,11 @@ internal sealed record StateDefinition(
     string RateText);
 
 /// <summary>A parameter.</summary>
-internal sealed record ParameterDefinition(PropertyDefinition Property, string Unit, long ValueBits, long LowerBits, long UpperBits);
+internal sealed record ParameterDefinition(PropertyDefinition Property, string Unit, long ValueBits, long LowerBits, long UpperBits)
+{
+    /// <summary>Whether it is a whole number, which is fixed when a model is made.</summary>
+    public bool IsWhole { get; init; }
+}
 
 /// <summary>An observable.</summary>
 /// <param name="Name">The member's name, unescaped.</param>
@@ -71,7 +78,11 @@ internal sealed record TableDefinition(string Name, string Unit, string Argument
 /// <param name="Name">The name, unescaped.</param>
 /// <param name="Modifiers">Accessibility and other modifiers to repeat, <c>partial</c> left out: for example <c>public</c>.</param>
 /// <param name="Accessors">The accessors to implement, for example <c>get</c>, <c>private set</c>, <c>init</c>.</param>
-internal sealed record PropertyDefinition(string Name, string Summary, string Modifiers, EquatableArray<string> Accessors);
+internal sealed record PropertyDefinition(string Name, string Summary, string Modifiers, EquatableArray<string> Accessors)
+{
+    /// <summary>The type as written in C#.</summary>
+    public string Type { get; init; } = "double";
+}
 
 /// <summary>The user's text of a condition or of a function with a kink, to name its switching function by.</summary>
 /// <param name="Node">The node.</param>

@@ -34,7 +34,7 @@ internal sealed class ModelReader(
         ReportInherited(place);
         PropertyReader properties = new(model, compilation, _problems, cancellation);
         properties.Read();
-        if (properties.States.Count + properties.FailedStates.Count == 0)
+        if (properties.States.Count + properties.VectorStates.Count + properties.FailedStates.Count == 0)
             _problems.Report(Descriptors.ModelWithoutStates, place, model.Name);
         TableReader.Check(model, compilation, _problems, cancellation);
         EquationReader equations = new(model, properties, compilation, _problems, cancellation);
@@ -83,15 +83,19 @@ internal sealed class ModelReader(
         foreach (DeclaredParameter parameter in properties.Parameters)
             leaves.Add(parameter.Symbol, graph.Leaf(Operator.Parameter, leaves.Count - properties.States.Count));
 
-        BodyReader bodies = new(model, compilation, leaves, graph, _problems, cancellation);
+        BodyReader bodies = new(model, compilation, leaves, properties.Tables, graph, _problems, cancellation);
         ISymbol?[] rates = properties.States.Select(state => equations.RateOf(state.Property.Name)).ToArray();
+        SegmentDefinition[][] segments = SegmentsOf(properties, equations, bodies, graph);
         int?[] results = rates.Concat(equations.Observables.Select(static observable => observable.Member))
             .Select(member => member is null ? null : bodies.Read(member))
+            .Concat(segments.SelectMany(static all => all).Select(static segment => segment.Rate < 0 ? (int?)null : segment.Rate))
             .ToArray();
+        RequireLengths(properties);
         bool isSound = _problems.Found.Count == 0 && results.All(static result => result is not null);
         PrunedGraph pruned = isSound
             ? PrunedGraph.Of(graph, results.Select(static result => result!.Value).ToArray())
             : PrunedGraph.NotANumber(results.Length);
+        Queue<int> vectorRates = new(pruned.Results.Skip(rates.Length + equations.Observables.Count));
 
         return new(
             chain,
@@ -105,8 +109,59 @@ internal sealed class ModelReader(
         {
             Tables = isSound ? new(bodies.Tables.ToArray()) : EquatableArray<TableDefinition>.Empty,
             TimeUnit = Attributes.Find(model, "OdeModel") is { } mark ? Attributes.Named(mark, "TimeUnit", "") ?? "" : "",
+            Vectors = properties.HasVectors
+                ? properties.Tables.Finish(
+                    properties.VectorStates.Select((state, i) => Define(state, equations.RateOf(state.Property.Name), segments[i], vectorRates)),
+                    properties.VectorParameters.Select(Define))
+                : null,
         };
     }
+
+    /// <summary>The equations may treat so many elements apart that a length is too small for them.</summary>
+    private void RequireLengths(PropertyReader properties)
+    {
+        foreach (SymbolDefinition length in properties.Tables.Symbols.Where(static symbol => symbol.IsLength))
+        {
+            DeclaredParameter parameter = properties.Parameters[length.Parameter];
+            double value = System.BitConverter.Int64BitsToDouble(parameter.Definition.ValueBits);
+            if (value >= length.Minimum) continue;
+            _problems.Report(
+                Descriptors.LengthTooShort, parameter.Symbol.Locations[0], length.Name,
+                value.ToString("R", System.Globalization.CultureInfo.InvariantCulture), length.Minimum.ToString(System.Globalization.CultureInfo.InvariantCulture));
+        }
+    }
+
+    private SegmentDefinition[][] SegmentsOf(PropertyReader properties, EquationReader equations, BodyReader bodies, ExpressionGraph graph)
+    {
+        VectorRateReader reader = new(bodies, properties.Tables, graph, _problems, cancellation);
+        return [.. properties.VectorStates.Select(state =>
+            equations.RateOf(state.Property.Name) is { } rate ? reader.Read(state, rate) : WithoutRate(state))];
+    }
+
+    private static SegmentDefinition[] WithoutRate(DeclaredVector state) =>
+        [new(new([.. state.Lengths.Select(static length => new IndexRange(Affine.Zero, length, -1))]), -1)];
+
+    private VectorStateDefinition Define(DeclaredVector state, ISymbol? rate, SegmentDefinition[] segments, Queue<int> nodes) => new(
+        state.Property,
+        state.Unit,
+        PropertyReader.Bits(state.Start),
+        PropertyReader.Bits(state.Lower),
+        PropertyReader.Bits(state.Upper),
+        state.AnglePeriod is { } period ? PropertyReader.Bits(period) : null,
+        state.Lengths,
+        new([.. segments.Select(segment => segment with { Rate = nodes.Dequeue() })]),
+        rate is IMethodSymbol method
+            ? string.Join(", ", method.Parameters.Where(static parameter => parameter.Type.SpecialType == SpecialType.System_Int32).Select(static parameter => parameter.Name))
+            : "",
+        TextOf(rate));
+
+    private static VectorParameterDefinition Define(DeclaredVector parameter) => new(
+        parameter.Property,
+        parameter.Unit,
+        PropertyReader.Bits(parameter.Start),
+        PropertyReader.Bits(parameter.Lower),
+        PropertyReader.Bits(parameter.Upper),
+        parameter.Lengths);
 
     private static StateDefinition Define(DeclaredState state, int rate, string text) => new(
         state.Property,

@@ -18,7 +18,7 @@ internal sealed record DeclaredState(
 internal sealed record DeclaredParameter(IPropertySymbol Symbol, ParameterDefinition Definition);
 
 /// <summary>Reads the states and parameters of a model, in the order of declaration.</summary>
-internal sealed class PropertyReader(INamedTypeSymbol model, Compilation compilation, Problems problems, CancellationToken cancellation)
+internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation compilation, Problems problems, CancellationToken cancellation)
 {
     public List<DeclaredState> States { get; } = [];
 
@@ -44,9 +44,12 @@ internal sealed class PropertyReader(INamedTypeSymbol model, Compilation compila
                 continue;
             }
 
-            if (state is not null) ReadState(property, state, angle);
+            if (property.Type is IArrayTypeSymbol) ReadVector(property, state, parameter, angle);
+            else if (state is not null) ReadState(property, state, angle);
             else ReadParameter(property, parameter!);
         }
+
+        ResolveLengths();
     }
 
     private bool HasOneRole(IPropertySymbol property)
@@ -66,6 +69,7 @@ internal sealed class PropertyReader(INamedTypeSymbol model, Compilation compila
         PropertyDefinition? definition = ReadProperty(property, Attributes.State);
         if (definition is null) FailedStates.Add(property.Name);
         Location place = Attributes.Place(attribute, property);
+        RefuseLengths(property, attribute);
         double? initial = Attributes.Named<double?>(attribute, "Initial", 0.0);
         (double lower, double upper, string unit) = ReadRange(property, attribute, Attributes.State, place, initial);
         double? period = angle is null ? null : ReadPeriod(property, angle);
@@ -76,10 +80,12 @@ internal sealed class PropertyReader(INamedTypeSymbol model, Compilation compila
     {
         PropertyDefinition? definition = ReadProperty(property, Attributes.Parameter);
         Location place = Attributes.Place(attribute, property);
+        RefuseLengths(property, attribute);
         double? value = Attributes.First<double?>(attribute);
         (double lower, double upper, string unit) = ReadRange(property, attribute, Attributes.Parameter, place, value);
-        if (definition is not null)
-            Parameters.Add(new(property, new(definition, unit, Bits(value ?? 0), Bits(lower), Bits(upper))));
+        bool isWhole = property.Type.SpecialType == SpecialType.System_Int32;
+        if (definition is null || (isWhole && !IsFixedWhole(property, place, value))) return;
+        Parameters.Add(new(property, new(definition, unit, Bits(value ?? 0), Bits(lower), Bits(upper)) { IsWhole = isWhole }));
     }
 
     private double? ReadPeriod(IPropertySymbol property, AttributeData angle)
@@ -129,7 +135,7 @@ internal sealed class PropertyReader(INamedTypeSymbol model, Compilation compila
         else if (property.IsStatic) problems.Report(Descriptors.PropertyStatic, place, role, property.Name);
         else if (overridable is not null) problems.Report(Descriptors.PropertyOverridable, place, role, property.Name, overridable);
         else if (property.GetMethod is null) problems.Report(Descriptors.PropertyWithoutGetter, place, role, property.Name);
-        else if (property.Type.SpecialType != SpecialType.System_Double || property.RefKind != RefKind.None)
+        else if (!HasUsableType(property, role) || property.RefKind != RefKind.None)
         {
             Location typePlace = declaration?.Type.GetLocation() ?? place;
             problems.Report(Descriptors.PropertyNotDouble, typePlace, role, property.Name, TypeName(property));
@@ -150,7 +156,7 @@ internal sealed class PropertyReader(INamedTypeSymbol model, Compilation compila
         string[] accessors = (declaration.AccessorList?.Accessors ?? default)
             .Select(static accessor => string.Join(" ", accessor.Modifiers.Append(accessor.Keyword).Select(static token => token.Text)))
             .ToArray();
-        return new(property.Name, Summaries.Of(property, cancellation), modifiers, new(accessors));
+        return new(property.Name, Summaries.Of(property, cancellation), modifiers, new(accessors)) { Type = property.Type.ToDisplayString() };
     }
 
     private static string TypeName(IPropertySymbol property) =>

@@ -39,20 +39,21 @@ internal sealed class DescriptionWriter(SourceWriter writer, ModelDefinition mod
         writer.Line("    ],");
     }
 
-    private static string StateText(StateDefinition state) =>
+    internal static string StateText(StateDefinition state) =>
         $"new {Namespace}StateDescription({Literals.Text(state.Property.Name)}, {Literals.Text(state.Unit)}, {Number(state.InitialBits)}, "
         + $"{Number(state.LowerBits)}, {Number(state.UpperBits)}, {(state.AnglePeriodBits is { } period ? Number(period) : "null")}, "
         + $"{Literals.Text(state.RateText)}, {Literals.Text(state.Property.Summary)})";
 
-    private static string ParameterText(ParameterDefinition parameter) =>
+    internal static string ParameterText(ParameterDefinition parameter) =>
         $"new {Namespace}ParameterDescription({Literals.Text(parameter.Property.Name)}, {Literals.Text(parameter.Unit)}, "
-        + $"{Number(parameter.ValueBits)}, {Number(parameter.LowerBits)}, {Number(parameter.UpperBits)}, {Literals.Text(parameter.Property.Summary)})";
+        + $"{Number(parameter.ValueBits)}, {Number(parameter.LowerBits)}, {Number(parameter.UpperBits)}, {Literals.Text(parameter.Property.Summary)})"
+        + (parameter.IsWhole ? " { IsFixed = true }" : "");
 
-    private static string ObservableText(ObservableDefinition observable) =>
+    internal static string ObservableText(ObservableDefinition observable) =>
         $"new {Namespace}ObservableDescription({Literals.Text(observable.Name)}, {Literals.Text(observable.Unit)}, "
         + $"{Literals.Text(observable.Text)}, {Literals.Text(observable.Summary)})";
 
-    private static string TableText(TableDefinition table) =>
+    internal static string TableText(TableDefinition table) =>
         $"new {Namespace}TableDescription({Literals.Text(table.Name)}, {Literals.Text(table.Unit)}, {Literals.Text(table.ArgumentUnit)}, {table.Access})";
 
     private string SwitchText(SwitchingFunction function)

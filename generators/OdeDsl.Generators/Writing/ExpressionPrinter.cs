@@ -60,7 +60,9 @@ internal class ExpressionPrinter(
         Operator.Constant => Constant(node.Constant),
         Operator.BooleanConstant => (node.Payload != 0 ? "true" : "false", Binding.Primary),
         Operator.Side => (leaf(node), Binding.Equality),
-        Operator.State or Operator.Parameter or Operator.Time or Operator.Direction or Operator.WholeNumber => (leaf(node), Binding.Primary),
+        Operator.State or Operator.Parameter or Operator.Time or Operator.Direction or Operator.WholeNumber
+            or Operator.StateElement or Operator.ParameterElement or Operator.DirectionElement => (leaf(node), Binding.Primary),
+        Operator.IndexNumber => (leaf(node), Binding.Unary),
         Operator.Add => Infix(node, "+", Binding.Sum),
         Operator.Subtract => Infix(node, "-", Binding.Sum),
         Operator.Multiply => Infix(node, "*", Binding.Product),

@@ -12,7 +12,6 @@ internal static class ModelWriter
     /// <summary>Derives everything that the contract asks for and prints it. The same model gives the same text on every system.</summary>
     internal static string Write(ModelDefinition model, CancellationToken cancellationToken)
     {
-        ModelEquations equations = ModelEquations.Of(model, cancellationToken);
         SourceWriter writer = new();
         writer.Lines(Header);
         if (model.Type.Namespace.Length > 0)
@@ -24,7 +23,6 @@ internal static class ModelWriter
         NameScope members = new(model.TakenNames.Concat(model.Type.Types.SelectMany(NamesOf)));
         string equationsName = members.Claim("Equations");
         string modelName = FullName(model.Type);
-        ModelMembersWriter memberWriter = new(writer, model, members);
         for (int i = 0; i < model.Type.Types.Count; i++)
         {
             TypeLink type = model.Type.Types[i];
@@ -34,8 +32,17 @@ internal static class ModelWriter
             writer.Open($"partial {type.Keyword} {type.Name}{type.TypeParameters}{bases}");
         }
 
-        memberWriter.Write(modelName, equationsName);
-        new EquationsWriter(writer, model, equations, cancellationToken).Write(equationsName);
+        if (model.Vectors is null)
+        {
+            new ModelMembersWriter(writer, model, members).Write(modelName, equationsName);
+            new EquationsWriter(writer, model, ModelEquations.Of(model, cancellationToken), cancellationToken).Write(equationsName);
+        }
+        else
+        {
+            new VectorMembersWriter(writer, model, members).Write(modelName, equationsName);
+            new VectorEquationsWriter(writer, VectorEquations.Of(model, cancellationToken), cancellationToken).Write(equationsName);
+        }
+
         for (int i = 0; i < model.Type.Types.Count; i++) writer.Close();
         return writer.ToString();
     }

@@ -27,6 +27,7 @@ internal sealed class MarginSearch(
         var margins = new List<ParameterMargin>();
         for (int i = 0; i < system.ParameterCount; i++)
         {
+            if (description.Parameters[i].IsFixed) continue;
             report((double)i / system.ParameterCount, description.Parameters[i].Name);
             double value = system.Parameters[i];
             ParameterRange range = ParameterRange.Of(description.Parameters[i], value, options.RangeFactor);

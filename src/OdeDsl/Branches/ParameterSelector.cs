@@ -21,7 +21,7 @@ internal static class ParameterSelector
     {
         int[] found = [.. MarkerSets.Select(markers => Probe(model, selector, markers)).Append(ProbeAtOwnValues(model, selector)).Distinct()];
         if (found is [>= 0 and int index]) return index;
-        string names = string.Join(", ", TSystem.Description.Parameters.Select(static parameter => parameter.Name));
+        string names = string.Join(", ", Names(TSystem.Description));
         throw new ArgumentException(
             names.Length == 0
                 ? $"The model {TSystem.Description.Name} has no parameters to follow."
@@ -34,8 +34,13 @@ internal static class ParameterSelector
         where TModel : class, IOdeModel<TModel, TSystem>
         where TSystem : struct, IOdeSystem
     {
-        double[] parameters = new double[TSystem.Description.Parameters.Length];
-        for (int i = 0; i < parameters.Length; i++) parameters[i] = markers.First + i * markers.Step;
+        double[] parameters = new double[model.ParameterCount];
+        model.ReadParameters(parameters);
+        for (int i = 0; i < parameters.Length; i++)
+        {
+            if (!IsFixed<TSystem>(i)) parameters[i] = markers.First + i * markers.Step;
+        }
+
         return Probe(model, selector, parameters);
     }
 
@@ -44,9 +49,13 @@ internal static class ParameterSelector
         where TModel : class, IOdeModel<TModel, TSystem>
         where TSystem : struct, IOdeSystem
     {
-        double[] parameters = new double[TSystem.Description.Parameters.Length];
+        double[] parameters = new double[model.ParameterCount];
         model.ReadParameters(parameters);
-        for (int i = 0; i < parameters.Length; i++) parameters[i] = parameters[i] * (1 + (i + 1) * OwnValueMove) + (i + 1) * OwnValueMove * OwnValueMove;
+        for (int i = 0; i < parameters.Length; i++)
+        {
+            if (!IsFixed<TSystem>(i)) parameters[i] = parameters[i] * (1 + (i + 1) * OwnValueMove) + (i + 1) * OwnValueMove * OwnValueMove;
+        }
+
         return Probe(model, selector, parameters);
     }
 
@@ -57,10 +66,23 @@ internal static class ParameterSelector
         TModel copy = model.Copy();
         copy.WriteParameters(parameters);
         // States are no parameters: a selector that reads one gets a value that equals no marker.
-        double[] state = new double[TSystem.Description.States.Length];
+        double[] state = new double[model.StateCount];
         Array.Fill(state, double.NaN);
         copy.WriteState(state);
         double value = selector(copy);
-        return Array.IndexOf(parameters, value);
+        int found = Array.IndexOf(parameters, value);
+        return found >= 0 && IsFixed<TSystem>(found) ? -1 : found;
     }
+
+    // Lengths of vectors come before the vectors, whose elements' positions depend on them.
+    private static bool IsFixed<TSystem>(int index)
+        where TSystem : struct, IOdeSystem =>
+        index < TSystem.Description.Parameters.ScalarCount && TSystem.Description.Parameters[index].IsFixed;
+
+    // The vectors by their names, not all their elements.
+    private static IEnumerable<string> Names(ModelDescription description) =>
+    [
+        .. Enumerable.Range(0, description.Parameters.ScalarCount).Select(i => description.Parameters[i]).Where(static item => !item.IsFixed).Select(static item => item.Name),
+        .. description.ParameterVectors.Select(static vector => vector.Name + "[...]"),
+    ];
 }

@@ -3,14 +3,12 @@ using OdeDsl.Modeling;
 namespace OdeDsl.Integration;
 
 /// <summary>A model's rates within the regime that <see cref="Motion"/> holds locked, or along the surface it slides on.</summary>
-internal readonly struct ModelField<TSystem>(double[] parameters, double[] regime, SlidingSurface sliding) : IVectorField
+internal readonly struct ModelField<TSystem>(int stateCount, double[] parameters, double[] regime, SlidingSurface sliding) : IVectorField
     where TSystem : struct, IOdeSystem
 {
-    private static readonly int StateCount = TSystem.Description.States.Length;
+    public int Dimension => stateCount;
 
-    public int Dimension => StateCount;
-
-    public int BlockSize => StateCount;
+    public int BlockSize => stateCount;
 
     public void Rates(double time, ReadOnlySpan<double> y, Span<double> rates)
     {

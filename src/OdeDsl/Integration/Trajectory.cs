@@ -66,7 +66,11 @@ public sealed class Trajectory
             int observable = description.IndexOfObservable(name);
             if (observable >= 0) return new Series(this, name, description.Observables[observable].Unit, -1, observable);
             IEnumerable<string> known =
-                [.. description.States.Select(static item => item.Name), .. description.Observables.Select(static item => item.Name)];
+            [
+                .. Enumerable.Range(0, description.States.ScalarCount).Select(i => description.States[i].Name),
+                .. description.StateVectors.Select(static vector => vector.NameOf(0) + " to " + vector.NameOf(vector.Count - 1)),
+                .. description.Observables.Select(static item => item.Name),
+            ];
             throw new KeyNotFoundException(
                 $"{description.Name} has no state or observable named '{name}'. It has: {string.Join(", ", known)}.");
         }

@@ -1,8 +1,8 @@
 namespace OdeDsl.Modeling;
 
 /// <summary>The one implementation of <see cref="DynamicSystem"/>: forwards to the static members of the equations.</summary>
-internal sealed class BoundSystem<TSystem>(double[] parameters, double[] initialState)
-    : DynamicSystem(TSystem.Description, parameters, initialState)
+internal sealed class BoundSystem<TSystem>(ModelDescription description, double[] parameters, double[] initialState)
+    : DynamicSystem(description, parameters, initialState)
     where TSystem : struct, IOdeSystem
 {
     public override TResult Apply<TResult>(ISystemOperation<TResult> operation)
@@ -43,5 +43,5 @@ internal sealed class BoundSystem<TSystem>(double[] parameters, double[] initial
         TSystem.SwitchingTimeDerivative(time, state, Parameters, regime, derivative);
 
     private protected override DynamicSystem Rebind(double[] newParameters, double[] newInitialState) =>
-        new BoundSystem<TSystem>(newParameters, newInitialState);
+        new BoundSystem<TSystem>(Description, newParameters, newInitialState);
 }

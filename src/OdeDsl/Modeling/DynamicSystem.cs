@@ -51,11 +51,11 @@ public abstract class DynamicSystem
         where TSystem : struct, IOdeSystem
     {
         ArgumentNullException.ThrowIfNull(model);
-        var parameters = new double[TSystem.Description.Parameters.Length];
-        var state = new double[TSystem.Description.States.Length];
+        var parameters = new double[model.ParameterCount];
+        var state = new double[model.StateCount];
         model.ReadParameters(parameters);
         model.ReadState(state);
-        return new BoundSystem<TSystem>(parameters, state);
+        return new BoundSystem<TSystem>(TSystem.DescriptionFor(parameters) ?? TSystem.Description, parameters, state);
     }
 
     /// <summary>Binds equations to the defaults in their description.</summary>
@@ -64,6 +64,7 @@ public abstract class DynamicSystem
     public static DynamicSystem Of<TSystem>()
         where TSystem : struct, IOdeSystem =>
         new BoundSystem<TSystem>(
+            TSystem.Description,
             [.. TSystem.Description.Parameters.Select(parameter => parameter.Default)],
             [.. TSystem.Description.States.Select(state => state.Initial)]);
 
@@ -72,21 +73,26 @@ public abstract class DynamicSystem
     /// <param name="value">Its new value.</param>
     /// <returns>A new system.</returns>
     /// <exception cref="ArgumentOutOfRangeException">There is no such parameter.</exception>
-    /// <exception cref="ArgumentException">The value is not finite.</exception>
+    /// <exception cref="ArgumentException">The value is not finite, or the parameter is the length of a vector.</exception>
     public DynamicSystem WithParameter(int index, double value)
     {
         ArgumentOutOfRangeException.ThrowIfNegative(index);
         ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual(index, ParameterCount);
         double[] changed = [.. parameters];
         changed[index] = value;
+        RequireSameLengths(changed);
         return Rebind(changed, initialState);
     }
 
     /// <summary>The same equations with other parameters.</summary>
     /// <param name="values">All m parameters.</param>
     /// <returns>A new system.</returns>
-    /// <exception cref="ArgumentException">The number of values is not m, or a value is not finite.</exception>
-    public DynamicSystem WithParameters(ReadOnlySpan<double> values) => Rebind(values.ToArray(), initialState);
+    /// <exception cref="ArgumentException">The number of values is not m, a value is not finite, or the length of a vector differs.</exception>
+    public DynamicSystem WithParameters(ReadOnlySpan<double> values)
+    {
+        RequireSameLengths(values);
+        return Rebind(values.ToArray(), initialState);
+    }
 
     /// <summary>The same equations starting elsewhere.</summary>
     /// <param name="values">All n states.</param>
@@ -132,6 +138,17 @@ public abstract class DynamicSystem
         double time, ReadOnlySpan<double> state, ReadOnlySpan<double> regime, Span<double> derivative);
 
     private protected abstract DynamicSystem Rebind(double[] newParameters, double[] newInitialState);
+
+    private void RequireSameLengths(ReadOnlySpan<double> values)
+    {
+        int count = Math.Min(values.Length, Description.Parameters.ScalarCount);
+        for (int i = 0; i < count; i++)
+        {
+            if (values[i] == parameters[i] || !Description.Parameters[i].IsFixed) continue;
+            throw new ArgumentException(
+                $"{Description.Parameters[i].Name} is fixed at {parameters[i]} when the model is made, because lengths of vectors depend on it; make another model instead.");
+        }
+    }
 
     private static void RequireFinite(double[] values, int count, string what, Func<int, string> nameOf)
     {

@@ -7,6 +7,12 @@ public interface IOdeModel<TModel, TSystem>
     where TModel : class, IOdeModel<TModel, TSystem>
     where TSystem : struct, IOdeSystem
 {
+    /// <summary>The number of states, n: it depends on the lengths of vectors.</summary>
+    int StateCount => TSystem.Description.States.Length;
+
+    /// <summary>The number of parameters, m.</summary>
+    int ParameterCount => TSystem.Description.Parameters.Length;
+
     /// <summary>Copies the model's states out.</summary>
     /// <param name="state">Receives n values.</param>
     void ReadState(Span<double> state);

@@ -17,7 +17,14 @@ namespace OdeDsl.Modeling;
 public interface IOdeSystem
 {
     /// <summary>Names, units, bounds, defaults and structure.</summary>
+    /// <remarks>For a model with vectors, the description of its default lengths; see <see cref="DescriptionFor"/>.</remarks>
     static abstract ModelDescription Description { get; }
+
+    /// <summary>The description that goes with given parameters, for models with vectors: their lengths decide how many states there are.</summary>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <returns>The description; <see langword="null"/> for models without vectors: it is <see cref="Description"/> for all parameters.</returns>
+    /// <exception cref="ArgumentException">A length is not a whole number, or too small for the equations.</exception>
+    static virtual ModelDescription? DescriptionFor(ReadOnlySpan<double> parameters) => null;
 
     /// <summary>The rates as written by the user, equal to the model's own members bit for bit.</summary>
     /// <param name="time">The time.</param>

@@ -15,10 +15,10 @@ public sealed record ModelDescription
     public string TimeUnit { get; init; } = "";
 
     /// <summary>The states, in the order of the state vector.</summary>
-    public required ImmutableArray<StateDescription> States { get; init; }
+    public required DescriptionList<StateDescription> States { get; init; }
 
     /// <summary>The parameters, in the order of the parameter vector.</summary>
-    public required ImmutableArray<ParameterDescription> Parameters { get; init; }
+    public required DescriptionList<ParameterDescription> Parameters { get; init; }
 
     /// <summary>The observables, in the order of the observable vector.</summary>
     public ImmutableArray<ObservableDescription> Observables { get; init; } = [];
@@ -27,7 +27,13 @@ public sealed record ModelDescription
     public ImmutableArray<TableDescription> Tables { get; init; } = [];
 
     /// <summary>The switching functions, in the order of the regime vector.</summary>
-    public ImmutableArray<SwitchDescription> Switches { get; init; } = [];
+    public DescriptionList<SwitchDescription> Switches { get; init; } = [];
+
+    /// <summary>The vector-valued states; their elements come behind the other states.</summary>
+    public ImmutableArray<VectorDescription> StateVectors { get; init; } = [];
+
+    /// <summary>The vector-valued parameters; their elements come behind the other parameters.</summary>
+    public ImmutableArray<VectorDescription> ParameterVectors { get; init; } = [];
 
     /// <summary>The entries of the state Jacobian that are not identically zero.</summary>
     public required SparsityPattern StateSparsity { get; init; }
@@ -39,25 +45,31 @@ public sealed record ModelDescription
     public bool DependsOnTime { get; init; }
 
     /// <summary>The position of a state in the state vector.</summary>
-    /// <param name="name">The state's name.</param>
+    /// <param name="name">The state's name; for an element of a vector as in <c>Temperature[3]</c>.</param>
     /// <returns>The index, or -1 if there is no such state.</returns>
-    public int IndexOfState(string name) => IndexOf(States, name, static state => state.Name);
+    public int IndexOfState(string name) => IndexOf(States, States.ScalarCount, StateVectors, name, static state => state.Name);
 
     /// <summary>The position of a parameter in the parameter vector.</summary>
-    /// <param name="name">The parameter's name.</param>
+    /// <param name="name">The parameter's name; for an element of a vector as in <c>Weight[3]</c>.</param>
     /// <returns>The index, or -1 if there is no such parameter.</returns>
-    public int IndexOfParameter(string name) => IndexOf(Parameters, name, static parameter => parameter.Name);
+    public int IndexOfParameter(string name) => IndexOf(Parameters, Parameters.ScalarCount, ParameterVectors, name, static parameter => parameter.Name);
 
     /// <summary>The position of an observable in the observable vector.</summary>
     /// <param name="name">The observable's name.</param>
     /// <returns>The index, or -1 if there is no such observable.</returns>
-    public int IndexOfObservable(string name) => IndexOf(Observables, name, static observable => observable.Name);
+    public int IndexOfObservable(string name) => IndexOf(Observables, Observables.Length, [], name, static observable => observable.Name);
 
-    private static int IndexOf<T>(ImmutableArray<T> items, string name, Func<T, string> nameOf)
+    private static int IndexOf<T>(
+        IReadOnlyList<T> items, int scalarCount, ImmutableArray<VectorDescription> vectors, string name, Func<T, string> nameOf)
     {
-        for (int i = 0; i < items.Length; i++)
+        for (int i = 0; i < scalarCount; i++)
         {
             if (string.Equals(nameOf(items[i]), name, StringComparison.Ordinal)) return i;
+        }
+
+        foreach (VectorDescription vector in vectors)
+        {
+            if (vector.IndexOf(name) is >= 0 and int index) return index;
         }
 
         return -1;

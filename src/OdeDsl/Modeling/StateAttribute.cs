@@ -1,6 +1,9 @@
 namespace OdeDsl;
 
-/// <summary>Marks a partial property of type <see langword="double"/> as a state of the model.</summary>
+/// <summary>
+/// Marks a partial property of type <see langword="double"/> as a state of the model; or one of type <c>double[]</c> or <c>double[,]</c> as
+/// a vector of states with the length, or the rows and columns, given here.
+/// </summary>
 [AttributeUsage(AttributeTargets.Property)]
 public sealed class StateAttribute : Attribute
 {
@@ -15,4 +18,15 @@ public sealed class StateAttribute : Attribute
 
     /// <summary>The unit, shown beside every value of this state.</summary>
     public string Unit { get; set; } = "";
+
+    /// <summary>
+    /// The length of a <c>double[]</c>: a whole number, or the name of a parameter of type <see langword="int"/> by <see langword="nameof"/>.
+    /// </summary>
+    public object? Length { get; set; }
+
+    /// <summary>The number of rows of a <c>double[,]</c>, likewise.</summary>
+    public object? Rows { get; set; }
+
+    /// <summary>The number of columns of a <c>double[,]</c>, likewise.</summary>
+    public object? Columns { get; set; }
 }
