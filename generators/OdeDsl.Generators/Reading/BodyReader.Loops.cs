@@ -32,7 +32,7 @@ internal sealed partial class BodyReader
             splitsBefore = splits.Count;
             GoBackTo(mark);
             _flow = start;
-            foreach (IndexRange range in splits.Segments(header.Index.Name, _tables))
+            foreach (IndexRange range in splits.Segments(header.Index.Name, _vectors))
             {
                 if (range.Symbol < 0) Pass(loop, header.Index, range.Lower);
                 else Fold(loop, header.Index, range.Symbol);
@@ -126,7 +126,7 @@ internal sealed partial class BodyReader
                 return;
             }
 
-            accumulators.Add(variable, _graph.Intern(new Node(Operator.Accumulator, -1, -1, -1, _tables.AddFold(symbol))));
+            accumulators.Add(variable, _graph.Intern(new Node(Operator.Accumulator, -1, -1, -1, _vectors.AddFold(symbol))));
             Assign(variable, new NumberValue(accumulators[variable]));
         }
 

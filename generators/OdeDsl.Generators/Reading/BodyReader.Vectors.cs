@@ -14,8 +14,8 @@ internal sealed partial class BodyReader
     /// <summary>A vector or length of the model, or null if the property is neither.</summary>
     private Value? VectorOrLength(IPropertySymbol property)
     {
-        if (_tables.Vectors.TryGetValue(property.OriginalDefinition, out VectorValue? vector)) return vector;
-        return _tables.Lengths.TryGetValue(property.OriginalDefinition, out int length) ? new IndexValue(Affine.OfSymbol(length)) : null;
+        if (_vectors.Vectors.TryGetValue(property.OriginalDefinition, out VectorValue? vector)) return vector;
+        return _vectors.Lengths.TryGetValue(property.OriginalDefinition, out int length) ? new IndexValue(Affine.OfSymbol(length)) : null;
     }
 
     /// <summary>A whole number: a constant where it is one, so that all of C#'s arithmetic is there for it.</summary>
@@ -32,9 +32,9 @@ internal sealed partial class BodyReader
 
     private int NumberOf(Affine number)
     {
-        if (number is { Constant: 0, Terms: [{ Factor: 1, Symbol: var symbol }] } && _tables.Symbols[symbol] is { IsLength: true } length)
+        if (number is { Constant: 0, Terms: [{ Factor: 1, Symbol: var symbol }] } && _vectors.Symbols[symbol] is { IsLength: true } length)
             return _graph.Leaf(Operator.Parameter, length.Parameter);
-        return number.IsConstant ? _graph.Constant((double)number.Constant) : _graph.Leaf(Operator.IndexNumber, _tables.Intern(number));
+        return number.IsConstant ? _graph.Constant((double)number.Constant) : _graph.Leaf(Operator.IndexNumber, _vectors.Intern(number));
     }
 
     /// <summary><c>Temperature.Length</c>.</summary>
@@ -64,7 +64,9 @@ internal sealed partial class BodyReader
 
     private Value Element(IArrayElementReferenceOperation operation)
     {
-        Value array = operation.ArrayReference is IArrayElementReferenceOperation ? UnknownValue.Instance : Evaluate(operation.ArrayReference);
+        if (operation.ArrayReference is not (IPropertyReferenceOperation or ILocalReferenceOperation or IParameterReferenceOperation))
+            return Unsupported(operation);
+        Value array = Evaluate(operation.ArrayReference);
         if (array is UnknownValue) return array;
         if (array is not VectorValue vector) return Unsupported(operation);
         List<Affine> indices = [];
@@ -83,15 +85,15 @@ internal sealed partial class BodyReader
         }
 
         _current = operation;
-        int access = _tables.Intern(new AccessDefinition(vector.Vector, new([.. indices])));
+        int access = _vectors.Intern(new AccessDefinition(vector.Vector, new([.. indices])));
         return new NumberValue(_graph.Leaf(vector.IsParameter ? Operator.ParameterElement : Operator.StateElement, access));
     }
 
     /// <summary>Whether an index is one of the vector's; a length gets a larger least value if that is what it takes.</summary>
     private bool IsInside(IOperation operation, VectorValue vector, Affine index, Affine length)
     {
-        string? where = !_tables.Require(LeastOf(index)) ? "before the first element"
-            : !_tables.Require(LeastOf(length.Plus(-1) - index)) ? "behind the last element"
+        string? where = !_vectors.Require(LeastOf(index)) ? "before the first element"
+            : !_vectors.Require(LeastOf(length.Plus(-1) - index)) ? "behind the last element"
             : null;
         if (where is null) return true;
         Problem(Descriptors.IndexOutOfRange, operation, UserText.Of(operation.Syntax), where, vector.Name);
@@ -101,7 +103,7 @@ internal sealed partial class BodyReader
     /// <summary>The least value of a form over its indices, as a form of lengths.</summary>
     private Affine LeastOf(Affine form)
     {
-        while (form.LastSymbol is >= 0 and int last && _tables.Symbols[last] is { IsLength: false } index)
+        while (form.LastSymbol is >= 0 and int last && _vectors.Symbols[last] is { IsLength: false } index)
         {
             long factor = form.FactorOf(last);
             form = form.Without(last) + (factor > 0 ? index.Lower : index.Upper.Plus(-1)).Times(factor);
@@ -124,7 +126,7 @@ internal sealed partial class BodyReader
             case BinaryOperatorKind.Multiply when a.IsConstant: return WholeOf(b.Times(a.Constant));
             case BinaryOperatorKind.Multiply when b.IsConstant: return WholeOf(a.Times(b.Constant));
             case BinaryOperatorKind.Multiply: return NotAffine(operation, "it multiplies indices or lengths with one another");
-            case BinaryOperatorKind.Remainder when _tables.IsNotNegative(a) == true: return Remainder(operation, a, b);
+            case BinaryOperatorKind.Remainder when _vectors.IsNotNegative(a) == true: return Remainder(operation, a, b);
             case BinaryOperatorKind.LessThan: return AtLeast(b - a.Plus(1), Operator.Less, a, b);
             case BinaryOperatorKind.LessThanOrEqual: return AtLeast(b - a, Operator.LessOrEqual, a, b);
             case BinaryOperatorKind.GreaterThan: return AtLeast(a - b.Plus(1), Operator.Greater, a, b);
@@ -135,14 +137,14 @@ internal sealed partial class BodyReader
         }
     }
 
-    private ConditionValue AtLeast(Affine difference, Operator relation, Affine a, Affine b) => new ConditionValue(_tables.IsNotNegative(difference) switch
+    private ConditionValue AtLeast(Affine difference, Operator relation, Affine a, Affine b) => new ConditionValue(_vectors.IsNotNegative(difference) switch
     {
         true => _conditions.True,
         false => _conditions.False,
         null => _graph.Binary(relation, NumberOf(a), NumberOf(b)),
     });
 
-    private int SameOrNot(Affine a, Affine b, Operator relation) => _tables.Sign(a - b) switch
+    private int SameOrNot(Affine a, Affine b, Operator relation) => _vectors.Sign(a - b) switch
     {
         0 => _conditions.True,
         null => _graph.Binary(relation, NumberOf(a), NumberOf(b)),
@@ -152,9 +154,9 @@ internal sealed partial class BodyReader
     /// <summary>a % b for a from 0 to below 2 b, as in a ring of cells.</summary>
     private Value Remainder(IOperation operation, Affine a, Affine b)
     {
-        if (_tables.IsNotNegative(b - a.Plus(1)) is not { } isBelow) return NotAffine(operation, "the quotient is not known");
+        if (_vectors.IsNotNegative(b - a.Plus(1)) is not { } isBelow) return NotAffine(operation, "the quotient is not known");
         if (isBelow) return WholeOf(a);
-        return _tables.IsNotNegative(b + b - a.Plus(1)) == true ? WholeOf(a - b) : NotAffine(operation, "the quotient is not known");
+        return _vectors.IsNotNegative(b + b - a.Plus(1)) == true ? WholeOf(a - b) : NotAffine(operation, "the quotient is not known");
     }
 
     /// <summary>Math.Min and Math.Max of whole numbers: one of the two, on each segment of an index.</summary>
@@ -163,7 +165,7 @@ internal sealed partial class BodyReader
         if (!arguments.Any(static argument => argument is IndexValue)) return null;
         if (function is not ("Min" or "Max") || AffineOf(arguments[0]) is not { } a || AffineOf(arguments[1]) is not { } b)
             return NotAffine(operation, "this function does not keep it a sum");
-        if (_tables.IsNotNegative(b - a) is not { } isOrdered) return NotAffine(operation, "which is larger is not known");
+        if (_vectors.IsNotNegative(b - a) is not { } isOrdered) return NotAffine(operation, "which is larger is not known");
         return WholeOf(isOrdered == (function == "Min") ? a : b);
     }
 

@@ -28,7 +28,7 @@ internal sealed partial class BodyReader
     private readonly INamedTypeSymbol _model;
     private readonly Compilation _compilation;
     private readonly IReadOnlyDictionary<ISymbol, int> _leaves;
-    private readonly VectorTables _tables;
+    private readonly VectorTables _vectors;
     private readonly ExpressionGraph _graph;
     private readonly Conditions _conditions;
     private readonly Problems _problems;
@@ -41,12 +41,12 @@ internal sealed partial class BodyReader
     private IOperation? _current;
 
     /// <param name="leaves">The nodes of the states and parameters.</param>
-    /// <param name="tables">Vectors and lengths.</param>
+    /// <param name="vectors">Vectors and lengths.</param>
     public BodyReader(
         INamedTypeSymbol model,
         Compilation compilation,
         IReadOnlyDictionary<ISymbol, int> leaves,
-        VectorTables tables,
+        VectorTables vectors,
         ExpressionGraph graph,
         Problems problems,
         CancellationToken cancellation)
@@ -54,7 +54,7 @@ internal sealed partial class BodyReader
         _model = model;
         _compilation = compilation;
         _leaves = leaves;
-        _tables = tables;
+        _vectors = vectors;
         _graph = graph;
         _conditions = new(graph);
         _problems = problems;

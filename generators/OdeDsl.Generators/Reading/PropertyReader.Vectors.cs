@@ -47,6 +47,8 @@ internal sealed partial class PropertyReader
         _ => false,
     };
 
+    private static string VectorTypeName(ITypeSymbol type) => type is IArrayTypeSymbol { Rank: 2 } ? "double[,]" : type.ToDisplayString();
+
     private void ReadVector(IPropertySymbol property, AttributeData? state, AttributeData? parameter, AttributeData? angle)
     {
         string role = state is null ? Attributes.Parameter : Attributes.State;
@@ -119,7 +121,7 @@ internal sealed partial class PropertyReader
         if (LengthNames.Any(name => IsGiven(vector.Attribute, name) != wanted.Contains(name)))
         {
             string what = rank == 1 ? "Length" : "Rows and Columns";
-            problems.Report(Descriptors.LengthMissing, place, vector.Property.Name, what, vector.Symbol.Type.ToDisplayString());
+            problems.Report(Descriptors.LengthMissing, place, vector.Property.Name, what, vector.Property.Type);
             return null;
         }
 

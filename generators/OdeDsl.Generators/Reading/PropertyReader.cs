@@ -156,7 +156,7 @@ internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation
         string[] accessors = (declaration.AccessorList?.Accessors ?? default)
             .Select(static accessor => string.Join(" ", accessor.Modifiers.Append(accessor.Keyword).Select(static token => token.Text)))
             .ToArray();
-        return new(property.Name, Summaries.Of(property, cancellation), modifiers, new(accessors)) { Type = property.Type.ToDisplayString() };
+        return new(property.Name, Summaries.Of(property, cancellation), modifiers, new(accessors)) { Type = VectorTypeName(property.Type) };
     }
 
     private static string TypeName(IPropertySymbol property) =>

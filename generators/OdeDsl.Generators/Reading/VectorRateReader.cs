@@ -85,7 +85,7 @@ internal sealed class VectorRateReader(
             Affine difference = first.Indices[i] - second.Indices[i];
             // Elements inside a loop are added up where they meet others.
             if (difference.Terms.Any(term => tables.IsLoopIndex(term.Symbol))) return true;
-            if (tables.Sign(difference) is not { } sign) return false;
+            if (tables.SignForLongVectors(difference) is not { } sign) return false;
             if (sign != 0) return true;
         }
 

@@ -108,6 +108,14 @@ internal sealed class VectorTables
         return Split(split.Symbol, zero) & Split(split.Symbol, zero.Plus(1)) ? 1 : null;
     }
 
+    /// <summary>The sign of a form; lengths get larger least values if that decides it.</summary>
+    public int? SignForLongVectors(Affine form)
+    {
+        if (Sign(form) is { } sign) return sign;
+        if (Require(form.Plus(-1))) return 1;
+        return Require(form.Times(-1).Plus(-1)) ? -1 : null;
+    }
+
     /// <summary>Demands that a form of lengths is not negative: a length gets a larger least value.</summary>
     /// <returns>Whether that could be done.</returns>
     public bool Require(Affine form)

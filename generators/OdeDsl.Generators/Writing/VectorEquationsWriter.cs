@@ -198,8 +198,13 @@ internal sealed class VectorEquationsWriter(SourceWriter writer, VectorEquations
         Dictionary<RowGroup, JacobianRow> rows = Rows(groups, element);
         LoopBodyWriter body = Open(method, LockedPoint, "jacobian", isFree: false, Results(rows));
         string width = isParameter ? body.Layout.ParameterCount : body.Layout.StateCount;
-        string columns = body.Claim("width");
-        writer.Line($"int {columns} = {width};");
+        string columns = width;
+        if (!int.TryParse(width, out int _))
+        {
+            columns = body.Claim("width");
+            writer.Line($"int {columns} = {width};");
+        }
+
         string height = areRates ? body.Layout.StateCount : body.SwitchStart(groups.Count);
         writer.Line($"jacobian = jacobian[..{Range(VectorLayout.Times(height, columns))}];");
         writer.Line("jacobian.Clear();");

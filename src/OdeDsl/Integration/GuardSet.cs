@@ -1,4 +1,3 @@
-using System.Collections.Immutable;
 using OdeDsl.Modeling;
 
 namespace OdeDsl.Integration;
@@ -14,7 +13,7 @@ internal sealed class GuardSet
     private readonly DynamicSystem system;
     private readonly double[] regime;
     private readonly SlidingSurface sliding;
-    private readonly ImmutableArray<SwitchDescription> switches;
+    private readonly DescriptionList<SwitchDescription> switches;
     private readonly SwitchKind[] kinds;
     private readonly int[] wholeNumbers;
     private readonly double[] functions;

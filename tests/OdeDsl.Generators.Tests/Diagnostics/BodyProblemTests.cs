@@ -6,7 +6,6 @@ namespace OdeDsl.Generators.Tests.Diagnostics;
 public sealed class BodyProblemTests
 {
     [Theory]
-    [InlineData("double s = 0; [|for|] (int i = 0; i < 3; i++) s += X; return s;")]
     [InlineData("double s = 0; [|foreach|] (double v in new[] { 1.0 }) s += v; return s;")]
     [InlineData("double s = X; [|while|] (s > 1) s /= 2; return s;")]
     [InlineData("double s = X; [|do|] s /= 2; while (s > 1); return s;")]
@@ -22,6 +21,16 @@ public sealed class BodyProblemTests
     [InlineData("[|fixed|] (char* c = \"a\") return X; } unsafe double Other() { return 1;")]
     [InlineData("[|yield return X;|] } double Other() { return 1;")]
     public void A_statement_that_is_not_supported(string statements) => Marked.ExpectOne("ODE0060", Marked.Body(statements));
+
+    [Theory]
+    [InlineData("double s = 0; [|for|] (int i = 3; i > 0; i--) s += X; return s;")]
+    [InlineData("double s = 0; [|for|] (double d = 0; d < 3; d++) s += X; return s;")]
+    [InlineData("double s = 0; [|for|] (int i = 0; i < 3; i += 2) s += X; return s;")]
+    [InlineData("double s = 0; [|for|] (int i = 0; i < 3; i++) { s += X; i++; } return s;")]
+    [InlineData("double s = 0; [|for|] (int i = 0; i < (X > 0 ? 3 : 4); i++) s += X; return s;")]
+    [InlineData("[|for|] (int i = 0; i < 3; i++) { if (X > i) return 1; } return 2;")]
+    [InlineData("double s = 0; [|for|] (; ; ) s += X;")]
+    public void A_loop_that_is_not_supported(string statements) => Marked.ExpectOne("ODE0157", Marked.Body(statements));
 
     [Theory]
     [InlineData("[|new double[] { 1, 2 }[0]|]")]
