@@ -29,8 +29,9 @@ internal sealed class VectorEquationsWriter(SourceWriter writer, VectorEquations
         if (switches.Count > 0) Vector("Rates", LockedPoint, "rates", rates, [.. rates.Select(static group => group.Locked)]);
         else WriteUnlockedRates();
         Matrix("StateJacobian", rates, Operator.StateElement);
-        StateJacobianValues();
+        MatrixValues("StateJacobianValues", Operator.StateElement);
         Matrix("ParameterJacobian", rates, Operator.ParameterElement);
+        MatrixValues("ParameterJacobianValues", Operator.ParameterElement);
         Vector("TimeDerivative", LockedPoint, "derivative", rates, [.. rates.Select(group => equations.ByTime(group, cancellationToken))]);
         Vector(
             "JacobianVectorProduct", [.. LockedPoint, "direction"], "product", rates, equations.AlongDirection(rates, cancellationToken));
@@ -118,16 +119,18 @@ internal sealed class VectorEquationsWriter(SourceWriter writer, VectorEquations
         writer.Close();
     }
 
-    private void StateJacobianValues()
+    /// <summary>Only the entries of a matrix that are not zero everywhere, row by row.</summary>
+    private void MatrixValues(string method, Operator element)
     {
-        Dictionary<RowGroup, JacobianRow> rows = Rows(equations.Rates, Operator.StateElement);
-        LoopBodyWriter body = Open("StateJacobianValues", LockedPoint, "values", isFree: false, Results(rows));
+        bool isParameter = element == Operator.ParameterElement;
+        Dictionary<RowGroup, JacobianRow> rows = Rows(equations.Rates, element);
+        LoopBodyWriter body = Open(method, LockedPoint, "values", isFree: false, Results(rows));
         string place = body.Claim(Place);
         writer.Line($"int {place} = 0;");
         body.WriteRows(equations.Rates, group => NodesOf(rows[group]), group =>
         {
             JacobianRow row = rows[group];
-            if (row.Vectors.Any(static vector => vector.IsDense)) WriteWideRow(body, row, place);
+            if (row.Vectors.Any(static vector => vector.IsDense)) WriteWideRow(body, row, place, isParameter);
             else WriteNarrowRow(body, row, place);
         });
         writer.Close();
@@ -142,10 +145,10 @@ internal sealed class VectorEquationsWriter(SourceWriter writer, VectorEquations
     }
 
     /// <summary>A row that sums over vectors: entries are added up in place.</summary>
-    private void WriteWideRow(LoopBodyWriter body, JacobianRow row, string place)
+    private void WriteWideRow(LoopBodyWriter body, JacobianRow row, string place, bool isParameter)
     {
         string name = body.Claim("row");
-        string count = VectorDescriptionWriter.EntryCount(body.Layout, row, isParameter: false);
+        string count = VectorDescriptionWriter.EntryCount(body.Layout, row, isParameter);
         writer.Line($"global::System.Span<double> {name} = values.Slice({place}, {count});");
         writer.Line($"{name}.Clear();");
         for (int i = 0; i < row.Scalars.Count; i++) writer.Line($"{name}[{Literals.Integer(i)}] = {body.Text(row.Scalars[i].Node)};");
@@ -158,10 +161,10 @@ internal sealed class VectorEquationsWriter(SourceWriter writer, VectorEquations
                 string at = start;
                 int position = i;
                 WriteEntry(body, entry, () =>
-                    $"{name}[{VectorLayout.Plus(at, vector.IsDense ? body.Offset(entry, isParameter: false) : Literals.Integer(position))}]");
+                    $"{name}[{VectorLayout.Plus(at, vector.IsDense ? body.Offset(entry, isParameter) : Literals.Integer(position))}]");
             }
 
-            string length = vector.IsDense ? body.Layout.Count(body.Layout.LengthsOf(false, vector.Vector)) : Literals.Integer(vector.Entries.Count);
+            string length = vector.IsDense ? body.Layout.Count(body.Layout.LengthsOf(isParameter, vector.Vector)) : Literals.Integer(vector.Entries.Count);
             start = VectorLayout.Plus(start, length);
         }
 

@@ -1,3 +1,4 @@
+using System.Globalization;
 using System.Runtime.CompilerServices;
 using OdeDsl.Modeling;
 
@@ -76,8 +77,11 @@ public sealed class Trajectory
         }
     }
 
-    /// <summary>A state or observable by its property, as in <c>run[tank.Level]</c>: the property's name counts, not its value.</summary>
-    /// <param name="member">The property.</param>
+    /// <summary>
+    /// A state or observable by its property, as in <c>run[tank.Level]</c> or <c>run[pipe.Temperature[3]]</c>: the property's name counts, not its
+    /// value.
+    /// </summary>
+    /// <param name="member">The property, or an element of a vector with its index as a number.</param>
     /// <param name="expression">Supplied by the compiler: the property's text.</param>
     /// <returns>Its course.</returns>
     /// <exception cref="KeyNotFoundException">The text does not end in the name of a state or observable.</exception>
@@ -87,11 +91,41 @@ public sealed class Trajectory
         get
         {
             _ = member;
-            string path = expression.StartsWith("new ", StringComparison.Ordinal) ? expression[4..] : expression;
-            if (!path.All(static letter => char.IsLetterOrDigit(letter) || letter is '.' or '_' or '@' or '(' or ')' or '?' or '!'))
-                throw new ArgumentException($"Name one state or observable, as in run[model.Level]; '{expression}' computes something.", nameof(member));
-            return this[expression[(expression.LastIndexOf('.') + 1)..].TrimStart('@').TrimEnd('(', ')')];
+            int bracket = expression.EndsWith(']') ? expression.IndexOf('[', StringComparison.Ordinal) : expression.Length;
+            string index = bracket < 0 ? expression : expression[bracket..];
+            if (!index.All(static letter => char.IsAsciiDigit(letter) || letter is '[' or ']' or ',' or ' '))
+                throw new ArgumentException($"Name an element by the number of its place, or as in run[model.Vector, k]; '{expression}' computes its index.", nameof(member));
+            return this[NameIn(expression[..bracket]) + index];
         }
+    }
+
+    /// <summary>An element of a vector-valued state by its property, as in <c>run[pipe.Temperature, k]</c>.</summary>
+    /// <param name="vector">The property.</param>
+    /// <param name="index">The element's index.</param>
+    /// <param name="expression">Supplied by the compiler: the property's text.</param>
+    /// <returns>Its course.</returns>
+    /// <exception cref="KeyNotFoundException">The text does not end in the name of a vector, or it has no such element.</exception>
+    /// <exception cref="ArgumentException">The text is an expression that computes something.</exception>
+    public Series this[double[] vector, int index, [CallerArgumentExpression(nameof(vector))] string expression = ""] =>
+        this[string.Create(CultureInfo.InvariantCulture, $"{NameIn(expression)}[{index}]")];
+
+    /// <summary>An element of a vector-valued state with rows and columns, as in <c>run[plate.Temperature, i, j]</c>.</summary>
+    /// <param name="vector">The property.</param>
+    /// <param name="row">The element's row.</param>
+    /// <param name="column">The element's column.</param>
+    /// <param name="expression">Supplied by the compiler: the property's text.</param>
+    /// <returns>Its course.</returns>
+    /// <exception cref="KeyNotFoundException">The text does not end in the name of a vector, or it has no such element.</exception>
+    /// <exception cref="ArgumentException">The text is an expression that computes something.</exception>
+    public Series this[double[,] vector, int row, int column, [CallerArgumentExpression(nameof(vector))] string expression = ""] =>
+        this[string.Create(CultureInfo.InvariantCulture, $"{NameIn(expression)}[{row}, {column}]")];
+
+    private static string NameIn(string expression)
+    {
+        string path = expression.StartsWith("new ", StringComparison.Ordinal) ? expression[4..] : expression;
+        if (!path.All(static letter => char.IsLetterOrDigit(letter) || letter is '.' or '_' or '@' or '(' or ')' or '?' or '!'))
+            throw new ArgumentException($"Name one state or observable, as in run[model.Level]; '{expression}' computes something.", nameof(expression));
+        return expression[(expression.LastIndexOf('.') + 1)..].TrimStart('@').TrimEnd('(', ')');
     }
 
     /// <summary>The state at a time.</summary>
