@@ -9,6 +9,10 @@ namespace Tarnwater.Tests;
 
 public class PipeRunTests
 {
+    private static readonly int[] CellsAtRest = [40, 80, 160];
+
+    private static readonly int[] CellsOfFront = [50, 100, 200];
+
     /// <summary>Rows of the central-difference matrix: two at the ends, three between.</summary>
     private static int EntriesOf(int cells) => 3 * cells - 2;
 
@@ -50,7 +54,7 @@ public class PipeRunTests
     [InlineData(3000)]
     public void The_rest_approaches_the_closed_form_with_the_second_order_in_the_cell(double length)
     {
-        double[] errors = [.. new[] { 40, 80, 160 }.Select(cells =>
+        double[] errors = [.. CellsAtRest.Select(cells =>
         {
             PipeRun pipe = new() { Cells = cells, Length = length, Mixing = 40 };
             double[] rest = Assert.Single(pipe.FindEquilibria().Equilibria).State.ToArray();
@@ -77,7 +81,7 @@ public class PipeRunTests
     public void A_hot_front_travels_as_the_closed_form_says(double length)
     {
         double time = 0.4 * length / 0.8;
-        double[] errors = [.. new[] { 50, 100, 200 }.Select(cells =>
+        double[] errors = [.. CellsOfFront.Select(cells =>
         {
             PipeRun pipe = new() { Cells = cells, Length = length, LossRate = 0, Mixing = 12 };
             double[] final = pipe.Simulate(time).FinalState;

@@ -13,13 +13,23 @@ internal sealed partial class BodyReader
     /// <summary>Passes of a loop up to which it is written out.</summary>
     private const int LongestUnrolled = 16;
 
+    /// <summary>The same in a model without vectors, where every equation is written out.</summary>
+    private const int LongestInFlatModel = 1000;
+
     private void Loop(IForLoopOperation loop)
     {
         if (Header(loop) is not { } header) return;
         Affine passes = header.End - header.First;
-        if (passes is { IsConstant: true, Constant: <= LongestUnrolled })
+        bool isFlat = _vectors.Vectors.Count + _vectors.Lengths.Count == 0;
+        if (passes.IsConstant && passes.Constant <= (isFlat ? LongestInFlatModel : LongestUnrolled))
         {
             for (long k = 0; k < passes.Constant; k++) Pass(loop, header.Index, header.First.Plus(k));
+            return;
+        }
+
+        if (isFlat)
+        {
+            Problem(Descriptors.LoopNotSupported, Unreadable.Place(loop), "in a model without vectors it has too many passes");
             return;
         }
 

@@ -40,7 +40,8 @@ internal sealed class EquationReader(
         Location place = Attributes.Place(attribute, member);
         string? name = Attributes.First<string>(attribute);
         DeclaredVector? vector = properties.VectorStates.FirstOrDefault(state => state.Property.Name == name);
-        bool readable = IsReadable(member, Attributes.Rate, vector);
+        bool isOfFailed = name is not null && properties.FailedStates.Contains(name);
+        bool readable = IsReadable(member, Attributes.Rate, vector, isOfFailed);
         if (name is null)
         {
             problems.Report(Descriptors.AttributeNotReadable, place, Attributes.Rate, member.Name);
@@ -68,7 +69,7 @@ internal sealed class EquationReader(
             Observables.Add((member, unit ?? ""));
     }
 
-    private bool IsReadable(ISymbol member, string role, DeclaredVector? vector)
+    private bool IsReadable(ISymbol member, string role, DeclaredVector? vector, bool isOfFailed = false)
     {
         Location place = member.Locations[0];
         ITypeSymbol? type = member switch
@@ -83,7 +84,7 @@ internal sealed class EquationReader(
             problems.Report(Descriptors.EquationNotDouble, TypePlace(member) ?? place, role, member.Name, type?.ToDisplayString() ?? "");
         else if (vector is not null && !TakesIndices(member, vector.Lengths.Count))
             problems.Report(Descriptors.RateIndices, place, member.Name, vector.Property.Name, vector.Lengths.Count == 1 ? "one int" : "two ints");
-        else if (vector is null && !TakesOnlyTime(member)) problems.Report(Descriptors.EquationArguments, place, role, member.Name);
+        else if (vector is null && !isOfFailed && !TakesOnlyTime(member)) problems.Report(Descriptors.EquationArguments, place, role, member.Name);
         else if (Bodies.Find(member, compilation, cancellation) is null)
             problems.Report(Descriptors.EquationWithoutBody, place, role, member.Name);
         else if (Overriding.CanBeOverridden(member, model)) problems.Report(Descriptors.MemberOverridable, place, member.Name, model.Name);

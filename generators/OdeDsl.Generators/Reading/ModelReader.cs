@@ -85,17 +85,24 @@ internal sealed class ModelReader(
 
         BodyReader bodies = new(model, compilation, leaves, properties.Tables, graph, _problems, cancellation);
         ISymbol?[] rates = properties.States.Select(state => equations.RateOf(state.Property.Name)).ToArray();
-        SegmentDefinition[][] segments = SegmentsOf(properties, equations, bodies, graph);
+        VectorRateReader vectorRates = new(bodies, properties.Tables, graph, _problems, cancellation);
+        SegmentDefinition[][] segments = [.. properties.VectorStates.Select(state =>
+            equations.RateOf(state.Property.Name) is { } rate ? vectorRates.Read(state, rate) : WithoutRate(state))];
         int?[] results = rates.Concat(equations.Observables.Select(static observable => observable.Member))
             .Select(member => member is null ? null : bodies.Read(member))
             .Concat(segments.SelectMany(static all => all).Select(static segment => segment.Rate < 0 ? (int?)null : segment.Rate))
             .ToArray();
         RequireLengths(properties);
+        foreach ((ISymbol? member, int? node) in rates.Concat(equations.Observables.Select(static observable => (ISymbol?)observable.Member)).Zip(results, static (member, node) => (member, node)))
+        {
+            if (member is not null && node is { } equation) vectorRates.RequireFixedSwitches(member, equation);
+        }
+
         bool isSound = _problems.Found.Count == 0 && results.All(static result => result is not null);
         PrunedGraph pruned = isSound
             ? PrunedGraph.Of(graph, results.Select(static result => result!.Value).ToArray())
             : PrunedGraph.NotANumber(results.Length);
-        Queue<int> vectorRates = new(pruned.Results.Skip(rates.Length + equations.Observables.Count));
+        Queue<int> vectorNodes = new(pruned.Results.Skip(rates.Length + equations.Observables.Count));
 
         return new(
             chain,
@@ -111,7 +118,7 @@ internal sealed class ModelReader(
             TimeUnit = Attributes.Find(model, "OdeModel") is { } mark ? Attributes.Named(mark, "TimeUnit", "") ?? "" : "",
             Vectors = properties.HasVectors
                 ? properties.Tables.Finish(
-                    properties.VectorStates.Select((state, i) => Define(state, equations.RateOf(state.Property.Name), segments[i], vectorRates)),
+                    properties.VectorStates.Select((state, i) => Define(state, equations.RateOf(state.Property.Name), segments[i], vectorNodes)),
                     properties.VectorParameters.Select(Define))
                 : null,
         };
@@ -129,13 +136,6 @@ internal sealed class ModelReader(
                 Descriptors.LengthTooShort, parameter.Symbol.Locations[0], length.Name,
                 value.ToString("R", System.Globalization.CultureInfo.InvariantCulture), length.Minimum.ToString(System.Globalization.CultureInfo.InvariantCulture));
         }
-    }
-
-    private SegmentDefinition[][] SegmentsOf(PropertyReader properties, EquationReader equations, BodyReader bodies, ExpressionGraph graph)
-    {
-        VectorRateReader reader = new(bodies, properties.Tables, graph, _problems, cancellation);
-        return [.. properties.VectorStates.Select(state =>
-            equations.RateOf(state.Property.Name) is { } rate ? reader.Read(state, rate) : WithoutRate(state))];
     }
 
     private static SegmentDefinition[] WithoutRate(DeclaredVector state) =>

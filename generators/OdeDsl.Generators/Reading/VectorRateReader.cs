@@ -47,7 +47,12 @@ internal sealed class VectorRateReader(
     private SegmentDefinition Read(ISymbol member, IndexRange[] ranges)
     {
         int? rate = bodies.Read(member, [.. ranges.Select(SplitSet.IndexOn)]);
-        if (rate is { } node) RequireOrder(member, node);
+        if (rate is { } node)
+        {
+            RequireOrder(member, node);
+            RequireFixedSwitches(member, node);
+        }
+
         return new(new(ranges), rate ?? -1);
     }
 
@@ -75,6 +80,26 @@ internal sealed class VectorRateReader(
                     return;
                 }
             }
+        }
+    }
+
+    /// <summary>
+    /// A condition on an element inside a loop is one switching function for each pass; their number must not depend on an index outside.
+    /// </summary>
+    public void RequireFixedSwitches(ISymbol member, int equation)
+    {
+        foreach (int condition in Reach.Of(graph, [equation]).Where(index => MathFunctions.HasKink(graph[index].Operator)
+            || graph[index].Operator is Operator.Remainder or Operator.TableValue or (>= Operator.Less and <= Operator.GreaterOrEqual)))
+        {
+            bool isOpen = Reach.Of(graph, [condition]).Select(index => graph[index])
+                .Where(static node => node.Operator == Operator.StateElement)
+                .SelectMany(node => tables.Access(node.Index).Indices)
+                .SelectMany(static index => index.Terms)
+                .Any(term => tables.HasOpenRange(term.Symbol));
+            if (!isOpen) continue;
+            problems.Report(
+                Descriptors.LoopNotSupported, member.Locations[0], "its range depends on an index, and a condition in it on the elements; let it run over the whole vector");
+            return;
         }
     }
 

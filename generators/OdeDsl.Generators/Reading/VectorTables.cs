@@ -56,6 +56,10 @@ internal sealed class VectorTables
     /// <summary>Whether a symbol is the index of a loop that adds up.</summary>
     public bool IsLoopIndex(int symbol) => _loopIndices.Contains(symbol);
 
+    /// <summary>Whether the range of an index depends on another one.</summary>
+    public bool HasOpenRange(int symbol) => !_symbols[symbol].IsLength
+        && _symbols[symbol].Lower.Terms.Concat(_symbols[symbol].Upper.Terms).Any(term => !_symbols[term.Symbol].IsLength);
+
     public int Intern(AccessDefinition access) => _accesses.IndexOf(access);
 
     public int Intern(Affine number) => _numbers.IndexOf(number);

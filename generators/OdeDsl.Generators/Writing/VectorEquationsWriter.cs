@@ -126,7 +126,7 @@ internal sealed class VectorEquationsWriter(SourceWriter writer, VectorEquations
         Dictionary<RowGroup, JacobianRow> rows = Rows(equations.Rates, element);
         LoopBodyWriter body = Open(method, LockedPoint, "values", isFree: false, Results(rows));
         string place = body.Claim(Place);
-        writer.Line($"int {place} = 0;");
+        if (rows.Values.Any(HasEntries)) writer.Line($"int {place} = 0;");
         body.WriteRows(equations.Rates, group => NodesOf(rows[group]), group =>
         {
             JacobianRow row = rows[group];
@@ -202,7 +202,8 @@ internal sealed class VectorEquationsWriter(SourceWriter writer, VectorEquations
         LoopBodyWriter body = Open(method, LockedPoint, "jacobian", isFree: false, Results(rows));
         string width = isParameter ? body.Layout.ParameterCount : body.Layout.StateCount;
         string columns = width;
-        if (!int.TryParse(width, out int _))
+        RowGroup[] written = [.. groups.Where(group => HasEntries(rows[group]))];
+        if (written.Length > 0 && !int.TryParse(width, out int _))
         {
             columns = body.Claim("width");
             writer.Line($"int {columns} = {width};");
@@ -211,7 +212,7 @@ internal sealed class VectorEquationsWriter(SourceWriter writer, VectorEquations
         string height = areRates ? body.Layout.StateCount : body.SwitchStart(groups.Count);
         writer.Line($"jacobian = jacobian[..{Range(VectorLayout.Times(height, columns))}];");
         writer.Line("jacobian.Clear();");
-        body.WriteRows([.. groups.Where(group => rows[group].Scalars.Count + rows[group].Vectors.Count > 0)], group => NodesOf(rows[group]), group =>
+        body.WriteRows(written, group => NodesOf(rows[group]), group =>
         {
             string row = body.Claim("row");
             string place = areRates ? body.RowPlace(group) : body.SwitchPlace(group);
@@ -222,6 +223,8 @@ internal sealed class VectorEquationsWriter(SourceWriter writer, VectorEquations
         });
         writer.Close();
     }
+
+    private static bool HasEntries(JacobianRow row) => row.Scalars.Count + row.Vectors.Count > 0;
 
     private Dictionary<RowGroup, JacobianRow> Rows(IReadOnlyList<RowGroup> groups, Operator element) =>
         groups.ToDictionary(static group => group, group => equations.Row(group, element, cancellationToken));

@@ -30,6 +30,7 @@ public sealed class BodyProblemTests
     [InlineData("double s = 0; [|for|] (int i = 0; i < (X > 0 ? 3 : 4); i++) s += X; return s;")]
     [InlineData("[|for|] (int i = 0; i < 3; i++) { if (X > i) return 1; } return 2;")]
     [InlineData("double s = 0; [|for|] (; ; ) s += X;")]
+    [InlineData("double s = 0; [|for|] (int i = 0; i < 100000; i++) s += X; return s;")]
     public void A_loop_that_is_not_supported(string statements) => Marked.ExpectOne("ODE0157", Marked.Body(statements));
 
     [Theory]

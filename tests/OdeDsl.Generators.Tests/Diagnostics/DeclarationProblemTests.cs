@@ -71,7 +71,7 @@ public sealed class DeclarationProblemTests
     [InlineData("ODE0020", "[Parameter(1)] public double [|Z|] { get; set; }")]
     [InlineData("ODE0020", "[State] public double [|Z|] => 1;")]
     [InlineData("ODE0021", "[State] public partial [|float|] Z { get; set; }")]
-    [InlineData("ODE0021", "[Parameter(1)] public partial [|int|] Z { get; set; }")]
+    [InlineData("ODE0021", "[Parameter(1)] public partial [|long|] Z { get; set; }")]
     [InlineData("ODE0021", "[State] public partial [|double?|] Z { get; set; }")]
     [InlineData("ODE0021", "[State] public partial [|ref double|] Z { get; }")]
     [InlineData("ODE0022", "[State] public static partial double [|Z|] { get; set; }")]

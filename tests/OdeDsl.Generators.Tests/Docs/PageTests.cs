@@ -9,6 +9,7 @@ public sealed partial class PageTests
 {
     [Theory]
     [InlineData("tables-inputs-events.md")]
+    [InlineData("vectors.md")]
     public void The_code_of_a_page_compiles_without_a_warning(string page)
     {
         string text = File.ReadAllText(Path.Combine(Docs(), page)).ReplaceLineEndings("\n");
