@@ -16,6 +16,9 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
     /// <summary>Entries up to which a dense Jacobian is printed on its own, about the size of a method.</summary>
     private const int LargestDenseEntryCount = 400;
 
+    /// <summary>Operations up to which an elimination is printed; beyond, loops over vectors win (benchmarks/README.md).</summary>
+    private const int LargestEliminationCount = 1000;
+
     private readonly SwitchTexts _texts = new(model, equations);
 
     private readonly BodyWriter _body = new(
@@ -49,6 +52,8 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
         Member(Observables());
         WriteSwitching();
         WriteGenericForms();
+        if (Elimination.Of(equations.StateJacobian, LargestEliminationCount, cancellationToken) is { } elimination)
+            new EliminationWriter(writer, model, elimination).Write();
         writer.Close();
     }
 

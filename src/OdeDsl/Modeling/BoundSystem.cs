@@ -1,7 +1,7 @@
 namespace OdeDsl.Modeling;
 
 /// <summary>The one implementation of <see cref="DynamicSystem"/>: forwards to the static members of the equations.</summary>
-internal sealed class BoundSystem<TSystem>(ModelDescription description, double[] parameters, double[] initialState)
+internal sealed partial class BoundSystem<TSystem>(ModelDescription description, double[] parameters, double[] initialState)
     : DynamicSystem(description, parameters, initialState)
     where TSystem : struct, IOdeSystem
 {

@@ -8,7 +8,7 @@ namespace OdeDsl.Modeling;
 /// Evaluations forward to <see cref="IOdeSystem"/> with this instance's parameters; see there for sizes, overlap and what may throw.
 /// The forms with a regime take every condition on the side that the regime names.
 /// </remarks>
-public abstract class DynamicSystem
+public abstract partial class DynamicSystem
 {
     private readonly double[] parameters;
     private readonly double[] initialState;

@@ -1,3 +1,4 @@
+using OdeDsl.LinearAlgebra;
 using OdeDsl.Scalars;
 
 namespace OdeDsl.Modeling;
@@ -195,4 +196,32 @@ public interface IOdeSystem
     static virtual void SwitchingFunctionsOver<TScalar>(
         TScalar time, ReadOnlySpan<TScalar> state, ReadOnlySpan<TScalar> parameters, ReadOnlySpan<double> regime, Span<TScalar> values)
         where TScalar : unmanaged, IScalar<TScalar> => throw GenericForms.Missing(nameof(SwitchingFunctionsOver));
+
+    /// <summary>
+    /// The layout of the elimination of a I − b J by straight-line code without pivoting; <see langword="null"/> where there is none.
+    /// Generated for small sparse Jacobians.
+    /// </summary>
+    static virtual UnrolledLayout? Unrolled => null;
+
+    /// <summary>
+    /// Eliminates in place. The factors are only good where they did not grow much over the matrix.
+    /// </summary>
+    /// <typeparam name="TElement">Real or complex entries.</typeparam>
+    /// <param name="entries">The entries of the matrix by <see cref="Unrolled"/>, zero where they will appear; replaced by the factors.</param>
+    /// <param name="growth">
+    /// 2 n numbers. The first n must be zero and receive the row sums of |L| |U|; the others those of |U|.
+    /// </param>
+    /// <exception cref="NotSupportedException"><see cref="Unrolled"/> is <see langword="null"/>.</exception>
+    static virtual void Eliminate<TElement>(Span<TElement> entries, Span<double> growth)
+        where TElement : struct, IMatrixElement<TElement> =>
+        throw new NotSupportedException("These equations have no unrolled elimination; ask Unrolled first.");
+
+    /// <summary>Solves with the factors.</summary>
+    /// <typeparam name="TElement">Real or complex entries.</typeparam>
+    /// <param name="factors">What <see cref="Eliminate"/> left.</param>
+    /// <param name="vector">The right-hand side, n values; replaced by the solution.</param>
+    /// <exception cref="NotSupportedException"><see cref="Unrolled"/> is <see langword="null"/>.</exception>
+    static virtual void Substitute<TElement>(ReadOnlySpan<TElement> factors, Span<TElement> vector)
+        where TElement : struct, IMatrixElement<TElement> =>
+        throw new NotSupportedException("These equations have no unrolled elimination; ask Unrolled first.");
 }
