@@ -1,6 +1,5 @@
 using System.Diagnostics;
 using System.Globalization;
-using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
 using OdeDsl.Modeling;
 using OdeDsl.Tests.Problems;
@@ -110,26 +109,22 @@ internal static class CompareWithC
     private static Repeat Function(nint library, string name) =>
         Marshal.GetDelegateForFunctionPointer<Repeat>(NativeLibrary.GetExport(library, name));
 
-    /// <summary>The emitted members in a loop, each call really made.</summary>
+    /// <summary>The emitted members in a loop, each call really made: through a pointer, as in C.</summary>
     private static class Emitted<TSystem>
         where TSystem : struct, IOdeSystem
     {
         private static readonly int Count = TSystem.Description.States.Length;
 
-        public static void Rates(int problem, int calls, double[] state, double[] parameters, double[] result)
+        public static unsafe void Rates(int problem, int calls, double[] state, double[] parameters, double[] result)
         {
-            for (int i = 0; i < calls; i++) Once(state, parameters, result);
-
-            [MethodImpl(MethodImplOptions.NoInlining)]
-            static void Once(double[] state, double[] parameters, double[] result) => TSystem.Rates(0, state, parameters, result);
+            delegate*<double, ReadOnlySpan<double>, ReadOnlySpan<double>, Span<double>, void> rates = &TSystem.Rates;
+            for (int i = 0; i < calls; i++) rates(0, state, parameters, result);
         }
 
-        public static void Jacobian(int problem, int calls, double[] state, double[] parameters, double[] result)
+        public static unsafe void Jacobian(int problem, int calls, double[] state, double[] parameters, double[] result)
         {
-            for (int i = 0; i < calls; i++) Once(state, parameters, result);
-
-            [MethodImpl(MethodImplOptions.NoInlining)]
-            static void Once(double[] state, double[] parameters, double[] result) => TSystem.StateJacobian(0, state, parameters, [], result);
+            delegate*<double, ReadOnlySpan<double>, ReadOnlySpan<double>, ReadOnlySpan<double>, Span<double>, void> jacobian = &TSystem.StateJacobian;
+            for (int i = 0; i < calls; i++) jacobian(0, state, parameters, [], result);
         }
 
         public static void Differences(int problem, int calls, double[] state, double[] parameters, double[] result)

@@ -29,6 +29,18 @@ public sealed class CachingTests
         Assert.True(output == OutputReasons(result).Single(), $"{edit}: output is {OutputReasons(result).Single()}");
     }
 
+    [Theory]
+    [InlineData(true)]
+    [InlineData(false)]
+    public void An_edit_inside_one_model_writes_that_model_only(bool sameFile)
+    {
+        string first = Marked.Equation("X + 0.5"), second = Marked.Equation("2 * X").Replace("class Model", "class Other", StringComparison.Ordinal);
+        string secondBody = second[second.IndexOf("[OdeModel]", StringComparison.Ordinal)..];
+        GeneratorRunResult result = Edit(sameFile ? [first + secondBody] : [first, second], 0, "0.5", "0.75");
+        IncrementalStepRunReason[] reasons = [.. OutputReasons(result).Order()];
+        Assert.Equal([IncrementalStepRunReason.Modified, IncrementalStepRunReason.Cached], reasons);
+    }
+
     [Fact]
     public void An_edit_that_moves_problems_only_leaves_the_text_alone()
     {
