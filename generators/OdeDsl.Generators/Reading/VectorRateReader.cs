@@ -88,15 +88,18 @@ internal sealed class VectorRateReader(
     /// </summary>
     public void RequireFixedSwitches(ISymbol member, int equation)
     {
-        foreach (int condition in Reach.Of(graph, [equation]).Where(index => MathFunctions.HasKink(graph[index].Operator)
-            || graph[index].Operator is Operator.Remainder or Operator.TableValue or (>= Operator.Less and <= Operator.GreaterOrEqual)))
+        Dictionary<int, HashSet<int>> open = [];
+        foreach (int index in Reach.Of(graph, [equation]))
         {
-            bool isOpen = Reach.Of(graph, [condition]).Select(index => graph[index])
-                .Where(static node => node.Operator == Operator.StateElement)
-                .SelectMany(node => tables.Access(node.Index).Indices)
-                .SelectMany(static index => index.Terms)
-                .Any(term => tables.HasOpenRange(term.Symbol));
-            if (!isOpen) continue;
+            Node node = graph[index];
+            HashSet<int> found = [.. node.Operands.SelectMany(operand => open[operand])];
+            if (node.Operator == Operator.StateElement)
+                found.UnionWith(tables.Access(node.Index).Indices.SelectMany(static form => form.Terms).Select(static term => term.Symbol).Where(tables.HasOpenRange));
+            if (node.Operator == Operator.Fold) found.Remove(node.Symbol);
+            open.Add(index, found);
+            bool isSwitch = MathFunctions.HasKink(node.Operator)
+                || node.Operator is Operator.Remainder or Operator.TableValue or (>= Operator.Less and <= Operator.GreaterOrEqual);
+            if (!isSwitch || found.Count == 0) continue;
             problems.Report(
                 Descriptors.LoopNotSupported, member.Locations[0], "its range depends on an index, and a condition in it on the elements; let it run over the whole vector");
             return;
