@@ -22,7 +22,7 @@ public sealed class AddRateFix : ModelCodeFix
     {
         if (place.FirstAncestorOrSelf<PropertyDeclarationSyntax>() is not { Parent: TypeDeclarationSyntax type } state || state.Identifier.IsMissing) return null;
         string rate = FreeName(type, state.Identifier.ValueText + "Rate");
-        string arguments = IsNumber(state.Type) ? "" : "(int i)";
+        string arguments = Arguments(state.Type);
         string text = $"[Rate(nameof({state.Identifier.Text}))] private double {rate}{arguments} => double.NaN;";
         if (SyntaxFactory.ParseMemberDeclaration(text) is not { } member) return null;
         SyntaxTrivia lineEnd = Trivia.LineEnd(type);
@@ -35,8 +35,9 @@ public sealed class AddRateFix : ModelCodeFix
         return new($"Add the rate '{rate}'", type, type.WithMembers(members));
     }
 
-    /// <summary>A vector's rate is computed element by element.</summary>
-    private static bool IsNumber(TypeSyntax type) => type is PredefinedTypeSyntax or IdentifierNameSyntax { Identifier.ValueText: "Double" };
+    /// <summary>The rate of a vector is computed element by element.</summary>
+    private static string Arguments(TypeSyntax type) => type is not ArrayTypeSyntax { RankSpecifiers: [{ Rank: var rank }, ..] } ? ""
+        : rank == 1 ? "(int i)" : "(int row, int column)";
 
     private static string FreeName(TypeDeclarationSyntax type, string wanted)
     {

@@ -81,6 +81,16 @@ public sealed class CodeFixTests
             Tank("    [State] public partial double V { get; set; } // Volume.\n    [Rate(nameof(V))] private double VRate2 => double.NaN;\n    private double VRate => 2 * V;\n    public double Use => VRate;\n")
         },
         {
+            "ODE0043",
+            Tank("    [State(Length = 3)] public partial double[] T { get; set; }\n"),
+            Tank("    [State(Length = 3)] public partial double[] T { get; set; }\n    [Rate(nameof(T))] private double TRate(int i) => double.NaN;\n")
+        },
+        {
+            "ODE0043",
+            Tank("    [State(Rows = 3, Columns = 4)] public partial double[,] T { get; set; }\n"),
+            Tank("    [State(Rows = 3, Columns = 4)] public partial double[,] T { get; set; }\n    [Rate(nameof(T))] private double TRate(int row, int column) => double.NaN;\n")
+        },
+        {
             "ODE0044",
             Tank("    [Observable] public int Twice() => 2;\n"),
             Tank("    [Observable] public double Twice() => 2;\n")
