@@ -91,6 +91,13 @@ internal static class Words
     {
         IntegrationMethod.DormandPrince54 => "Dormand–Prince 5(4), explicit",
         IntegrationMethod.RadauIIA5 => "Radau IIA of order 5, implicit",
+        IntegrationMethod.Tsitouras54 => "Tsitouras 5(4), explicit",
+        IntegrationMethod.DormandPrince853 => "Dormand–Prince 8(5,3), explicit",
+        IntegrationMethod.RadauIIA9 => "Radau IIA of order 9, implicit",
+        IntegrationMethod.RadauIIA13 => "Radau IIA of order 13, implicit",
+        IntegrationMethod.RadauIIA => "Radau IIA of variable order, implicit",
+        IntegrationMethod.Rodas4 => "Rodas4, linearly implicit",
+        IntegrationMethod.Rodas5P => "Rodas5P, linearly implicit",
         IntegrationMethod.Automatic => "automatic choice",
         _ => method.ToString(),
     };

@@ -47,12 +47,14 @@ internal sealed class ErrorNorm
     public double[] Absolute { get; }
 
     /// <summary>
-    /// The norm for a method of order 5 whose estimate is of order 3: an estimate passes at 0.1 r^(2/3), so that the error of the step
-    /// itself stays in proportion to the tolerance (the transformation of E. Hairer and G. Wanner's program for the Radau IIA method).
+    /// The norm for a method whose estimate is of lower order: an estimate passes at 0.1 r^((q + 1) / (p + 1)), so that the error of the step
+    /// itself stays in proportion to the tolerance (the transformation of E. Hairer and G. Wanner's programs for Radau IIA methods).
     /// </summary>
-    public ErrorNorm ForEstimateOfOrderThree()
+    /// <param name="estimateOrder">The order q of the estimate.</param>
+    /// <param name="order">The order p of the method.</param>
+    public ErrorNorm ForEstimateOfOrder(int estimateOrder, int order)
     {
-        double relative = 0.1 * Math.Pow(Relative, 2.0 / 3);
+        double relative = 0.1 * Math.Pow(Relative, (estimateOrder + 1.0) / (order + 1));
         double ratio = relative / Relative;
         return new ErrorNorm(relative, Array.ConvertAll(extents, extent => extent * ratio), dimension / stateCount - 1);
     }

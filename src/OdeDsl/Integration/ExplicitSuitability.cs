@@ -1,10 +1,13 @@
+using OdeDsl.LinearAlgebra;
+
 namespace OdeDsl.Integration;
 
 /// <summary>
 /// Tells when an implicit method's steps have become so small that an explicit one would be stable with them: |h| times a norm of the
 /// Jacobian, which bounds its eigenvalues, well inside the explicit method's stability region, many steps in a row.
 /// </summary>
-internal struct ExplicitSuitability
+/// <param name="size">The number of states.</param>
+internal struct ExplicitSuitability(int size)
 {
     /// <summary>The region of the explicit pair reaches to about 3.3 on the real axis and 1 on the imaginary one.</summary>
     private const double Limit = 1;
@@ -13,6 +16,7 @@ internal struct ExplicitSuitability
     private const int FirstCount = 10;
     private const int LargestCount = 1000;
 
+    private readonly double[] scales = new double[size];
     private double norm;
     private int count;
     private int required;
@@ -21,23 +25,10 @@ internal struct ExplicitSuitability
     public readonly bool IsSuitable => required > 0 && count >= required;
 
     /// <summary>Takes the norm of a Jacobian, in units of the tolerances.</summary>
-    public void Measure(double[] jacobian, double[] y, ErrorNorm tolerance, int n)
+    public void Measure(JacobianStructure structure, double[] jacobian, double[] y, ErrorNorm tolerance)
     {
-        double rows = 0, squares = 0;
-        for (int i = 0; i < n; i++)
-        {
-            double row = 0, scale = tolerance.Absolute[i] + tolerance.Relative * Math.Abs(y[i]);
-            for (int j = 0; j < n; j++)
-            {
-                double entry = Math.Abs(jacobian[i * n + j]) * (tolerance.Absolute[j] + tolerance.Relative * Math.Abs(y[j])) / scale;
-                row += entry;
-                squares += entry * entry;
-            }
-
-            rows = Math.Max(rows, row);
-        }
-
-        norm = Math.Min(rows, Math.Sqrt(squares));
+        for (int i = 0; i < structure.Size; i++) scales[i] = tolerance.Absolute[i] + tolerance.Relative * Math.Abs(y[i]);
+        norm = structure.Norm(jacobian, scales);
     }
 
     /// <summary>Observes an accepted step.</summary>

@@ -1,3 +1,5 @@
+using OdeDsl.LinearAlgebra;
+
 namespace OdeDsl.Integration;
 
 /// <summary>
@@ -12,15 +14,31 @@ internal interface IVectorField
     /// <summary>The size of a block: the number of states.</summary>
     int BlockSize { get; }
 
+    /// <summary>How the Jacobian is held at present; changes where the motion begins or ends to slide.</summary>
+    JacobianStructure Structure { get; }
+
+    /// <summary>The room that the Jacobian takes at most.</summary>
+    int LargestJacobian { get; }
+
+    /// <summary>Whether the rates depend on time by themselves.</summary>
+    bool DependsOnTime { get; }
+
     /// <summary>Computes f(t, y).</summary>
     void Rates(double time, ReadOnlySpan<double> y, Span<double> rates);
+
+    /// <summary>Computes ∂f/∂t of the first block.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="y">The position.</param>
+    /// <param name="scale">A time over which the rates change little, for where a difference must do.</param>
+    /// <param name="derivative">Receives the derivative.</param>
+    void TimeDerivative(double time, ReadOnlySpan<double> y, double scale, Span<double> derivative);
 
     /// <summary>Computes the product of the first block's Jacobian with a direction of the first block.</summary>
     void DirectionalDerivative(double time, ReadOnlySpan<double> y, ReadOnlySpan<double> direction, Span<double> product);
 
     /// <summary>
-    /// Computes the Jacobian of the first block by rows. Implicit methods use it for every block: the blocks of tangents have the same
-    /// one, and their dependence on the state is left to the iteration (the state does not depend on them).
+    /// Computes the Jacobian of the first block in the layout of <see cref="Structure"/>. Implicit methods use it for every block: the blocks of
+    /// tangents have the same one, and their dependence on the state is left to the iteration (the state does not depend on them).
     /// </summary>
     void Jacobian(double time, ReadOnlySpan<double> y, Span<double> jacobian);
 }

@@ -62,7 +62,7 @@ internal sealed class Motion
         projection = new SurfaceProjection(system, regime, absolute, options.RelativeTolerance * OnSurface, OnSurface);
         guardValues = new double[guards.Count];
         rates = new double[system.StateCount];
-        Current = options.Method == IntegrationMethod.RadauIIA5 ? Implicit : Explicit;
+        Current = options.Method == IntegrationMethod.Automatic ? Explicit : MakeStepper(options.Method);
     }
 
     public IntegrationStatistics Statistics { get; } = new();
@@ -100,9 +100,9 @@ internal sealed class Motion
         }
     }
 
-    private Stepper Explicit => explicitStepper ??= MakeStepper(IntegrationMethod.DormandPrince54);
+    private Stepper Explicit => explicitStepper ??= MakeStepper(AutomaticChoice.Explicit(options.RelativeTolerance));
 
-    private Stepper Implicit => implicitStepper ??= MakeStepper(IntegrationMethod.RadauIIA5);
+    private Stepper Implicit => implicitStepper ??= MakeStepper(AutomaticChoice.Implicit(options.RelativeTolerance));
 
     private ReadOnlySpan<double> State => Current.End.AsSpan(0, system.StateCount);
 
@@ -237,6 +237,8 @@ internal sealed class Motion
         bool sameTime = meetings > 0 && Math.Abs(Time - meetingTime) <= SameTime * Ulp(Time);
         if (!sameTime) (meetingTime, meetings) = (Time, 0);
         if (++meetings > MeetingsAtOneTime * (1 + system.SwitchCount)) return StepStatus.CrossingsAccumulate;
+        // Some continuations need more rates: those of the regime in which the step was taken.
+        if (Current.EndTime != Current.StartTime) Current.EnsureDense();
         StepStatus status = rules.Meet(guard, Time, Current.End.AsSpan(0, Current.Dimension), guards.Direction, forced, out Crossing? crossing);
         if (crossing is not { } what) return status;
         NewCrossings.Add(what);

@@ -1,14 +1,11 @@
 namespace OdeDsl.Integration;
 
 /// <summary>
-/// Predictive step size control of an implicit method whose error estimate is of order 3 (K. Gustafsson, ACM Transactions on Mathematical
+/// Predictive step size control of an implicit method whose error estimate is of known order (K. Gustafsson, ACM Transactions on Mathematical
 /// Software 20, 1994; E. Hairer, G. Wanner, Solving ODEs II, equations IV.8.25 to 8.28, with the constants given there).
 /// </summary>
 internal struct PredictiveController
 {
-    /// <summary>Newton iterations per step.</summary>
-    public const int MaximumIterations = 7;
-
     /// <summary>Newton's iterations contract so well that the Jacobian may be kept.</summary>
     public const double NegligibleContraction = 1e-3;
 
@@ -21,6 +18,8 @@ internal struct PredictiveController
     private const double FirstFactor = 0.1;
     private const double SmallestMemory = 1e-2;
 
+    private double exponent;
+    private int maximumIterations;
     private double sizeBefore;
     private double errorBefore;
     private bool hasStepped;
@@ -28,13 +27,22 @@ internal struct PredictiveController
     /// <summary>Whether no step was accepted yet.</summary>
     public readonly bool IsFirst => !hasStepped;
 
+    /// <summary>Takes a method's data.</summary>
+    /// <param name="estimateOrder">The order of the error estimate.</param>
+    /// <param name="mostIterations">Newton's iterations at most.</param>
+    public void Use(int estimateOrder, int mostIterations)
+    {
+        exponent = 1.0 / (estimateOrder + 1);
+        maximumIterations = mostIterations;
+    }
+
     /// <summary>The factor on an accepted step that gives the next one.</summary>
     public double Accept(double h, double error, int iterations, bool rejectedBefore)
     {
         double factor = Factor(error, iterations);
         if (hasStepped)
         {
-            double predicted = h / sizeBefore * Safety * Math.Sqrt(Math.Sqrt(errorBefore / (error * error)));
+            double predicted = h / sizeBefore * Safety * Math.Pow(errorBefore / (error * error), exponent);
             factor = Math.Min(factor, Math.Clamp(predicted, SmallestFactor, LargestFactor));
         }
 
@@ -51,9 +59,9 @@ internal struct PredictiveController
     public void Reset() => hasStepped = false;
 
     // Steps that needed many iterations are made smaller than the error alone asks for.
-    private static double Factor(double error, int iterations)
+    private readonly double Factor(double error, int iterations)
     {
-        double safety = Safety * (1 + 2 * MaximumIterations) / (iterations + 2 * MaximumIterations);
-        return Math.Clamp(Math.Min(Safety, safety) / Math.Sqrt(Math.Sqrt(error)), SmallestFactor, LargestFactor);
+        double safety = Safety * (1 + 2 * maximumIterations) / (iterations + 2 * maximumIterations);
+        return Math.Clamp(Math.Min(Safety, safety) * Math.Pow(error, -exponent), SmallestFactor, LargestFactor);
     }
 }

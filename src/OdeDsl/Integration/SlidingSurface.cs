@@ -107,6 +107,16 @@ internal sealed class SlidingSurface
         }
     }
 
+    /// <summary>The derivative of <see cref="Rates"/> by time, by a central difference.</summary>
+    public void TimeDerivative(double time, ReadOnlySpan<double> y, double scale, Span<double> derivative)
+    {
+        double later = time + Increment * scale, earlier = time - Increment * scale;
+        Rates(later, y, plus);
+        Rates(earlier, y, minus);
+        // Where the time is too large for the increment, the motion does not feel the derivative either.
+        for (int i = 0; i < plus.Length; i++) derivative[i] = later == earlier ? 0 : (plus[i] - minus[i]) / (later - earlier);
+    }
+
     /// <summary>The product of the Jacobian with a direction, by one central difference.</summary>
     public void DirectionalDerivative(double time, ReadOnlySpan<double> y, ReadOnlySpan<double> direction, Span<double> product)
     {

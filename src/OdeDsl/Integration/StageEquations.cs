@@ -1,47 +1,63 @@
 using OdeDsl.LinearAlgebra;
-using static OdeDsl.Integration.RadauIIA5Coefficients;
 
 namespace OdeDsl.Integration;
 
 /// <summary>
-/// The linear equations of the Radau IIA method's transformed stages: (γ/h − J) and ((α + iβ)/h − J), factored once for
+/// The linear equations of a Radau IIA method's transformed stages: (γ/h − J) and ((α + iβ)/h − J), factored once for
 /// a step size and Jacobian (E. Hairer, G. Wanner, Solving ODEs II, section IV.8). Vectors of several blocks are solved block by block.
 /// </summary>
-internal sealed class StageEquations(int blockSize, int dimension)
+internal sealed class StageEquations
 {
-    private readonly RealFactorization real = new(blockSize);
-    private readonly ComplexFactorization complex = new(blockSize);
+    private readonly int blockSize, dimension;
+    private readonly ShiftedSolver real;
+    private readonly ComplexShiftedSolver[] pairs;
 
-    /// <summary>Factors both matrices.</summary>
-    /// <returns><see langword="false"/> if one is singular.</returns>
-    public bool Factor(ReadOnlySpan<double> jacobian, double h)
+    /// <param name="structure">How the Jacobian is held.</param>
+    /// <param name="dimension">The number of components, whole blocks.</param>
+    /// <param name="mostStages">The number of stages at most.</param>
+    public StageEquations(JacobianStructure structure, int dimension, int mostStages)
     {
-        double gamma = Gamma / h, alpha = Alpha / h, beta = Beta / h;
-        for (int i = 0; i < blockSize; i++)
+        Structure = structure;
+        blockSize = structure.Size;
+        this.dimension = dimension;
+        Jacobian = new double[structure.EntryCount];
+        real = structure.MakeReal();
+        pairs = new ComplexShiftedSolver[(mostStages - 1) / 2];
+        for (int k = 0; k < pairs.Length; k++) pairs[k] = structure.MakeComplex();
+    }
+
+    /// <summary>How the Jacobian is held.</summary>
+    public JacobianStructure Structure { get; }
+
+    /// <summary>The Jacobian last evaluated.</summary>
+    public double[] Jacobian { get; }
+
+    /// <summary>Factors all matrices.</summary>
+    /// <returns><see langword="false"/> if one is singular.</returns>
+    public bool Factor(RadauCoefficients method, double h)
+    {
+        if (!real.Factor(Jacobian, method.Gamma / h)) return false;
+        for (int k = 0; k < method.Alpha.Length; k++)
         {
-            ReadOnlySpan<double> row = jacobian.Slice(i * blockSize, blockSize);
-            for (int j = 0; j < row.Length; j++)
-            {
-                bool diagonal = i == j;
-                real[i, j] = (diagonal ? gamma : 0) - row[j];
-                complex.Set(i, j, (diagonal ? alpha : 0) - row[j], diagonal ? beta : 0);
-            }
+            if (!pairs[k].Factor(Jacobian, method.Alpha[k] / h, method.Beta[k] / h)) return false;
         }
 
-        return real.Factor() && complex.Factor();
+        return true;
     }
 
     /// <summary>Newton's corrections of the transformed stages w from the transformed rates f, which they replace.</summary>
-    public void Correct(double h, double[] f1, double[] f2, double[] f3, double[] w1, double[] w2, double[] w3)
+    public void Correct(RadauCoefficients method, double h, double[][] f, double[][] w)
     {
-        double gamma = Gamma / h, alpha = Alpha / h, beta = Beta / h;
-        StageSums.Combine(f1, f1, -gamma, w1);
-        StageSums.Combine(f2, f2, -alpha, w2, beta, w3);
-        StageSums.Combine(f3, f3, -beta, w2, -alpha, w3);
-        for (int start = 0; start < dimension; start += blockSize)
+        StageSums.Combine(f[0], f[0], -method.Gamma / h, w[0]);
+        Filter(f[0]);
+        for (int k = 0; k < method.Alpha.Length; k++)
         {
-            real.Solve(f1.AsSpan(start, blockSize));
-            complex.Solve(f2.AsSpan(start, blockSize), f3.AsSpan(start, blockSize));
+            double alpha = method.Alpha[k] / h, beta = method.Beta[k] / h;
+            (double[] re, double[] im) = (f[2 * k + 1], f[2 * k + 2]);
+            StageSums.Combine(re, re, -alpha, w[2 * k + 1], beta, w[2 * k + 2]);
+            StageSums.Combine(im, im, -beta, w[2 * k + 1], -alpha, w[2 * k + 2]);
+            for (int start = 0; start < dimension; start += blockSize)
+                pairs[k].Solve(re.AsSpan(start, blockSize), im.AsSpan(start, blockSize));
         }
     }
 

@@ -35,107 +35,30 @@ internal static class StageSums
         }
     }
 
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public static void Combine(
-        double[] result, double[] y, double c1, double[] k1, double c2, double[] k2, double c3, double[] k3)
-    {
-        ref double to = ref Ref(result), from = ref Ref(y), r1 = ref Ref(k1), r2 = ref Ref(k2), r3 = ref Ref(k3);
-        var (v1, v2, v3) = (new Vector<double>(c1), new Vector<double>(c2), new Vector<double>(c3));
-        for (nuint i = 0; i < (nuint)result.Length; i += (nuint)Vector<double>.Count)
-        {
-            Vector<double> sum = Add(v1, ref r1, i, Load(ref from, i));
-            sum = Add(v2, ref r2, i, sum);
-            Add(v3, ref r3, i, sum).StoreUnsafe(ref to, i);
-        }
-    }
-
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public static void Combine(
-        double[] result, double[] y, double c1, double[] k1, double c2, double[] k2, double c3, double[] k3, double c4, double[] k4)
+    /// <summary>Computes y + h (w₁k₁ + w₂k₂ + ...).</summary>
+    public static void Combine(double[] result, double[] y, double h, double[] weights, double[][] k)
     {
         ref double to = ref Ref(result), from = ref Ref(y);
-        ref double r1 = ref Ref(k1), r2 = ref Ref(k2), r3 = ref Ref(k3), r4 = ref Ref(k4);
-        var (v1, v2, v3, v4) = (new Vector<double>(c1), new Vector<double>(c2), new Vector<double>(c3), new Vector<double>(c4));
+        var step = new Vector<double>(h);
         for (nuint i = 0; i < (nuint)result.Length; i += (nuint)Vector<double>.Count)
-        {
-            Vector<double> sum = Add(v1, ref r1, i, Load(ref from, i));
-            sum = Add(v2, ref r2, i, sum);
-            sum = Add(v3, ref r3, i, sum);
-            Add(v4, ref r4, i, sum).StoreUnsafe(ref to, i);
-        }
+            Vector.MultiplyAddEstimate(step, Weigh(weights, k, i), Load(ref from, i)).StoreUnsafe(ref to, i);
     }
 
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public static void Combine(
-        double[] result,
-        double[] y,
-        double c1,
-        double[] k1,
-        double c2,
-        double[] k2,
-        double c3,
-        double[] k3,
-        double c4,
-        double[] k4,
-        double c5,
-        double[] k5)
-    {
-        ref double to = ref Ref(result), from = ref Ref(y);
-        ref double r1 = ref Ref(k1), r2 = ref Ref(k2), r3 = ref Ref(k3), r4 = ref Ref(k4), r5 = ref Ref(k5);
-        var (v1, v2, v3) = (new Vector<double>(c1), new Vector<double>(c2), new Vector<double>(c3));
-        var (v4, v5) = (new Vector<double>(c4), new Vector<double>(c5));
-        for (nuint i = 0; i < (nuint)result.Length; i += (nuint)Vector<double>.Count)
-        {
-            Vector<double> sum = Add(v1, ref r1, i, Load(ref from, i));
-            sum = Add(v2, ref r2, i, sum);
-            sum = Add(v3, ref r3, i, sum);
-            sum = Add(v4, ref r4, i, sum);
-            Add(v5, ref r5, i, sum).StoreUnsafe(ref to, i);
-        }
-    }
-
-    /// <summary>Computes c₁k₁ + c₂k₂ + c₃k₃.</summary>
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public static void Combine(double[] result, double c1, double[] k1, double c2, double[] k2, double c3, double[] k3)
-    {
-        ref double to = ref Ref(result), r1 = ref Ref(k1), r2 = ref Ref(k2), r3 = ref Ref(k3);
-        var (v1, v2, v3) = (new Vector<double>(c1), new Vector<double>(c2), new Vector<double>(c3));
-        for (nuint i = 0; i < (nuint)result.Length; i += (nuint)Vector<double>.Count)
-        {
-            Vector<double> sum = Add(v2, ref r2, i, v1 * Load(ref r1, i));
-            Add(v3, ref r3, i, sum).StoreUnsafe(ref to, i);
-        }
-    }
-
-    /// <summary>Computes c₁k₁ + ... + c₆k₆.</summary>
-    [MethodImpl(MethodImplOptions.AggressiveInlining)]
-    public static void Combine(
-        double[] result,
-        double c1,
-        double[] k1,
-        double c2,
-        double[] k2,
-        double c3,
-        double[] k3,
-        double c4,
-        double[] k4,
-        double c5,
-        double[] k5,
-        double c6,
-        double[] k6)
+    /// <summary>Computes h (w₁k₁ + w₂k₂ + ...).</summary>
+    public static void Sum(double[] result, double h, double[] weights, double[][] k)
     {
         ref double to = ref Ref(result);
-        ref double r1 = ref Ref(k1), r2 = ref Ref(k2), r3 = ref Ref(k3), r4 = ref Ref(k4), r5 = ref Ref(k5), r6 = ref Ref(k6);
-        var (v1, v2, v3) = (new Vector<double>(c1), new Vector<double>(c2), new Vector<double>(c3));
-        var (v4, v5, v6) = (new Vector<double>(c4), new Vector<double>(c5), new Vector<double>(c6));
-        for (nuint i = 0; i < (nuint)result.Length; i += (nuint)Vector<double>.Count)
-        {
-            Vector<double> sum = Add(v2, ref r2, i, v1 * Load(ref r1, i));
-            sum = Add(v3, ref r3, i, sum);
-            sum = Add(v4, ref r4, i, sum);
-            sum = Add(v5, ref r5, i, sum);
-            Add(v6, ref r6, i, sum).StoreUnsafe(ref to, i);
-        }
+        var step = new Vector<double>(h);
+        for (nuint i = 0; i < (nuint)result.Length; i += (nuint)Vector<double>.Count) (step * Weigh(weights, k, i)).StoreUnsafe(ref to, i);
+    }
+
+    // The stage computed last comes last: the sum of the others need not wait for it.
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static Vector<double> Weigh(double[] weights, double[][] k, nuint at)
+    {
+        Vector<double> sum = new Vector<double>(weights[0]) * Load(ref Ref(k[0]), at);
+        for (int j = 1; j < weights.Length; j++) sum = Add(new Vector<double>(weights[j]), ref Ref(k[j]), at, sum);
+        return sum;
     }
 
     [MethodImpl(MethodImplOptions.AggressiveInlining)]

@@ -1,25 +1,53 @@
 using System.Numerics;
+using System.Runtime.CompilerServices;
 using System.Runtime.InteropServices;
 
 namespace OdeDsl.Integration;
 
-/// <summary>Multiplies a 3 × 3 matrix with three padded vectors, component by component. Results may replace the vectors.</summary>
+/// <summary>Multiplies a matrix with padded vectors, component by component.</summary>
 internal static class StageTransform
 {
-    public static void Apply(double[,] m, double[] x1, double[] x2, double[] x3, double[] y1, double[] y2, double[] y3)
+    private const int MostStages = 7;
+
+    /// <summary>Computes yᵢ = Σⱼ mᵢⱼ xⱼ for the leading <paramref name="count"/> vectors on both sides. Results may replace the vectors.</summary>
+    public static void Apply(double[,] m, int count, double[][] x, double[][] y)
     {
-        ref double a = ref MemoryMarshal.GetArrayDataReference(x1), b = ref MemoryMarshal.GetArrayDataReference(x2);
-        ref double c = ref MemoryMarshal.GetArrayDataReference(x3), u = ref MemoryMarshal.GetArrayDataReference(y1);
-        ref double v = ref MemoryMarshal.GetArrayDataReference(y2), w = ref MemoryMarshal.GetArrayDataReference(y3);
-        var (m00, m01, m02) = (new Vector<double>(m[0, 0]), new Vector<double>(m[0, 1]), new Vector<double>(m[0, 2]));
-        var (m10, m11, m12) = (new Vector<double>(m[1, 0]), new Vector<double>(m[1, 1]), new Vector<double>(m[1, 2]));
-        var (m20, m21, m22) = (new Vector<double>(m[2, 0]), new Vector<double>(m[2, 1]), new Vector<double>(m[2, 2]));
-        for (nuint i = 0; i < (nuint)x1.Length; i += (nuint)Vector<double>.Count)
+        Span<Vector<double>> values = stackalloc Vector<double>[MostStages];
+        values = values[..count];
+        ref double matrix = ref m[0, 0];
+        int length = x[0].Length;
+        for (int at = 0; at < length; at += Vector<double>.Count)
         {
-            Vector<double> p = Vector.LoadUnsafe(ref a, i), q = Vector.LoadUnsafe(ref b, i), r = Vector.LoadUnsafe(ref c, i);
-            Vector.MultiplyAddEstimate(m02, r, Vector.MultiplyAddEstimate(m01, q, m00 * p)).StoreUnsafe(ref u, i);
-            Vector.MultiplyAddEstimate(m12, r, Vector.MultiplyAddEstimate(m11, q, m10 * p)).StoreUnsafe(ref v, i);
-            Vector.MultiplyAddEstimate(m22, r, Vector.MultiplyAddEstimate(m21, q, m20 * p)).StoreUnsafe(ref w, i);
+            for (int j = 0; j < values.Length; j++) values[j] = Vector.LoadUnsafe(ref MemoryMarshal.GetArrayDataReference(x[j]), (nuint)at);
+            for (int i = 0; i < count; i++)
+            {
+                ref double row = ref Unsafe.Add(ref matrix, i * count);
+                Vector<double> sum = new Vector<double>(row) * values[0];
+                for (int j = 1; j < values.Length; j++)
+                    sum = Vector.MultiplyAddEstimate(new Vector<double>(Unsafe.Add(ref row, j)), values[j], sum);
+                sum.StoreUnsafe(ref MemoryMarshal.GetArrayDataReference(y[i]), (nuint)at);
+            }
+        }
+    }
+
+    /// <summary>Computes yᵢ = Σⱼ mᵢⱼ xⱼ for a matrix of other shape by rows. Results must not replace the vectors.</summary>
+    public static void Apply(ReadOnlySpan<double> m, int rows, int columns, double[][] x, double[][] y)
+    {
+        for (int at = 0; at < x[0].Length; at += Vector<double>.Count)
+        {
+            for (int i = 0; i < rows; i++)
+            {
+                Vector<double> sum = Vector<double>.Zero;
+                for (int j = 0; j < columns; j++)
+                {
+                    sum = Vector.MultiplyAddEstimate(
+                        new Vector<double>(m[i * columns + j]),
+                        Vector.LoadUnsafe(ref MemoryMarshal.GetArrayDataReference(x[j]), (nuint)at),
+                        sum);
+                }
+
+                sum.StoreUnsafe(ref MemoryMarshal.GetArrayDataReference(y[i]), (nuint)at);
+            }
         }
     }
 }

@@ -15,6 +15,7 @@ internal abstract class Stepper
     /// <summary>Factor on a step that met values that are not finite.</summary>
     private const double NotFiniteFactor = 0.25;
 
+    private readonly double[] continuation;
     private bool stepHeld;
     private bool ratesKnown;
     private bool endMoved;
@@ -22,7 +23,11 @@ internal abstract class Stepper
     private bool estimateStep;
     private bool denseReady;
 
-    protected Stepper(int dimension, ErrorNorm norm, IntegrationStatistics statistics)
+    /// <param name="dimension">The number of components.</param>
+    /// <param name="coefficientCount">The number of vectors beyond the two end states that continue a step at most.</param>
+    /// <param name="norm">The error norm.</param>
+    /// <param name="statistics">What to count in.</param>
+    protected Stepper(int dimension, int coefficientCount, ErrorNorm norm, IntegrationStatistics statistics)
     {
         Dimension = dimension;
         Norm = norm;
@@ -31,9 +36,9 @@ internal abstract class Stepper
         End = StageSums.Allocate(dimension);
         StartRates = StageSums.Allocate(dimension);
         Scratch = StageSums.Allocate(dimension);
-        D2 = StageSums.Allocate(dimension);
-        D3 = StageSums.Allocate(dimension);
-        D4 = StageSums.Allocate(dimension);
+        Work = StageSums.Allocate(dimension);
+        continuation = new double[dimension * coefficientCount];
+        CoefficientCount = coefficientCount;
     }
 
     /// <summary>The number of components.</summary>
@@ -69,19 +74,13 @@ internal abstract class Stepper
     /// <summary>Whether the motion suits the other kind of method better.</summary>
     public bool SuggestsChange { get; protected set; }
 
-    /// <summary>The coefficients that continue the last step, see <see cref="DenseStep"/>.</summary>
-    public double[] D2 { get; }
-
-    /// <inheritdoc cref="D2"/>
-    public double[] D3 { get; }
-
-    /// <inheritdoc cref="D2"/>
-    public double[] D4 { get; }
+    /// <summary>The coefficients that continue the last step, see <see cref="DenseStep"/>; ready after <see cref="EnsureDense"/>.</summary>
+    public ReadOnlySpan<double> Continuation => continuation.AsSpan(0, Dimension * CoefficientCount);
 
     /// <summary>The order of the method, for the starting step.</summary>
     protected abstract int Order { get; }
 
-    protected ErrorNorm Norm { get; }
+    protected ErrorNorm Norm { get; set; }
 
     protected IntegrationStatistics Statistics { get; }
 
@@ -92,6 +91,12 @@ internal abstract class Stepper
     protected double[] StartRates { get; set; }
 
     protected double[] Scratch { get; }
+
+    /// <summary>Workspace that holds nothing from step to step, padded.</summary>
+    protected double[] Work { get; }
+
+    /// <summary>The number of vectors that continue the step held.</summary>
+    protected int CoefficientCount { get; set; }
 
     /// <summary>Computes the rates into a padded vector and counts the evaluation.</summary>
     public abstract void Rates(double time, double[] y, double[] rates);
@@ -176,14 +181,14 @@ internal abstract class Stepper
     {
         EnsureDense();
         double theta = (time - StartTime) / (EndTime - StartTime);
-        DenseStep.Evaluate(theta, Start, End, D2, D3, D4, y);
+        DenseStep.Evaluate(theta, Start, End, Continuation, Dimension, y);
     }
 
     /// <summary>Makes the coefficients of the continuation ready.</summary>
     public void EnsureDense()
     {
         if (denseReady) return;
-        ComputeDense(EndTime - StartTime);
+        ComputeDense(EndTime - StartTime, continuation);
         denseReady = true;
     }
 
@@ -197,8 +202,8 @@ internal abstract class Stepper
     /// <summary>Learns from a rejected step and proposes a smaller one.</summary>
     protected abstract double Reject(double h, double error, StepStatus outcome);
 
-    /// <summary>Computes <see cref="D2"/>, <see cref="D3"/>, <see cref="D4"/> for the step held.</summary>
-    protected abstract void ComputeDense(double h);
+    /// <summary>Computes the coefficients that continue the step held, vectors of <see cref="Dimension"/> one after the other.</summary>
+    protected abstract void ComputeDense(double h, Span<double> coefficients);
 
     /// <summary>Brings the rates at the end of the step held to <see cref="StartRates"/>, if the method knows them.</summary>
     /// <returns>Whether it does.</returns>
@@ -237,8 +242,7 @@ internal abstract class Stepper
 
         if (!estimateStep) return StepStatus.Accepted;
         double longest = Math.Min(Math.Abs(limit - StartTime), MaximumStep);
-        // The continuation of the last step is not needed any more: its vectors serve as workspace.
-        double estimate = StartingStep.Estimate(this, StartTime, direction * longest, Start, StartRates, D2, D3, Norm, Order);
+        double estimate = StartingStep.Estimate(this, StartTime, direction * longest, Start, StartRates, Scratch, Work, Norm, Order);
         if (Proposed == 0 || Math.Abs(estimate) < Math.Abs(Proposed)) Proposed = estimate;
         estimateStep = false;
         return StepStatus.Accepted;

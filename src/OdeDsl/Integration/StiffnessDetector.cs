@@ -7,14 +7,10 @@ namespace OdeDsl.Integration;
 /// power iteration with Jacobian-vector products, continued from step to step: unlike a difference of stages it does not fade when a
 /// tight tolerance keeps the fast components of the motion unexcited.
 /// </summary>
-internal struct StiffnessDetector(int dimension)
+/// <param name="dimension">The number of states.</param>
+/// <param name="edge">Where the edge of the stability region begins: step control makes the step hover below it.</param>
+internal struct StiffnessDetector(int dimension, double edge)
 {
-    /// <summary>
-    /// Where the edge begins. Dormand and Prince's region reaches to 3.3 along the negative real axis; step control makes the step hover
-    /// below that.
-    /// </summary>
-    private const double Edge = 2.6;
-
     /// <summary>
     /// Near the edge, where a tight tolerance already feels the fast components, a motion counts as stiff if its own rates change this many
     /// times more slowly than the fastest component would.
@@ -68,7 +64,7 @@ internal struct StiffnessDetector(int dimension)
         double growth = hasDirection && length > 0 ? Math.Sqrt(grown / length) : 0;
         for (int i = 0; i < n; i++) direction[i] /= grown;
         double reach = Math.Abs(h) * growth;
-        if (reach > Edge || (reach > NearEdge && reach > Slowness * Change(n, y, ratesBefore, ratesAfter, norm)))
+        if (reach > edge || (reach > NearEdge && reach > Slowness * Change(n, y, ratesBefore, ratesAfter, norm)))
         {
             clear = 0;
             atEdge++;

@@ -9,6 +9,7 @@ internal sealed class TrajectoryStore(int stateCount, double time, ReadOnlySpan<
     private double[] times = [time];
     private double[] states = state[..stateCount].ToArray();
     private double[] coefficients = [];
+    private int[] starts = [0]; // of each step's coefficients; the end of the last one last
 
     /// <summary>The number of nodes: one more than steps.</summary>
     public int NodeCount { get; private set; } = 1;
@@ -23,16 +24,17 @@ internal sealed class TrajectoryStore(int stateCount, double time, ReadOnlySpan<
     public void Append(Stepper stepper)
     {
         stepper.EnsureDense();
-        int step = NodeCount - 1, stride = DenseStep.CoefficientCount * stateCount;
+        ReadOnlySpan<double> continuation = stepper.Continuation;
+        int count = continuation.Length / stepper.Dimension, start = starts[NodeCount - 1], end = start + count * stateCount;
         Grow(ref times, NodeCount + 1);
         Grow(ref states, (NodeCount + 1) * stateCount);
-        Grow(ref coefficients, (step + 1) * stride);
+        Grow(ref coefficients, end);
+        Grow(ref starts, NodeCount + 1);
         times[NodeCount] = stepper.EndTime;
         stepper.End.AsSpan(0, stateCount).CopyTo(states.AsSpan(NodeCount * stateCount));
-        Span<double> to = coefficients.AsSpan(step * stride, stride);
-        stepper.D2.AsSpan(0, stateCount).CopyTo(to);
-        stepper.D3.AsSpan(0, stateCount).CopyTo(to[stateCount..]);
-        stepper.D4.AsSpan(0, stateCount).CopyTo(to[(2 * stateCount)..]);
+        for (int k = 0; k < count; k++)
+            continuation.Slice(k * stepper.Dimension, stateCount).CopyTo(coefficients.AsSpan(start + k * stateCount));
+        starts[NodeCount] = end;
         NodeCount++;
     }
 
@@ -59,37 +61,17 @@ internal sealed class TrajectoryStore(int stateCount, double time, ReadOnlySpan<
         theta >= 1 ? times[step + 1] : times[step] + theta * (times[step + 1] - times[step]);
 
     /// <summary>One state inside a step.</summary>
-    public double Value(int step, double theta, int index)
-    {
-        ReadOnlySpan<double> d = Coefficients(step);
-        return DenseStep.Value(
-            theta, State(step)[index], State(step + 1)[index], d[index], d[stateCount + index], d[2 * stateCount + index]);
-    }
-
-    /// <summary>The derivative of one state by the place inside a step.</summary>
-    public double Slope(int step, double theta, int index)
-    {
-        ReadOnlySpan<double> d = Coefficients(step);
-        return DenseStep.Slope(
-            theta, State(step)[index], State(step + 1)[index], d[index], d[stateCount + index], d[2 * stateCount + index]);
-    }
+    public double Value(int step, double theta, int index) =>
+        DenseStep.Value(theta, State(step)[index], State(step + 1)[index], Coefficients(step), stateCount, index);
 
     /// <summary>All states inside a step.</summary>
-    public void Evaluate(int step, double theta, Span<double> state)
-    {
-        ReadOnlySpan<double> d = Coefficients(step);
-        DenseStep.Evaluate(
-            theta, State(step), State(step + 1), d[..stateCount], d.Slice(stateCount, stateCount), d[(2 * stateCount)..], state[..stateCount]);
-    }
+    public void Evaluate(int step, double theta, Span<double> state) =>
+        DenseStep.Evaluate(theta, State(step), State(step + 1), Coefficients(step), stateCount, state[..stateCount]);
 
-    private static void Grow(ref double[] array, int count)
+    private static void Grow<T>(ref T[] array, int count)
     {
         if (count > array.Length) Array.Resize(ref array, Math.Max(count, Math.Max(64, 2 * array.Length)));
     }
 
-    private ReadOnlySpan<double> Coefficients(int step)
-    {
-        int stride = DenseStep.CoefficientCount * stateCount;
-        return coefficients.AsSpan(step * stride, stride);
-    }
+    private ReadOnlySpan<double> Coefficients(int step) => coefficients.AsSpan(starts[step]..starts[step + 1]);
 }

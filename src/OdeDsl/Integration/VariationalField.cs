@@ -1,3 +1,5 @@
+using OdeDsl.LinearAlgebra;
+
 namespace OdeDsl.Integration;
 
 /// <summary>
@@ -8,30 +10,28 @@ internal readonly struct VariationalField<TField>(TField inner, int tangentCount
     where TField : struct, IVectorField
 {
     private readonly TField inner = inner;
-    private readonly double[] jacobian = new double[inner.Dimension * inner.Dimension];
+    private readonly double[] jacobian = new double[inner.LargestJacobian];
 
     public int Dimension => inner.Dimension * (1 + tangentCount);
 
     public int BlockSize => inner.Dimension;
+
+    public JacobianStructure Structure => inner.Structure;
+
+    public int LargestJacobian => inner.LargestJacobian;
+
+    public bool DependsOnTime => inner.DependsOnTime;
 
     public void Rates(double time, ReadOnlySpan<double> y, Span<double> rates)
     {
         int n = inner.Dimension;
         inner.Rates(time, y[..n], rates[..n]);
         inner.Jacobian(time, y[..n], jacobian);
-        for (int c = 1; c <= tangentCount; c++)
-        {
-            ReadOnlySpan<double> tangent = y.Slice(c * n, n);
-            Span<double> change = rates.Slice(c * n, n);
-            for (int i = 0; i < n; i++)
-            {
-                ReadOnlySpan<double> row = jacobian.AsSpan(i * n, n);
-                double sum = 0;
-                for (int j = 0; j < row.Length; j++) sum += row[j] * tangent[j];
-                change[i] = sum;
-            }
-        }
+        for (int c = 1; c <= tangentCount; c++) inner.Structure.Multiply(jacobian, y.Slice(c * n, n), rates.Slice(c * n, n));
     }
+
+    public void TimeDerivative(double time, ReadOnlySpan<double> y, double scale, Span<double> derivative) =>
+        inner.TimeDerivative(time, y[..inner.Dimension], scale, derivative);
 
     public void DirectionalDerivative(double time, ReadOnlySpan<double> y, ReadOnlySpan<double> direction, Span<double> product) =>
         inner.DirectionalDerivative(time, y[..inner.Dimension], direction, product);

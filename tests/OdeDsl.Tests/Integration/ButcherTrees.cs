@@ -14,17 +14,20 @@ internal static class ButcherTrees
         public double Gamma => Order * Branches.Aggregate(1.0, static (product, branch) => product * branch.Gamma);
 
         /// <summary>The elementary weights Φᵢ of the stages.</summary>
-        public double[] StageWeights(double[,] a)
+        /// <param name="a">The matrix of the method.</param>
+        /// <param name="single">The matrix for a node with one branch; the same but for Rosenbrock methods.</param>
+        public double[] StageWeights(double[,] a, double[,] single)
         {
             int stages = a.GetLength(0);
+            double[,] here = Branches.Length == 1 ? single : a;
             double[] weights = [.. Enumerable.Repeat(1.0, stages)];
             foreach (Tree branch in Branches)
             {
-                double[] inner = branch.StageWeights(a);
+                double[] inner = branch.StageWeights(a, single);
                 for (int i = 0; i < stages; i++)
                 {
                     double sum = 0;
-                    for (int j = 0; j < stages; j++) sum += a[i, j] * inner[j];
+                    for (int j = 0; j < stages; j++) sum += here[i, j] * inner[j];
                     weights[i] *= sum;
                 }
             }
@@ -33,13 +36,19 @@ internal static class ButcherTrees
         }
     }
 
-    /// <summary>All trees of an order: 1, 1, 2, 4, 9 of them.</summary>
+    /// <summary>All trees of an order: 1, 1, 2, 4, 9, ... of them.</summary>
     public static IEnumerable<Tree> OfOrder(int order) => Forests(order - 1, order - 1).Select(static forest => new Tree(forest));
 
     /// <summary>The largest misfit Σ bᵢ Φᵢ − θ^order / γ over all trees up to an order.</summary>
-    public static double LargestMisfit(double[,] a, double[] b, int order, double theta = 1) =>
+    public static double LargestMisfit(double[,] a, double[] b, int order, double theta = 1) => LargestMisfit(a, a, b, order, theta);
+
+    /// <summary>
+    /// The same for a Rosenbrock method, whose nodes with one branch take the matrix β = α + Γ (E. Hairer, G. Wanner, Solving ODEs II,
+    /// section IV.7, equation 7.11 and the rule before it).
+    /// </summary>
+    public static double LargestMisfit(double[,] alpha, double[,] beta, double[] b, int order, double theta = 1) =>
         Enumerable.Range(1, order).SelectMany(OfOrder).Max(tree =>
-            Math.Abs(b.Zip(tree.StageWeights(a), static (x, y) => x * y).Sum() - Math.Pow(theta, tree.Order) / tree.Gamma));
+            Math.Abs(b.Zip(tree.StageWeights(alpha, beta), static (x, y) => x * y).Sum() - Math.Pow(theta, tree.Order) / tree.Gamma));
 
     // Multisets of trees with a given total order and no tree larger than a limit: largest first.
     private static IEnumerable<Tree[]> Forests(int total, int largest)

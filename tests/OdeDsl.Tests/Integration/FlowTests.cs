@@ -7,7 +7,7 @@ namespace OdeDsl.Tests.Integration;
 
 public class FlowTests
 {
-    public static TheoryData<IntegrationMethod> Methods => [IntegrationMethod.DormandPrince54, IntegrationMethod.RadauIIA5, IntegrationMethod.Automatic];
+    public static TheoryData<IntegrationMethod> Methods => TestMethods.All;
 
     /// <summary>x' = A x with the entries of A as parameters.</summary>
     private readonly struct Linear3 : IHandWritten<Linear3>
@@ -42,12 +42,9 @@ public class FlowTests
         AssertTangents(DynamicSystem.Of(new Lorenz63()), method, until: 1, tolerance: 1e-7, increment: 1e-5);
 
     [Theory]
-    [MemberData(nameof(Methods))]
-    public void Tangents_of_stiff_motion_agree_with_differences_of_the_flow(IntegrationMethod method)
-    {
-        if (method == IntegrationMethod.DormandPrince54) return; // not for stiff motion
+    [MemberData(nameof(TestMethods.AllForStiffMotion), MemberType = typeof(TestMethods))]
+    public void Tangents_of_stiff_motion_agree_with_differences_of_the_flow(IntegrationMethod method) =>
         AssertTangents(DynamicSystem.Of(new VanDerPol { Mu = 100 }), method, until: 30, tolerance: 1e-5, increment: 1e-6);
-    }
 
     [Theory]
     [MemberData(nameof(Methods))]

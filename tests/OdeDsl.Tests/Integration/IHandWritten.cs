@@ -70,8 +70,15 @@ internal interface IHandWritten<TSelf> : IOdeSystem
     }
 
     static void IOdeSystem.TimeDerivative(
-        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> derivative) =>
-        throw new NotSupportedException();
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> derivative)
+    {
+        int n = TSelf.Description.States.Length;
+        double h = 1e-6 * Math.Max(1, Math.Abs(time));
+        var earlier = new double[n];
+        TSelf.F(time + h, state, parameters, derivative);
+        TSelf.F(time - h, state, parameters, earlier);
+        for (int i = 0; i < n; i++) derivative[i] = (derivative[i] - earlier[i]) / (2 * h);
+    }
 
     static void IOdeSystem.JacobianVectorProduct(
         double time,

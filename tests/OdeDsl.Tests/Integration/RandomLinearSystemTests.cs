@@ -27,8 +27,7 @@ public class RandomLinearSystemTests
         static (a, b, w, phi, psi, x) => (Math.Pow(10, a), Math.Pow(10, b), Math.Pow(10, w), phi, psi, x));
 
     [Theory]
-    [InlineData(IntegrationMethod.RadauIIA5)]
-    [InlineData(IntegrationMethod.Automatic)]
+    [MemberData(nameof(TestMethods.AllForStiffMotion), MemberType = typeof(TestMethods))]
     public void Random_stiff_linear_systems_follow_their_exact_solution(IntegrationMethod method) =>
         Systems.Sample(
             sample =>

@@ -6,19 +6,20 @@ namespace OdeDsl.Tests.Integration;
 
 public class SwitchingTests
 {
-    public static TheoryData<IntegrationMethod> Methods => [IntegrationMethod.DormandPrince54, IntegrationMethod.RadauIIA5, IntegrationMethod.Automatic];
+    public static TheoryData<IntegrationMethod> Methods => TestMethods.All;
 
     [Theory]
     [MemberData(nameof(Methods))]
     public void A_bouncing_relay_keeps_its_closed_form_period(IntegrationMethod method)
     {
         // Parabolas: each half period lasts 2, whatever the tolerance, because every step is exact and no step straddles the surface.
+        // What remains is rounding, which methods with large coefficients magnify.
         Trajectory run = new BouncingRelay().Simulate(until: 100, new SimulationOptions { Method = method, RelativeTolerance = 1e-4 });
         Assert.Equal(49, run.Crossings.Count(static crossing => crossing.Time < 99));
-        for (int i = 0; i < 49; i++) Assert.True(Math.Abs(run.Crossings[i].Time - 2 * (i + 1)) <= 1e-11, $"{run.Crossings[i]}");
-        Assert.True(Math.Abs(run["X"].Maximum.Value - 0.5) <= 1e-12);
-        Assert.True(Math.Abs(run["X"].Minimum.Value + 0.5) <= 1e-12);
-        Assert.True(Math.Abs(run.At(97.5)[0] - (1.5 - 1.5 * 1.5 / 2)) <= 1e-11);
+        for (int i = 0; i < 49; i++) Assert.True(Math.Abs(run.Crossings[i].Time - 2 * (i + 1)) <= 1e-9, $"{run.Crossings[i]}");
+        Assert.True(Math.Abs(run["X"].Maximum.Value - 0.5) <= 1e-11);
+        Assert.True(Math.Abs(run["X"].Minimum.Value + 0.5) <= 1e-11);
+        Assert.True(Math.Abs(run.At(97.5)[0] - (1.5 - 1.5 * 1.5 / 2)) <= 1e-9);
     }
 
     [Theory]
@@ -30,9 +31,9 @@ public class SwitchingTests
         Assert.Equal([2.0, 3.5], run.Crossings.Select(static crossing => crossing.Time));
         Assert.Contains(2.0, run.Times.ToArray());
         Assert.Contains(3.5, run.Times.ToArray());
-        Assert.True(Math.Abs(run.At(2)[0] - 3) <= 1e-13);
-        Assert.True(Math.Abs(run.At(3)[0] - 1) <= 1e-13);
-        Assert.True(Math.Abs(run.FinalState[0]) <= 1e-13);
+        Assert.True(Math.Abs(run.At(2)[0] - 3) <= 1e-12);
+        Assert.True(Math.Abs(run.At(3)[0] - 1) <= 1e-12);
+        Assert.True(Math.Abs(run.FinalState[0]) <= 1e-12);
     }
 
     [Theory]

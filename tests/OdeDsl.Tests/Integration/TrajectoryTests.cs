@@ -7,7 +7,7 @@ namespace OdeDsl.Tests.Integration;
 
 public class TrajectoryTests
 {
-    public static TheoryData<IntegrationMethod> Methods => [IntegrationMethod.DormandPrince54, IntegrationMethod.RadauIIA5];
+    public static TheoryData<IntegrationMethod> Methods => TestMethods.AllButAutomatic;
 
     [Theory]
     [MemberData(nameof(Methods))]

@@ -1,0 +1,15 @@
+namespace OdeDsl.Integration;
+
+/// <summary>Which methods the automatic choice works with: those that were fastest at a tolerance on the public problems (benchmarks/README.md).</summary>
+internal static class AutomaticChoice
+{
+    /// <summary>The method for motion that is not stiff.</summary>
+    public static IntegrationMethod Explicit(double relativeTolerance) =>
+        relativeTolerance > 3e-4 ? IntegrationMethod.Tsitouras54 : IntegrationMethod.DormandPrince853;
+
+    /// <summary>The method for stiff motion.</summary>
+    public static IntegrationMethod Implicit(double relativeTolerance) =>
+        relativeTolerance > 3e-5 ? IntegrationMethod.Rodas4
+        : relativeTolerance > 3e-8 ? IntegrationMethod.Rodas5P
+        : IntegrationMethod.RadauIIA;
+}
