@@ -97,6 +97,7 @@ internal static class Words
         IntegrationMethod.RadauIIA13 => "Radau IIA of order 13, implicit",
         IntegrationMethod.RadauIIA => "Radau IIA of variable order, implicit",
         IntegrationMethod.Rodas4 => "Rodas4, linearly implicit",
+        IntegrationMethod.BackwardDifferentiation => "backward differentiation, implicit",
         IntegrationMethod.Rodas5P => "Rodas5P, linearly implicit",
         IntegrationMethod.Automatic => "automatic choice",
         _ => method.ToString(),

@@ -98,7 +98,7 @@ internal sealed class CycleFollower(DynamicSystem system, int parameter, Cancell
             var shooter = new OrbitShooter(at, region, Tolerance, cancellation);
             if (shooter.Close(state, period, scale) is not { } orbit || !orbit.Winding.AsSpan().SequenceEqual(winding)) return null;
             Trajectory run = at.WithInitialState(orbit.State).Simulate(
-                orbit.SignedPeriod, new SimulationOptions { RelativeTolerance = Tolerance }, null, cancellation);
+                orbit.SignedPeriod, new SimulationOptions { RelativeTolerance = Tolerance, ManyNodes = true }, null, cancellation);
             var multipliers = new OrbitMultipliers(orbit);
             double largest = multipliers.All.Skip(1).Select(static value => value.Magnitude).DefaultIfEmpty(0).Max();
             return new TrackedCycle(value, orbit, new OrbitTrace(run, region).Scale, largest, multipliers.Stability);

@@ -23,7 +23,7 @@ internal sealed class MotionLength(DynamicSystem system, CancellationToken cance
             wanted = Math.Min(wanted, SeparationTimes / exponent.Value);
         try
         {
-            return system.Simulate(wanted, new SimulationOptions { MaximumSteps = Steps }, null, cancellation).EndTime;
+            return system.Simulate(wanted, new SimulationOptions { MaximumSteps = Steps, ManyNodes = true }, null, cancellation).EndTime;
         }
         catch (IntegrationException exception)
         {

@@ -47,7 +47,7 @@ internal sealed record SettledMotion(double[] State, ReturnSequence? Returns, st
             try
             {
                 run = system.WithInitialState(state).Simulate(
-                    length, new SimulationOptions { RelativeTolerance = Tolerance, MaximumSteps = MaximumSteps }, null, cancellation);
+                    length, new SimulationOptions { RelativeTolerance = Tolerance, MaximumSteps = MaximumSteps, ManyNodes = true }, null, cancellation);
             }
             catch (IntegrationException failure)
             {

@@ -37,7 +37,7 @@ internal sealed class LongRun(
     private const int ManyReturns = 50;
     private const int WindowsWithManyReturns = 6;
 
-    private static readonly SimulationOptions Options = new() { RelativeTolerance = RunTolerance };
+    private static readonly SimulationOptions Options = new() { RelativeTolerance = RunTolerance, ManyNodes = true };
 
     /// <summary>Follows a start.</summary>
     /// <param name="start">The start.</param>

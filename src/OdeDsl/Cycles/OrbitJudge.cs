@@ -94,7 +94,7 @@ internal sealed class OrbitJudge(
         region.Wrap(orbit.State);
         try
         {
-            var options = new SimulationOptions { RelativeTolerance = Math.Max(tolerance, 1e-11) };
+            var options = new SimulationOptions { RelativeTolerance = Math.Max(tolerance, 1e-11), ManyNodes = true };
             Trajectory run = system.WithInitialState(orbit.State).Simulate(orbit.SignedPeriod, options, null, cancellation);
             return new OrbitTrace(run, region);
         }

@@ -4,12 +4,15 @@ namespace OdeDsl.Integration;
 internal static class AutomaticChoice
 {
     /// <summary>The method for motion that is not stiff.</summary>
-    public static IntegrationMethod Explicit(double relativeTolerance) =>
-        relativeTolerance > 3e-4 ? IntegrationMethod.Tsitouras54 : IntegrationMethod.DormandPrince853;
+    public static IntegrationMethod Explicit(IntegrationOptions options) =>
+        options.ManyNodes ? IntegrationMethod.DormandPrince54
+        : options.RelativeTolerance > 3e-4 ? IntegrationMethod.Tsitouras54
+        : IntegrationMethod.DormandPrince853;
 
     /// <summary>The method for stiff motion.</summary>
-    public static IntegrationMethod Implicit(double relativeTolerance) =>
-        relativeTolerance > 3e-5 ? IntegrationMethod.Rodas4
-        : relativeTolerance > 3e-8 ? IntegrationMethod.Rodas5P
+    public static IntegrationMethod Implicit(IntegrationOptions options) =>
+        options.ManyNodes ? IntegrationMethod.RadauIIA5
+        : options.RelativeTolerance > 3e-5 ? IntegrationMethod.Rodas4
+        : options.RelativeTolerance > 3e-8 ? IntegrationMethod.Rodas5P
         : IntegrationMethod.RadauIIA;
 }

@@ -3,8 +3,8 @@ namespace OdeDsl.Integration;
 /// <summary>Searches the smallest value of a series inside its steps.</summary>
 internal static class ExtremumSearch
 {
-    /// <summary>Places looked at inside a step: a polynomial of degree four has no more than three extrema.</summary>
-    private const int Places = 6;
+    /// <summary>Places looked at inside a step: a polynomial of degree seven has no more than six extrema.</summary>
+    private const int Places = 10;
 
     /// <summary>Golden section steps: 0.618³⁵ is below the square root of the rounding unit, beyond which values no longer differ.</summary>
     private const int Refinements = 35;

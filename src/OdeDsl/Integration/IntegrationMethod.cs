@@ -45,4 +45,10 @@ public enum IntegrationMethod
     /// The linearly implicit Rosenbrock method of order 5 of Steinebach (2023): for stiff motion at moderate tolerances.
     /// </summary>
     Rodas5P,
+
+    /// <summary>
+    /// The backward differentiation formulas of variable order 1 to 5 and variable step, in the form of Shampine and Reichelt (1997): for large
+    /// stiff systems at loose and moderate tolerances; every crossing starts them anew with order 1.
+    /// </summary>
+    BackwardDifferentiation,
 }

@@ -36,6 +36,12 @@ public abstract record IntegrationOptions
     /// <summary>The number of steps, rejected ones included, after which to give up.</summary>
     public long MaximumSteps { get; init; } = 10_000_000;
 
+    /// <summary>
+    /// Whether the automatic choice keeps to methods of order 5: for analyses that look at a run through the ends of its steps, which methods
+    /// of high order place far apart.
+    /// </summary>
+    internal bool ManyNodes { get; init; }
+
     /// <summary>The absolute tolerances, state by state.</summary>
     internal double[] AbsoluteTolerances(ModelDescription description)
     {

@@ -100,9 +100,9 @@ internal sealed class Motion
         }
     }
 
-    private Stepper Explicit => explicitStepper ??= MakeStepper(AutomaticChoice.Explicit(options.RelativeTolerance));
+    private Stepper Explicit => explicitStepper ??= MakeStepper(AutomaticChoice.Explicit(options));
 
-    private Stepper Implicit => implicitStepper ??= MakeStepper(AutomaticChoice.Implicit(options.RelativeTolerance));
+    private Stepper Implicit => implicitStepper ??= MakeStepper(AutomaticChoice.Implicit(options));
 
     private ReadOnlySpan<double> State => Current.End.AsSpan(0, system.StateCount);
 

@@ -23,6 +23,7 @@ internal sealed class StepperFactory(
             IntegrationMethod.DormandPrince853 => Explicit(field, DormandPrince853Tableau.Instance),
             IntegrationMethod.Rodas4 => Linear(field, Rodas4Tableau.Instance),
             IntegrationMethod.Rodas5P => Linear(field, Rodas5PTableau.Instance),
+            IntegrationMethod.BackwardDifferentiation => new BackwardDifferentiation<TField>(field, norm, statistics),
             IntegrationMethod.RadauIIA5 => Radau(field, RadauOrder.Fixed(RadauCoefficients.Three)),
             IntegrationMethod.RadauIIA9 => Radau(field, RadauOrder.Fixed(RadauCoefficients.Five)),
             IntegrationMethod.RadauIIA13 => Radau(field, RadauOrder.Fixed(RadauCoefficients.Seven)),

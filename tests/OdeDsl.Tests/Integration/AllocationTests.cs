@@ -8,7 +8,7 @@ namespace OdeDsl.Tests.Integration;
 public class AllocationTests
 {
     [Theory]
-    [MemberData(nameof(TestMethods.All), MemberType = typeof(TestMethods))]
+    [MemberData(nameof(TestMethods.AllWithMultistep), MemberType = typeof(TestMethods))]
     public void Steps_allocate_nothing(IntegrationMethod method)
     {
         AssertNothing(DynamicSystem.Of(new Lorenz63()), method, tangentCount: 0, until: 20);

@@ -6,7 +6,7 @@ namespace OdeDsl.Tests.Integration;
 
 public class FailureTests
 {
-    public static TheoryData<IntegrationMethod> Methods => TestMethods.All;
+    public static TheoryData<IntegrationMethod> Methods => TestMethods.AllWithMultistep;
 
     /// <summary>x' = x², x(0) = 1: x = 1 / (1 − t) leaves to infinity at t = 1.</summary>
     private readonly struct BlowUp : IHandWritten<BlowUp>

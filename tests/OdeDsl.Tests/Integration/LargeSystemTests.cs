@@ -87,6 +87,7 @@ public class LargeSystemTests
     [Theory]
     [InlineData(IntegrationMethod.RadauIIA5)]
     [InlineData(IntegrationMethod.Rodas4)]
+    [InlineData(IntegrationMethod.BackwardDifferentiation)]
     [InlineData(IntegrationMethod.Automatic)]
     public void Memory_and_evaluations_grow_in_proportion_to_the_size_up_to_a_hundred_thousand_states(IntegrationMethod method)
     {

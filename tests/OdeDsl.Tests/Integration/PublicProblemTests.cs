@@ -37,7 +37,7 @@ public class PublicProblemTests
 
         foreach (PublicProblem problem in PublicProblem.Stiff)
         {
-            foreach (IntegrationMethod method in (IntegrationMethod[])[.. TestMethods.Implicit, IntegrationMethod.Automatic])
+            foreach (IntegrationMethod method in (IntegrationMethod[])[.. TestMethods.Implicit, IntegrationMethod.BackwardDifferentiation, IntegrationMethod.Automatic])
                 data.Add(problem.Name, method);
         }
 
@@ -49,7 +49,8 @@ public class PublicProblemTests
     public void A_public_problem_reaches_its_reference_in_proportion_to_the_tolerance(string name, IntegrationMethod method)
     {
         PublicProblem problem = Find(name);
-        double loss = Loss.GetValueOrDefault(name, 0);
+        // Errors of many small steps add up.
+        double loss = Loss.GetValueOrDefault(name, 0) + (method == IntegrationMethod.BackwardDifferentiation ? 1.5 : 0);
         double loosest = double.NaN;
         foreach (int digits in new[] { 5, 7, 9 })
         {

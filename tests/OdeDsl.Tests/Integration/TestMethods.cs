@@ -15,6 +15,9 @@ internal static class TestMethods
         IntegrationMethod.Rodas4, IntegrationMethod.Rodas5P,
     ];
 
+    /// <summary>The method of several steps too, which is exact on no parabola: it starts with order 1.</summary>
+    public static TheoryData<IntegrationMethod> AllWithMultistep => [.. Explicit, .. Implicit, IntegrationMethod.BackwardDifferentiation, IntegrationMethod.Automatic];
+
     public static TheoryData<IntegrationMethod> All => [.. Explicit, .. Implicit, IntegrationMethod.Automatic];
 
     public static TheoryData<IntegrationMethod> AllForStiffMotion => [.. Implicit, IntegrationMethod.Automatic];
