@@ -58,7 +58,7 @@ public class FailureTests
     }
 
     [Theory]
-    [MemberData(nameof(Methods))]
+    [MemberData(nameof(TestMethods.All), MemberType = typeof(TestMethods))]
     public void Rates_without_value_beyond_a_time_end_the_run_there(IntegrationMethod method)
     {
         var failure = Assert.Throws<IntegrationException>(
