@@ -49,8 +49,14 @@ public class PublicProblemTests
     public void A_public_problem_reaches_its_reference_in_proportion_to_the_tolerance(string name, IntegrationMethod method)
     {
         PublicProblem problem = Find(name);
-        // Errors of many small steps add up.
-        double loss = Loss.GetValueOrDefault(name, 0) + (method == IntegrationMethod.BackwardDifferentiation ? 2.3 : 0);
+        double loss = Loss.GetValueOrDefault(name, 0) + method switch
+        {
+            // Errors of many small steps add up.
+            IntegrationMethod.BackwardDifferentiation => 2.3,
+            // Without iteration, rounding of the nearly singular equations of E5 (rates over twenty powers of ten) stays in the result.
+            IntegrationMethod.Rodas4 or IntegrationMethod.Rodas5P when name == "E5" => 2,
+            _ => 0,
+        };
         double loosest = double.NaN;
         foreach (int digits in new[] { 5, 7, 9 })
         {
