@@ -10,6 +10,8 @@ internal enum Dependence : byte
     State = 1,
     Time = 2,
     Parameter = 4,
+    Input = 8,
+    Mode = 16,
 }
 
 /// <summary>Finds what each expression of a graph changes with.</summary>
@@ -26,6 +28,8 @@ internal static class Dependences
                 Operator.State or Operator.StateElement => Dependence.State,
                 Operator.Time => Dependence.Time,
                 Operator.Parameter or Operator.ParameterElement => Dependence.Parameter,
+                Operator.Input => Dependence.Input,
+                Operator.Mode => Dependence.Mode,
                 _ => Dependence.None,
             };
             foreach (int operand in node.Operands) dependences[i] |= dependences[operand];

@@ -41,8 +41,18 @@ internal sealed class DerivativeTable
         return new SparseMatrix(_roots.Count, count, [.. entries.OrderBy(static entry => entry.Row).ThenBy(static entry => entry.Column)]);
     }
 
-    public int[] ByTime(CancellationToken cancellationToken) =>
-        Along([new(_graph.Leaf(Operator.Time), _differentiator.One)], cancellationToken);
+    /// <summary>The derivatives by time, explicit and by way of the inputs, whose slopes stand behind them.</summary>
+    public int[] ByTime(int inputCount, CancellationToken cancellationToken)
+    {
+        List<KeyValuePair<int, int>> seeds = [new(_graph.Leaf(Operator.Time), _differentiator.One)];
+        for (int leaf = _graph.Count - 1; leaf >= 0; leaf--)
+        {
+            if (_graph[leaf].Operator == Operator.Input)
+                seeds.Add(new(leaf, _graph.Leaf(Operator.InputSlope, _graph[leaf].Index + inputCount)));
+        }
+
+        return Along([.. seeds], cancellationToken);
+    }
 
     public int[] AlongDirection(int stateCount, CancellationToken cancellationToken) => Along(
         [.. Enumerable.Range(0, stateCount).Select(

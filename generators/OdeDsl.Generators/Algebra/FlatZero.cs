@@ -10,7 +10,7 @@ namespace OdeDsl.Generators.Algebra;
 internal static class FlatZero
 {
     /// <summary>
-    /// The condition that a value vanishes together with its derivatives by state and time, so that it stays zero around the point.
+    /// The condition that a value vanishes together with its derivatives by state, time and input, so that it stays zero around the point.
     /// </summary>
     /// <returns>A condition; the constant false where the value can be seen to vary everywhere, as a plain state does.</returns>
     public static int Condition(ExpressionGraph graph, int value, CancellationToken cancellationToken)
@@ -19,7 +19,7 @@ internal static class FlatZero
         int condition = graph.Binary(Operator.Equal, value, differentiator.Zero);
         foreach (int leaf in Reach.Of(graph, [value]))
         {
-            if (graph[leaf].Operator is not (Operator.State or Operator.StateElement or Operator.Time)) continue;
+            if (graph[leaf].Operator is not (Operator.State or Operator.StateElement or Operator.Time or Operator.Input)) continue;
             Dictionary<int, int> derivatives = differentiator.Along([new(leaf, differentiator.One)], cancellationToken);
             if (!derivatives.TryGetValue(value, out int derivative)) continue;
             if (graph[derivative].Operator == Operator.Constant) return graph.Constant(false);

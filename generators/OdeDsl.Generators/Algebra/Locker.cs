@@ -206,7 +206,7 @@ internal sealed class Locker
     {
         if (_varies.TryGetValue(locked, out bool known)) return known;
         Node node = Graph[locked];
-        bool varies = node.Operator is Operator.State or Operator.StateElement or Operator.Time || node.Operands.Any(Varies);
+        bool varies = node.Operator is Operator.State or Operator.StateElement or Operator.Time or Operator.Input || node.Operands.Any(Varies);
         _varies.Add(locked, varies);
         return varies;
     }

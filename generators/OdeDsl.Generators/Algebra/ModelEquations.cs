@@ -39,6 +39,9 @@ internal sealed class ModelEquations
 
     public bool DependsOnTime { get; private init; }
 
+    /// <summary>What concerns events, if the model has any.</summary>
+    public EventEquations? Events { get; private init; }
+
     public IReadOnlyList<int> LockedRates { get; private init; } = [];
 
     public SparseMatrix StateJacobian { get; private init; } = null!;
@@ -57,17 +60,19 @@ internal sealed class ModelEquations
     {
         ExpressionGraph free = new(model.Nodes);
         int[] rates = [.. model.States.Select(static state => state.Rate)];
-        Locker locker = Locker.Lock(free, rates, cancellationToken);
+        int[] guards = [.. model.Events.Select(static item => item.Value)];
+        Locker locker = Locker.Lock(free, [.. rates, .. guards], cancellationToken);
+        int[] lockedGuards = [.. guards.Select(guard => locker[guard])];
         int[] lockedRates = [.. rates.Select(rate => locker[rate])];
         int[] surfaces = [.. locker.Switches.Select(static function => function.Value)];
-        DerivativeTable derivatives = new(locker.Graph, [.. lockedRates, .. surfaces]);
+        DerivativeTable derivatives = new(locker.Graph, [.. lockedRates, .. surfaces, .. lockedGuards]);
 
         SparseMatrix byState = derivatives.By(Operator.State, model.States.Count, cancellationToken);
-        int[] byTime = derivatives.ByTime(cancellationToken);
+        int[] byTime = derivatives.ByTime(model.Inputs.Count, cancellationToken);
         int[] alongDirection = derivatives.AlongDirection(model.States.Count, cancellationToken);
         SwitchingFunction[] switches = WithQuietDecisions(free, locker.Switches);
         Dependence[] dependences = Dependences.Of(free);
-        int count = lockedRates.Length;
+        int count = lockedRates.Length, beforeGuards = count + surfaces.Length;
         return new ModelEquations(free, locker.Graph)
         {
             Switches = switches,
@@ -77,13 +82,16 @@ internal sealed class ModelEquations
             GenericLockedRates = GenericForms.Of(locker.Graph, lockedRates),
             GenericSwitches = GenericForms.Of(locker.Graph, surfaces),
             FreeDependences = dependences,
-            DependsOnTime = rates.Any(rate => (dependences[rate] & Dependence.Time) != 0),
+            DependsOnTime = rates.Concat(guards).Concat(model.Events.SelectMany(static item => item.States.Concat(item.Modes)))
+                .Any(root => (dependences[root] & Dependence.Time) != 0),
+            Events = guards.Length == 0 ? null : EventEquations.Of(
+                model, free, Rows(byState, beforeGuards, guards.Length), lockedGuards, [.. byTime.Skip(beforeGuards)], cancellationToken),
             LockedRates = lockedRates,
             StateJacobian = Rows(byState, 0, count),
             SwitchingJacobian = Rows(byState, count, surfaces.Length),
             ParameterJacobian = Rows(derivatives.By(Operator.Parameter, model.Parameters.Count, cancellationToken), 0, count),
             TimeDerivative = [.. byTime.Take(count)],
-            SwitchingTimeDerivative = [.. byTime.Skip(count)],
+            SwitchingTimeDerivative = [.. byTime.Skip(count).Take(surfaces.Length)],
             JacobianVectorProduct = [.. alongDirection.Take(count)],
         };
     }

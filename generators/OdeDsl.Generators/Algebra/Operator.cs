@@ -13,6 +13,13 @@ internal enum Operator : byte
     Parameter,
     Time,
 
+    // The numbers behind the parameters. Payload: their place in the same vector.
+    Mode,
+    Input,
+
+    /// <summary>The derivative of an input by time, only in derivatives.</summary>
+    InputSlope,
+
     /// <summary>A direction component, only in Jacobian-vector products. Payload: index.</summary>
     Direction,
 

@@ -374,4 +374,43 @@ internal static partial class Descriptors
         "ODE0126", "A helper can be static",
         "Helper '{0}' uses neither states nor parameters; make it static so that this can be seen",
         Category, DiagnosticSeverity.Info, isEnabledByDefault: true, helpLinkUri: Help + "ODE0126");
+
+    // Modes.
+
+    public static readonly DiagnosticDescriptor ModeType = new(
+        "ODE0085", "A mode must be a condition, a whole number or a number",
+        "Mode '{0}' is of type '{1}'; use bool, int, double, or an enumeration over int or a smaller type",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0085");
+
+    public static readonly DiagnosticDescriptor ModeInitial = new(
+        "ODE0086", "A mode must start with a value of its type",
+        "The initial value of mode '{0}' is not a constant of type '{1}'; give one as the attribute's argument",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0086");
+
+    public static readonly DiagnosticDescriptor ModeRange = new(
+        "ODE0087", "A mode can only have a few values",
+        "Mode '{0}' must start with one of its values, of which there can be 1 to {1}; set 'Lower' and 'Upper' of the attribute, or choose another initial value",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0087");
+
+    // Events.
+
+    public static readonly DiagnosticDescriptor EventGuard = new(
+        "ODE0090", "An event must name a guard",
+        "Event '{0}' names '{1}', but its guard must be a property or method of the model with a body, of type double or bool, that takes nothing or 'double time'",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0090");
+
+    public static readonly DiagnosticDescriptor EventAction = new(
+        "ODE0091", "The action of an event must be a plain method",
+        "Action '{0}' of an event must be an instance method with a body that returns nothing, takes nothing or 'double time', and is neither generic nor overridable",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0091");
+
+    public static readonly DiagnosticDescriptor EventAssignment = new(
+        "ODE0092", "An action sets states and modes only",
+        "'{0}' is not a state or mode that the action '{1}' itself may set; set states and modes of the model, in the action's own body",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0092");
+
+    public static readonly DiagnosticDescriptor ModeValueOutside = new(
+        "ODE0093", "An action must not set a mode to a value outside its range",
+        "Action '{0}' can set mode '{1}' to {2}, which is not one of its values; widen 'Lower' and 'Upper', or use Math.Clamp",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0093");
 }

@@ -16,9 +16,15 @@ internal static class Attributes
     public const string Observable = "Observable";
     public const string Angle = "Angle";
     public const string Table = "Table";
+    public const string Input = "Input";
+    public const string Mode = "Mode";
+    public const string Event = "Event";
+
+    /// <summary>The short names of the attributes of properties that the generator implements.</summary>
+    public static readonly string[] OfNumbers = [State, Parameter, Input, Mode];
 
     /// <summary>The short names of all attributes that mark a member of a model.</summary>
-    public static readonly string[] OfMembers = [State, Parameter, Rate, Observable, Angle];
+    public static readonly string[] OfMembers = [State, Parameter, Input, Mode, Rate, Observable, Event, Angle];
 
     public static AttributeData? Find(ISymbol member, string shortName) =>
         member.GetAttributes().FirstOrDefault(attribute => Is(attribute, shortName));
@@ -51,6 +57,17 @@ internal static class Attributes
     /// <returns>The first argument of the constructor; null if it is missing or has no constant value.</returns>
     public static T? First<T>(AttributeData attribute) =>
         attribute.ConstructorArguments.IsDefaultOrEmpty ? default : Constant<T>(attribute.ConstructorArguments[0]);
+
+    /// <returns>The number of the named argument of an enumeration type; 0 if it is not given.</returns>
+    public static int NamedEnumeration(AttributeData attribute, string name)
+    {
+        foreach (var argument in attribute.NamedArguments)
+        {
+            if (argument.Key == name && argument.Value is { Kind: TypedConstantKind.Enum, Value: int number }) return number;
+        }
+
+        return 0;
+    }
 
     private static T? Constant<T>(TypedConstant constant) =>
         constant.Kind == TypedConstantKind.Primitive && constant.Value is T value ? value : default;

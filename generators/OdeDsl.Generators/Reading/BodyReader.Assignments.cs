@@ -90,6 +90,7 @@ internal sealed partial class BodyReader
             IParameterReferenceOperation { Parameter.RefKind: RefKind.None } parameter => parameter.Parameter,
             _ => null,
         };
+        if (variable is null && IsInAction && target is IMemberReferenceOperation) return SetByAction(target);
         // A local function that changes a variable around it would have an effect beyond its result.
         bool isOwn = variable is not null
             && (_active[_active.Count - 1] is not IMethodSymbol { MethodKind: MethodKind.LocalFunction } function

@@ -57,7 +57,7 @@ internal sealed partial class BodyReader
         if (_active.Contains(definition, SymbolEqualityComparer.Default)) return Recursion(definition);
 
         // The value of a local function depends on variables around it, and while static members are set their order matters.
-        bool isReusable = definition is not IMethodSymbol { MethodKind: MethodKind.LocalFunction } && _initializing.Count == 0;
+        bool isReusable = definition is not IMethodSymbol { MethodKind: MethodKind.LocalFunction } && _initializing.Count == 0 && !IsInAction;
         CallKey key = new(member, new(arguments));
         if (isReusable && _known.TryGetValue(key, out Value? known)) return known;
         Value value = Run(definition, arguments);
@@ -76,7 +76,7 @@ internal sealed partial class BodyReader
         SyntaxNode body = Bodies.Find(definition, _compilation, _cancellation)!;
         int problemsBefore = _problems.Found.Count;
         bool isLocal = definition is IMethodSymbol { MethodKind: MethodKind.LocalFunction };
-        ImmutableDictionary<ISymbol, Value> variables = isLocal ? _flow.Variables : NoVariables;
+        ImmutableDictionary<ISymbol, Value> variables = isLocal ? _flow.Variables : IsInAction ? SetSoFar() : NoVariables;
         if (definition is IMethodSymbol method)
         {
             variables = variables.SetItems(

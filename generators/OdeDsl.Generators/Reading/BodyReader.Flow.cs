@@ -52,7 +52,12 @@ internal sealed partial class BodyReader
             result,
             _conditions.Choose(condition, first.Broken, second.Broken),
             afterBreak,
-            first.Outside);
+            first.Outside)
+        {
+            AfterReturn = !IsInAction || first.Returned == _conditions.False ? second.AfterReturn
+                : second.Returned == _conditions.False ? first.AfterReturn
+                : Join(condition, first.AfterReturn, second.AfterReturn),
+        };
     }
 
     /// <summary>Whether no execution goes on from here.</summary>

@@ -32,8 +32,9 @@ internal sealed partial class BodyReader
         if (LengthOf(operation) is { } length) return length;
         if (!property.IsStatic && !BelongsToModel(operation.Instance, operation, property)) return UnknownValue.Instance;
         if (VectorOrLength(property) is { } vector) return vector;
-        if (_leaves.TryGetValue(property.OriginalDefinition, out int leaf)) return new NumberValue(leaf);
-        if (Attributes.Find(property, Attributes.State) is not null || Attributes.Find(property, Attributes.Parameter) is not null)
+        if (IsInAction && _flow.Variables.TryGetValue(property.OriginalDefinition, out Value? set)) return set;
+        if (_leaves.TryGetValue(property.OriginalDefinition, out Value? leaf)) return leaf;
+        if (Attributes.OfNumbers.Any(name => Attributes.Find(property, name) is not null))
             return UnknownValue.Instance; // Its declaration has a problem that is reported there.
         bool isBaseCall = operation.Syntax is MemberAccessExpressionSyntax { Expression: BaseExpressionSyntax };
         return Reach(property, isBaseCall, operation) is IPropertySymbol reached ? Property(operation, reached) : UnknownValue.Instance;

@@ -35,6 +35,9 @@ internal sealed partial class BodyReader
             case IReturnOperation { Kind: OperationKind.Return, ReturnedValue: { } value }:
                 Return(Evaluate(value));
                 break;
+            case IReturnOperation { Kind: OperationKind.Return, ReturnedValue: null } when IsInAction:
+                ReturnFromAction();
+                break;
             case IConditionalOperation branch:
                 Fork(
                     Condition(branch.Condition),

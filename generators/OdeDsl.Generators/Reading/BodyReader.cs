@@ -27,7 +27,7 @@ internal sealed partial class BodyReader
 
     private readonly INamedTypeSymbol _model;
     private readonly Compilation _compilation;
-    private readonly IReadOnlyDictionary<ISymbol, int> _leaves;
+    private readonly IReadOnlyDictionary<ISymbol, Value> _leaves;
     private readonly VectorTables _vectors;
     private readonly ExpressionGraph _graph;
     private readonly Conditions _conditions;
@@ -40,12 +40,12 @@ internal sealed partial class BodyReader
     private Flow _flow;
     private IOperation? _current;
 
-    /// <param name="leaves">The nodes of the states and parameters.</param>
+    /// <param name="leaves">What the states, parameters, modes and inputs stand for.</param>
     /// <param name="vectors">Vectors and lengths.</param>
     public BodyReader(
         INamedTypeSymbol model,
         Compilation compilation,
-        IReadOnlyDictionary<ISymbol, int> leaves,
+        IReadOnlyDictionary<ISymbol, Value> leaves,
         VectorTables vectors,
         ExpressionGraph graph,
         Problems problems,

@@ -23,8 +23,7 @@ internal sealed class EquationReader(
         foreach (ISymbol member in model.GetMembers())
         {
             cancellation.ThrowIfCancellationRequested();
-            if (Attributes.Find(member, Attributes.State) is not null) continue;
-            if (Attributes.Find(member, Attributes.Parameter) is not null) continue;
+            if (Attributes.OfNumbers.Any(name => Attributes.Find(member, name) is not null)) continue;
             if (Attributes.Find(member, Attributes.Rate) is { } rate) ReadRate(member, rate);
             if (Attributes.Find(member, Attributes.Observable) is { } observable) ReadObservable(member, observable);
         }

@@ -19,4 +19,8 @@ internal sealed record Flow(
     Value? Result,
     int Broken,
     ImmutableDictionary<ISymbol, Value> AfterBreak,
-    int Outside);
+    int Outside)
+{
+    /// <summary>The variables of the executions that returned from an action.</summary>
+    public ImmutableDictionary<ISymbol, Value> AfterReturn { get; init; } = ImmutableDictionary<ISymbol, Value>.Empty;
+}

@@ -23,6 +23,18 @@ internal sealed record ModelDefinition(
     /// <summary>The unit of time, or the empty string.</summary>
     public string TimeUnit { get; init; } = "";
 
+    /// <summary>The modes; they stand behind the parameters in the same vector.</summary>
+    public EquatableArray<ModeDefinition> Modes { get; init; } = EquatableArray<ModeDefinition>.Empty;
+
+    /// <summary>The inputs; they stand behind the modes, and their slopes behind them.</summary>
+    public EquatableArray<InputDefinition> Inputs { get; init; } = EquatableArray<InputDefinition>.Empty;
+
+    /// <summary>The length of that vector.</summary>
+    public int ConstantCount => Parameters.Count + Modes.Count + (2 * Inputs.Count);
+
+    /// <summary>The events, in the order of declaration.</summary>
+    public EquatableArray<EventDefinition> Events { get; init; } = EquatableArray<EventDefinition>.Empty;
+
     /// <summary>The tables that the equations read; nodes name them by position.</summary>
     public EquatableArray<TableDefinition> Tables { get; init; } = EquatableArray<TableDefinition>.Empty;
 
@@ -64,6 +76,44 @@ internal sealed record ParameterDefinition(PropertyDefinition Property, string U
     /// <summary>Whether it is a whole number, which is fixed when a model is made.</summary>
     public bool IsWhole { get; init; }
 }
+
+/// <summary>A mode.</summary>
+/// <param name="Kind">What its values are.</param>
+internal sealed record ModeDefinition(PropertyDefinition Property, ModeKind Kind, long InitialBits);
+
+/// <summary>The types of modes.</summary>
+internal enum ModeKind
+{
+    Number,
+    WholeNumber,
+    Condition,
+    Enumeration,
+}
+
+/// <summary>An event.</summary>
+/// <param name="Name">The name of the action.</param>
+/// <param name="Guard">The name of the guard.</param>
+/// <param name="GuardText">The guard as the user wrote it.</param>
+/// <param name="Text">The action as the user wrote it.</param>
+/// <param name="Direction">The number of the direction.</param>
+/// <param name="Value">The guard's node: a number, 1 or -1 for a condition.</param>
+/// <param name="States">The nodes of the states that the action sets, or leaves.</param>
+/// <param name="Modes">Likewise the modes.</param>
+internal sealed record EventDefinition(
+    string Name,
+    string Summary,
+    string Guard,
+    string GuardText,
+    string Text,
+    int Direction,
+    bool IsTerminal,
+    bool IsCondition,
+    int Value,
+    EquatableArray<int> States,
+    EquatableArray<int> Modes);
+
+/// <summary>An input.</summary>
+internal sealed record InputDefinition(PropertyDefinition Property, string Unit, long ValueBits);
 
 /// <summary>An observable.</summary>
 /// <param name="Name">The member's name, unescaped.</param>

@@ -78,19 +78,16 @@ internal sealed class ModelReader(
         TypeChain chain, EquatableArray<string> takenNames, PropertyReader properties, EquationReader equations)
     {
         ExpressionGraph graph = new();
-        Dictionary<ISymbol, int> leaves = new(SymbolEqualityComparer.Default);
-        foreach (DeclaredState state in properties.States) leaves.Add(state.Symbol, graph.Leaf(Operator.State, leaves.Count));
-        foreach (DeclaredParameter parameter in properties.Parameters)
-            leaves.Add(parameter.Symbol, graph.Leaf(Operator.Parameter, leaves.Count - properties.States.Count));
-
-        BodyReader bodies = new(model, compilation, leaves, properties.Tables, graph, _problems, cancellation);
+        BodyReader bodies = new(model, compilation, ModelLeaves.Of(properties, graph), properties.Tables, graph, _problems, cancellation);
         ISymbol?[] rates = properties.States.Select(state => equations.RateOf(state.Property.Name)).ToArray();
         VectorRateReader vectorRates = new(bodies, properties.Tables, graph, _problems, cancellation);
         SegmentDefinition[][] segments = [.. properties.VectorStates.Select(state =>
             equations.RateOf(state.Property.Name) is { } rate ? vectorRates.Read(state, rate) : WithoutRate(state))];
+        IReadOnlyList<DeclaredEvent> events = new EventReader(model, compilation, _problems, cancellation).Read();
         int?[] results = rates.Concat(equations.Observables.Select(static observable => observable.Member))
             .Select(member => member is null ? null : bodies.Read(member))
             .Concat(segments.SelectMany(static all => all).Select(static segment => segment.Rate < 0 ? (int?)null : segment.Rate))
+            .Concat(events.SelectMany(item => EventResults(item, bodies, properties)))
             .ToArray();
         RequireLengths(properties);
         foreach ((ISymbol? member, int? node) in rates.Concat(equations.Observables.Select(static observable => (ISymbol?)observable.Member)).Zip(results, static (member, node) => (member, node)))
@@ -114,6 +111,10 @@ internal sealed class ModelReader(
             pruned.Renumber(bodies.ConditionTexts),
             takenNames)
         {
+            Modes = new(properties.Modes.Select(static mode => mode.Definition).ToArray()),
+            Inputs = new(properties.Inputs.Select(static input => input.Definition).ToArray()),
+            Events = new(events.Select((item, i) => Define(
+                item, properties, pruned.Results.Skip(rates.Length + equations.Observables.Count + segments.Sum(static all => all.Length)), i)).ToArray()),
             Tables = isSound ? new(bodies.Tables.ToArray()) : EquatableArray<TableDefinition>.Empty,
             TimeUnit = Attributes.Find(model, "OdeModel") is { } mark ? Attributes.Named(mark, "TimeUnit", "") ?? "" : "",
             Vectors = properties.HasVectors
@@ -162,6 +163,23 @@ internal sealed class ModelReader(
         PropertyReader.Bits(parameter.Lower),
         PropertyReader.Bits(parameter.Upper),
         parameter.Lengths);
+
+    /// <summary>The guard's node, then those of the states and modes that the action sets.</summary>
+    private static IEnumerable<int?> EventResults(DeclaredEvent item, BodyReader bodies, PropertyReader properties)
+    {
+        ISymbol[] settable = [.. properties.States.Select(static state => state.Symbol), .. properties.Modes.Select(static mode => mode.Symbol)];
+        int[]? set = bodies.ReadAction(item.Action, settable, properties.Modes);
+        return new[] { bodies.ReadGuard(item.Guard) }.Concat(settable.Select((_, i) => set?[i]));
+    }
+
+    private EventDefinition Define(DeclaredEvent item, PropertyReader properties, IEnumerable<int> results, int index)
+    {
+        int n = properties.States.Count, k = properties.Modes.Count;
+        int[] own = [.. results.Skip(index * (1 + n + k)).Take(1 + n + k)];
+        return new(
+            item.Action.Name, Summaries.Of(item.Action, cancellation), item.Guard.Name, TextOf(item.Guard) is { Length: > 0 } text ? text : item.Guard.Name, TextOf(item.Action), item.Direction,
+            item.IsTerminal, item.IsCondition, own[0], new([.. own.Skip(1).Take(n)]), new([.. own.Skip(1 + n)]));
+    }
 
     private static StateDefinition Define(DeclaredState state, int rate, string text) => new(
         state.Property,

@@ -37,16 +37,20 @@ internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation
             AttributeData? angle = Attributes.Find(member, Attributes.Angle);
             if (angle is not null && state is null)
                 problems.Report(Descriptors.AngleWithoutState, Attributes.Place(angle, member), member.Name);
-            if (member is not IPropertySymbol property || (state ?? parameter) is null) continue;
+            AttributeData? input = Attributes.Find(member, Attributes.Input);
+            AttributeData? mode = Attributes.Find(member, Attributes.Mode);
+            if (member is not IPropertySymbol property || (state ?? parameter ?? input ?? mode) is null) continue;
             if (!HasOneRole(property))
             {
                 FailedStates.Add(member.Name);
                 continue;
             }
 
-            if (property.Type is IArrayTypeSymbol) ReadVector(property, state, parameter, angle);
+            if (property.Type is IArrayTypeSymbol && (state ?? parameter) is not null) ReadVector(property, state, parameter, angle);
             else if (state is not null) ReadState(property, state, angle);
-            else ReadParameter(property, parameter!);
+            else if (parameter is not null) ReadParameter(property, parameter);
+            else if (input is not null) ReadInput(property, input);
+            else ReadMode(property, mode!);
         }
 
         ResolveLengths();
@@ -123,7 +127,7 @@ internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation
     }
 
     /// <returns>What to generate, or null with a problem reported.</returns>
-    private PropertyDefinition? ReadProperty(IPropertySymbol property, string role)
+    private PropertyDefinition? ReadProperty(IPropertySymbol property, string role, bool anyType = false)
     {
         Location place = property.Locations[0];
         PropertyDeclarationSyntax? declaration = property.DeclaringSyntaxReferences
@@ -135,7 +139,7 @@ internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation
         else if (property.IsStatic) problems.Report(Descriptors.PropertyStatic, place, role, property.Name);
         else if (overridable is not null) problems.Report(Descriptors.PropertyOverridable, place, role, property.Name, overridable);
         else if (property.GetMethod is null) problems.Report(Descriptors.PropertyWithoutGetter, place, role, property.Name);
-        else if (!HasUsableType(property, role) || property.RefKind != RefKind.None)
+        else if ((!HasUsableType(property, role) && !anyType) || property.RefKind != RefKind.None)
         {
             Location typePlace = declaration?.Type.GetLocation() ?? place;
             problems.Report(Descriptors.PropertyNotDouble, typePlace, role, property.Name, TypeName(property));

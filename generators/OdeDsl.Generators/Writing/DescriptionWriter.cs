@@ -22,8 +22,11 @@ internal sealed class DescriptionWriter(SourceWriter writer, ModelDefinition mod
         writer.Line($"    TimeUnit = {Literals.Text(model.TimeUnit)},");
         List("States", model.States.Select(StateText));
         List("Parameters", model.Parameters.Select(ParameterText));
+        if (model.Modes.Count > 0) List("Modes", model.Modes.Select(ModeText));
+        if (model.Inputs.Count > 0) List("Inputs", model.Inputs.Select(InputText));
         List("Observables", model.Observables.Select(ObservableText));
         if (model.Tables.Count > 0) List("Tables", model.Tables.Select(TableText));
+        if (model.Events.Count > 0) List("Events", model.Events.Select(EventText));
         List("Switches", equations.Switches.Select(SwitchText));
         writer.Line($"    StateSparsity = {Pattern(equations.StateJacobian)},");
         writer.Line($"    ParameterSparsity = {Pattern(equations.ParameterJacobian)},");
@@ -49,12 +52,23 @@ internal sealed class DescriptionWriter(SourceWriter writer, ModelDefinition mod
         + $"{Number(parameter.ValueBits)}, {Number(parameter.LowerBits)}, {Number(parameter.UpperBits)}, {Literals.Text(parameter.Property.Summary)})"
         + (parameter.IsWhole ? " { IsFixed = true }" : "");
 
+    private static string ModeText(ModeDefinition mode) =>
+        $"new {Namespace}ModeDescription({Literals.Text(mode.Property.Name)}, {Number(mode.InitialBits)}, {Literals.Text(mode.Property.Summary)})";
+
+    private static string InputText(InputDefinition input) =>
+        $"new {Namespace}InputDescription({Literals.Text(input.Property.Name)}, {Literals.Text(input.Unit)}, {Number(input.ValueBits)}, "
+        + $"{Literals.Text(input.Property.Summary)})";
+
     internal static string ObservableText(ObservableDefinition observable) =>
         $"new {Namespace}ObservableDescription({Literals.Text(observable.Name)}, {Literals.Text(observable.Unit)}, "
         + $"{Literals.Text(observable.Text)}, {Literals.Text(observable.Summary)})";
 
     internal static string TableText(TableDefinition table) =>
         $"new {Namespace}TableDescription({Literals.Text(table.Name)}, {Literals.Text(table.Unit)}, {Literals.Text(table.ArgumentUnit)}, {table.Access})";
+
+    private static string EventText(EventDefinition item) =>
+        $"new {Namespace}EventDescription({Literals.Text(item.Name)}, {Literals.Text(item.Guard)}, (global::OdeDsl.GuardDirection){Literals.Integer(item.Direction)}, "
+        + $"{Bool(item.IsTerminal)}, {Bool(item.IsCondition)}, {Literals.Text(item.Text)}, {Literals.Text(item.Summary)})";
 
     private string SwitchText(SwitchingFunction function)
     {

@@ -27,7 +27,7 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
         new Dictionary<string, int>
         {
             ["state"] = model.States.Count,
-            ["parameters"] = model.Parameters.Count,
+            ["parameters"] = model.ConstantCount,
             ["regime"] = equations.Switches.Count,
             ["direction"] = model.States.Count,
         },
@@ -41,7 +41,9 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
         writer.Open($"public readonly struct {name} : global::OdeDsl.Modeling.IOdeSystem");
         new DescriptionWriter(writer, model, equations, _texts).Write();
         Member(new Quantity("Rates", Point, "rates", model.States.Count, equations.Free, Rates(equations.Rates)));
-        if (equations.Switches.Count > 0)
+        // Locked rates never throw, those as written may.
+        bool canThrow = Reach.Of(equations.Free, equations.Rates).Exists(index => Quiet.CanThrow(equations.Free[index].Operator));
+        if (equations.Switches.Count > 0 || canThrow)
             Member(new Quantity("Rates", LockedPoint, "rates", model.States.Count, equations.Locked, Rates(equations.LockedRates)));
         else
             WriteUnlockedRates();
@@ -51,6 +53,7 @@ internal sealed class EquationsWriter(SourceWriter writer, ModelDefinition model
         Member(Vector("JacobianVectorProduct", [.. LockedPoint, "direction"], "product", equations.JacobianVectorProduct));
         Member(Observables());
         WriteSwitching();
+        foreach (Quantity quantity in EventQuantities.Of(model, equations)) Member(quantity);
         WriteGenericForms();
         if (Elimination.Of(equations.StateJacobian, LargestEliminationCount, cancellationToken) is { } elimination)
             new EliminationWriter(writer, model, elimination).Write();

@@ -61,6 +61,7 @@ internal class ExpressionPrinter(
         Operator.BooleanConstant => (node.Payload != 0 ? "true" : "false", Binding.Primary),
         Operator.Side => (leaf(node), Binding.Equality),
         Operator.State or Operator.Parameter or Operator.Time or Operator.Direction or Operator.WholeNumber
+            or Operator.Mode or Operator.Input or Operator.InputSlope
             or Operator.StateElement or Operator.ParameterElement or Operator.DirectionElement => (leaf(node), Binding.Primary),
         Operator.IndexNumber => (leaf(node), Binding.Unary),
         Operator.Add => Infix(node, "+", Binding.Sum),

@@ -125,7 +125,8 @@ internal static class MethodCutter
     private static int BytesOf(Operator operation) => operation switch
     {
         Operator.Constant => 9,
-        Operator.State or Operator.Parameter or Operator.Direction or Operator.WholeNumber => 13,
+        Operator.State or Operator.Parameter or Operator.Direction or Operator.WholeNumber
+            or Operator.Mode or Operator.Input or Operator.InputSlope => 13,
         Operator.Side => 25,
         Operator.Time => 2,
         Operator.Add or Operator.Subtract or Operator.Multiply or Operator.Divide or Operator.Remainder or Operator.Negate => 1,

@@ -21,7 +21,14 @@ internal sealed class ModelNames
         Tables = [.. model.Tables.Select(static table => table.Access)];
         NameScope scope = new(Arguments);
         _states = [.. model.States.Select(state => Claim(scope, Identifiers.Local(state.Property.Name)))];
-        _parameters = [.. model.Parameters.Select(parameter => Claim(scope, Identifiers.Local(parameter.Property.Name)))];
+        // The modes, the inputs and their slopes follow the parameters in the same vector.
+        IEnumerable<string> constants = [
+            .. model.Parameters.Select(static parameter => parameter.Property.Name),
+            .. model.Modes.Select(static mode => mode.Property.Name),
+            .. model.Inputs.Select(static input => input.Property.Name),
+            .. model.Inputs.Select(static input => input.Property.Name + "Slope"),
+        ];
+        _parameters = [.. constants.Select(name => Claim(scope, Identifiers.Local(name)))];
         _directions = [.. model.States.Select(state => Claim(scope, Identifiers.Local(state.Property.Name) + "Direction"))];
     }
 
@@ -32,7 +39,7 @@ internal sealed class ModelNames
     public string? LocalOf(Node leaf) => leaf.Operator switch
     {
         Operator.State => Identifiers.Escape(_states[leaf.Index]),
-        Operator.Parameter => Identifiers.Escape(_parameters[leaf.Index]),
+        Operator.Parameter or Operator.Mode or Operator.Input or Operator.InputSlope => Identifiers.Escape(_parameters[leaf.Index]),
         Operator.Direction => Identifiers.Escape(_directions[leaf.Index]),
         _ => null,
     };
@@ -41,7 +48,7 @@ internal sealed class ModelNames
     public static string Access(Node leaf) => leaf.Operator switch
     {
         Operator.State => $"state[{Literals.Integer(leaf.Index)}]",
-        Operator.Parameter => $"parameters[{Literals.Integer(leaf.Index)}]",
+        Operator.Parameter or Operator.Mode or Operator.Input or Operator.InputSlope => $"parameters[{Literals.Integer(leaf.Index)}]",
         Operator.Direction => $"direction[{Literals.Integer(leaf.Index)}]",
         Operator.Side => $"regime[{Literals.Integer(leaf.Index)}] == 1d",
         Operator.WholeNumber => $"regime[{Literals.Integer(leaf.Index)}]",
@@ -52,7 +59,7 @@ internal sealed class ModelNames
     public static string ArgumentOf(Node leaf) => leaf.Operator switch
     {
         Operator.State => "state",
-        Operator.Parameter => "parameters",
+        Operator.Parameter or Operator.Mode or Operator.Input or Operator.InputSlope => "parameters",
         Operator.Direction => "direction",
         Operator.Side or Operator.WholeNumber => "regime",
         _ => "time",

@@ -32,7 +32,7 @@ internal sealed class ScalarPrinter(
         if (_isScalar.TryGetValue(index, out bool known)) return known;
         Node node = Graph[index];
         bool isScalar = node.IsLeaf
-            ? node.Operator is Operator.State or Operator.Parameter or Operator.Time or Operator.Direction
+            ? node.Operator is (>= Operator.State and <= Operator.Direction)
             : node.Operands.Any(IsScalar);
         _isScalar.Add(index, isScalar);
         return isScalar;

@@ -21,7 +21,7 @@ internal sealed class Assessor(
     {
         Report(AssessmentStage.Rests, 0, "rests");
         bool works = WorksAtInitialState();
-        bool autonomous = !description.DependsOnTime;
+        bool autonomous = !system.DependsOnTime;
         if (!autonomous)
             remarks.Add("The rates depend on time explicitly: rests, limit cycles and margins have no meaning and are not answered. Make the driving a state (for a periodic drive, an angle with a constant rate) to have them assessed.");
         EquilibriumSearchResult rests = autonomous

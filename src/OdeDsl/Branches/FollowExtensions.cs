@@ -70,7 +70,7 @@ public static class FollowExtensions
             throw new ArgumentOutOfRangeException(nameof(to), to, "The value to reach must be a finite number other than the start value.");
         options ??= new BranchOptions();
         BranchOptions.Validate(options, system.StateCount);
-        if (system.Description.DependsOnTime)
+        if (system.DependsOnTime)
             throw new InvalidOperationException($"The rates of {system.Description.Name} depend on time: it has no equilibria to follow.");
         ImmutableArray<double> start = FindStart(system.WithParameter(parameter, from), parameter, options, cancellationToken);
         return BranchFollower.Follow(system, parameter, start.AsSpan(), from, to, options, cancellationToken);

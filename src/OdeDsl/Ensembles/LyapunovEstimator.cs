@@ -115,7 +115,7 @@ internal sealed class LyapunovEstimator
 
     private void Advance(Span<double> target, Span<double> tangents, int count, double duration)
     {
-        double start = system.Description.DependsOnTime ? time : 0;
+        double start = system.DependsOnTime ? time : 0;
         if (count == 0) flow.Advance(target, start, start + duration, cancellation);
         else flow.Advance(target, tangents, count, start, start + duration, cancellation);
         time += duration;

@@ -50,7 +50,13 @@ public static class EquilibriumExtensions
 
     internal static void RequireAutonomous(DynamicSystem system, string consequence)
     {
-        if (!system.Description.DependsOnTime) return;
+        if (!system.DependsOnTime) return;
+        if (!system.Description.DependsOnTime)
+        {
+            throw new InvalidOperationException(
+                $"A signal that varies with time is bound to an input of {system.Description.Name}, so it {consequence}. Bind a constant value instead.");
+        }
+
         throw new InvalidOperationException(
             $"The rates of {system.Description.Name} depend on time explicitly, so it {consequence}. "
             + "Remove the time dependence, or make the driving a state (for a periodic drive, an angle with a constant rate).");

@@ -37,6 +37,15 @@ internal sealed class CrossingRules
         return guard.Sign * direction * Along(guard.Switch, before);
     }
 
+    /// <summary>The gradient of a switching function, and behind it how fast it grows along the motion.</summary>
+    public void Describe(int index, double time, ReadOnlySpan<double> state, Span<double> surface)
+    {
+        CurrentRates(time, state, before);
+        Differentiate(time, state);
+        gradients.AsSpan(index * state.Length, state.Length).CopyTo(surface);
+        surface[state.Length] = Along(index, before);
+    }
+
     /// <summary>Lets the motion meet a guard of a switching function or of a sliding surface; changes the regime or the sliding.</summary>
     /// <param name="guard">The guard.</param>
     /// <param name="time">The time.</param>

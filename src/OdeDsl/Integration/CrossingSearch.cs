@@ -75,7 +75,7 @@ internal sealed class CrossingSearch
         EndsOnSurface = false;
         for (int guard = 0; guard < count; guard++)
         {
-            EndsOnSurface |= guard != guards.SectionIndex && Value(guard, Places - 1) <= 0;
+            EndsOnSurface |= guard < guards.SectionIndex && Value(guard, Places - 1) <= 0;
             if (!MayCross(guard)) continue;
             if (isMinute)
             {
@@ -142,7 +142,8 @@ internal sealed class CrossingSearch
         return lowest <= highest - lowest;
     }
 
-    private bool StartsArmed(int guard) => Value(guard, 0) > 0 && !(guard == guards.SectionIndex && guards.StartsOnSection);
+    /// <summary>Whether a guard was positive where the step searched last starts.</summary>
+    public bool StartsArmed(int guard) => Value(guard, 0) > 0 && !guards.IsLeft(guard);
 
     private void SearchGuard(int guard)
     {

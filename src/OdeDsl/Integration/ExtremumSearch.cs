@@ -15,8 +15,10 @@ internal static class ExtremumSearch
     public static Extremum Find(Series series, int sign)
     {
         double best = sign * series.Values[0], time = series.Times[0];
+        if (sign * series.Final < best) (best, time) = (sign * series.Final, series.Times[^1]);
         for (int step = 0; step < series.StepCount; step++)
         {
+            if (series.IsJump(step)) continue;
             double previous = double.PositiveInfinity, here = sign * series.Values[step];
             for (int place = 0; place <= Places; place++)
             {

@@ -122,6 +122,10 @@ public sealed class Flow
                 StepStatus status = motion.Step(to);
                 if (status != StepStatus.Accepted) throw MotionFailure.Of(status, motion, n, null);
                 reached = motion.ReachedSection;
+                if (!motion.EventsDue) continue;
+                status = motion.Fire();
+                if (status == StepStatus.Accepted && motion.IsOver && motion.Time != to) status = StepStatus.TerminalEvent;
+                if (status != StepStatus.Accepted) throw MotionFailure.Of(status, motion, n, null);
             }
         }
         catch (Exception thrown) when (thrown is not IIntegrationFailure)

@@ -14,6 +14,9 @@ internal enum GuardKind
 
     /// <summary>A section the caller asked for.</summary>
     Section,
+
+    /// <summary>The guard of an event; the number of the event takes the place of the switch.</summary>
+    Event,
 }
 
 /// <summary>A quantity that is positive while a motion may go on as it is: m = Sign (g − Surface) for a switching function g.</summary>

@@ -13,6 +13,7 @@ internal sealed class GuardSet
     private readonly DynamicSystem system;
     private readonly double[] regime;
     private readonly SlidingSurface sliding;
+    private readonly EventSet events;
     private readonly DescriptionList<SwitchDescription> switches;
     private readonly SwitchKind[] kinds;
     private readonly int[] wholeNumbers;
@@ -20,8 +21,10 @@ internal sealed class GuardSet
     private readonly double[] gradients;
     private readonly int slidingStart;
 
-    public GuardSet(DynamicSystem system, double[] regime, SlidingSurface sliding)
+    public GuardSet(DynamicSystem system, double[] regime, SlidingSurface sliding, EventSet events)
     {
+        this.events = events;
+        Leaves = new bool[events.Slots.Length];
         this.system = system;
         this.regime = regime;
         this.sliding = sliding;
@@ -34,10 +37,10 @@ internal sealed class GuardSet
     }
 
     /// <summary>The number of guards, those that are off included.</summary>
-    public int Count => slidingStart + 3;
+    public int Count => slidingStart + 3 + events.Slots.Length;
 
     /// <summary>Whether there is anything to watch.</summary>
-    public bool Any => kinds.Length > 0 || Section is not null;
+    public bool Any => kinds.Length > 0 || Section is not null || events.Any;
 
     /// <summary>A section to watch.</summary>
     public Section? Section { get; set; }
@@ -47,6 +50,12 @@ internal sealed class GuardSet
 
     /// <summary>Whether the motion starts on the section, to within the tolerances: it must leave it first.</summary>
     public bool StartsOnSection { get; set; }
+
+    /// <summary>Whether the motion stands on the guard of an event that has just happened, for each of the events' guards: it must leave it first.</summary>
+    public bool[] Leaves { get; }
+
+    /// <summary>Whether a guard does not count at the start of a step because the motion stands on it.</summary>
+    public bool IsLeft(int index) => index == SectionIndex ? StartsOnSection : index > SectionIndex && Leaves[index - SectionIndex - 1];
 
     /// <summary>The position of the section's guard.</summary>
     public int SectionIndex => slidingStart + 2;
@@ -74,6 +83,17 @@ internal sealed class GuardSet
         }
 
         if (Section is { } section) values[slidingStart + 2] = SectionSide * section.Value(state);
+        if (events.Slots.Length == 0) return;
+        ReadOnlySpan<double> guarded = events.Evaluate(time, state);
+        for (int i = 0; i < events.Slots.Length; i++) values[SectionIndex + 1 + i] = events.Slots[i].Sign * guarded[events.Slots[i].Switch];
+    }
+
+    /// <summary>Whether a point lies on a surface of a switching function, to within rounding.</summary>
+    public bool IsOnSurface(int index, double time, ReadOnlySpan<double> state)
+    {
+        system.SwitchingFunctions(time, state, regime, functions);
+        double level = kinds[index] == SwitchKind.WholeNumber ? Math.Round(functions[index]) : 0;
+        return Math.Abs(functions[index] - level) <= Rounding(index, time, state);
     }
 
     /// <summary>How far rounding of the state may move a guard's value.</summary>
@@ -81,6 +101,7 @@ internal sealed class GuardSet
     {
         const double Units = 64 * 2.220446049250313e-16;
         Guard guard = this[index];
+        if (guard.Kind == GuardKind.Event) return Units * events.Sensitivity(guard.Switch, time, state);
         double sum = 0;
         if (guard.Kind == GuardKind.Section)
         {
@@ -102,6 +123,7 @@ internal sealed class GuardSet
         {
             if (index == slidingStart) return new Guard(GuardKind.SlidingEndsBelow, sliding.Switch, 0, 0);
             if (index == slidingStart + 1) return new Guard(GuardKind.SlidingEndsAbove, sliding.Switch, 0, 0);
+            if (index > SectionIndex) return events.Slots[index - SectionIndex - 1];
             if (index > slidingStart) return new Guard(GuardKind.Section, -1, SectionSide, 0);
             if (index >= kinds.Length)
             {

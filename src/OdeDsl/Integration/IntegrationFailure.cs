@@ -30,6 +30,17 @@ public enum IntegrationFailure
     /// <summary>The argument of a table that does not extrapolate left its knots.</summary>
     OutsideTable,
 
+    /// <summary>
+    /// Events follow one another ever faster and accumulate at this time (Zeno), or an action leaves the motion on its own guard.
+    /// </summary>
+    EventsAccumulate,
+
+    /// <summary>A terminal event ended the motion before the time that an analysis asked for.</summary>
+    TerminalEvent,
+
+    /// <summary>Time was to run backwards in a model with events, whose actions cannot be undone.</summary>
+    EventsInReverse,
+
     /// <summary>The caller cancelled the run.</summary>
     Cancelled,
 }

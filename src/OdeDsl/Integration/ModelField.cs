@@ -11,15 +11,17 @@ internal readonly struct ModelField<TSystem> : IVectorField
     private const int LargestWhole = 1000;
 
     private readonly double[] parameters;
+    private readonly InputSignals? inputs;
     private readonly double[] regime;
     private readonly SlidingSurface sliding;
     private readonly JacobianStructure structure;
     private readonly JacobianStructure slidingStructure;
     private readonly double[] otherSide;
 
-    public ModelField(DynamicSystem system, double[] parameters, double[] regime, SlidingSurface sliding)
+    public ModelField(DynamicSystem system, double[] regime, SlidingSurface sliding)
     {
-        this.parameters = parameters;
+        parameters = system.Constants;
+        inputs = system.Signals;
         this.regime = regime;
         this.sliding = sliding;
         Dimension = system.StateCount;
@@ -42,24 +44,28 @@ internal readonly struct ModelField<TSystem> : IVectorField
 
     public void Rates(double time, ReadOnlySpan<double> y, Span<double> rates)
     {
+        inputs?.Refresh(time, parameters);
         if (sliding.IsActive) sliding.Rates(time, y, rates);
         else TSystem.Rates(time, y, parameters, regime, rates);
     }
 
     public void TimeDerivative(double time, ReadOnlySpan<double> y, double scale, Span<double> derivative)
     {
+        inputs?.RefreshWithSlopes(time, parameters);
         if (sliding.IsActive) sliding.TimeDerivative(time, y, scale, derivative);
         else TSystem.TimeDerivative(time, y, parameters, regime, derivative);
     }
 
     public void DirectionalDerivative(double time, ReadOnlySpan<double> y, ReadOnlySpan<double> direction, Span<double> product)
     {
+        inputs?.Refresh(time, parameters);
         if (sliding.IsActive) sliding.DirectionalDerivative(time, y, direction, product);
         else TSystem.JacobianVectorProduct(time, y, parameters, regime, direction, product);
     }
 
     public void Jacobian(double time, ReadOnlySpan<double> y, Span<double> jacobian)
     {
+        inputs?.Refresh(time, parameters);
         if (!sliding.IsActive) JacobianHere(time, y, jacobian);
         else if (slidingStructure.Pattern is null) sliding.Jacobian(time, y, jacobian);
         else MixedJacobian(time, y, jacobian);

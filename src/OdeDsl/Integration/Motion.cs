@@ -7,7 +7,7 @@ namespace OdeDsl.Integration;
 /// motion begins or ends to slide. Reusable; nothing is allocated per step once a method has been used. Callers own the loop
 /// over steps.
 /// </summary>
-internal sealed class Motion
+internal sealed partial class Motion
 {
     /// <summary>Meetings at one time, to within rounding, after which the motion is taken to accumulate; per switch as many again.</summary>
     private const int MeetingsAtOneTime = 16;
@@ -43,20 +43,24 @@ internal sealed class Motion
     private bool isStart;
     private int released;
     private double guardedStep = double.PositiveInfinity;
+    private double nextKink;
+    private int lockedDirection;
     private double meetingTime;
     private int meetings;
 
     public Motion(DynamicSystem system, IntegrationOptions options, int tangentCount)
     {
         options.Validate();
-        this.system = system;
+        this.system = system = system.ForRun();
         this.options = options;
         this.tangentCount = tangentCount;
         absolute = options.AbsoluteTolerances(system.Description);
         norm = new ErrorNorm(options.RelativeTolerance, absolute, tangentCount);
         regime = new double[system.SwitchCount];
         sliding = new SlidingSurface(system, regime, Array.ConvertAll(absolute, value => value / options.RelativeTolerance));
-        guards = new GuardSet(system, regime, sliding);
+        events = new EventSet(system, regime, sliding);
+        (initialModes, surface, rising) = (system.Modes.ToArray(), new double[system.StateCount + 1], new bool[events.Slots.Length]);
+        guards = new GuardSet(system, regime, sliding, events);
         search = new CrossingSearch(guards, system.StateCount);
         rules = new CrossingRules(system, regime, sliding);
         projection = new SurfaceProjection(system, regime, absolute, options.RelativeTolerance * OnSurface, OnSurface);
@@ -112,7 +116,10 @@ internal sealed class Motion
     /// <param name="section">A section to stop at, or <see langword="null"/>.</param>
     public void Begin(double time, ReadOnlySpan<double> position, Section? section = null)
     {
+        LockInputs(time, direction: 1);
+        if (initialModes.Length > 0) system.SetModes(initialModes);
         system.Regime(time, position[..system.StateCount], regime);
+        BeginEvents(time, position[..system.StateCount]);
         sliding.End();
         released = -1;
         meetings = 0;
@@ -134,18 +141,26 @@ internal sealed class Motion
     {
         NewCrossings.Clear();
         guards.Direction = limit < Time ? -1 : 1;
+        if (guards.Direction < 0 && events.Any) return StepStatus.EventsInReverse;
+        if (guards.Direction != lockedDirection)
+        {
+            LockInputs(Time, guards.Direction);
+            if (isStart) system.Regime(Time, State, regime);
+        }
+
         while (true)
         {
             if (unsettled)
             {
                 StepStatus settled = Settle();
-                if (settled != StepStatus.Accepted) return settled;
+                if (settled != StepStatus.Accepted || EventsDue) return settled;
             }
 
             if (options.Method == IntegrationMethod.Automatic && Current.SuggestsChange) ChangeMethod();
-            StepStatus status = Current.Step(limit);
+            StepStatus status = Current.Step(guards.Direction > 0 ? Math.Min(limit, nextKink) : Math.Max(limit, nextKink));
             if (status is StepStatus.NotFinite or StepStatus.StepTooSmall && TableLeft is null && MeetSurfaceAhead()) continue;
-            if (status != StepStatus.Accepted || !guards.Any) return status;
+            if (status != StepStatus.Accepted) return status;
+            if (!guards.Any) break;
             released = -1;
             SearchOutcome outcome = search.Search(Current);
             if (outcome == SearchOutcome.Nothing) break;
@@ -165,11 +180,18 @@ internal sealed class Motion
                 break;
             }
 
+            if (guard.Kind == GuardKind.Event)
+            {
+                MeetEvents(search.Found);
+                break;
+            }
+
             status = Meet(guard);
             if (status != StepStatus.Accepted) return status;
-            if (Current.EndTime != Current.StartTime) break;
+            if (Current.EndTime != Current.StartTime || EventsDue) break;
         }
 
+        if (HasFallenBack(search.Found)) return StepStatus.EventsAccumulate;
         Finish();
         return StepStatus.Accepted;
     }
@@ -191,12 +213,66 @@ internal sealed class Motion
 
     private void Finish()
     {
+        if (Time == nextKink) PassKink();
+        if (!guards.Any) return;
         unsettled |= search.EndsOnSurface;
         if (double.IsFinite(guardedStep)) LimitSteps(guardedStep * GuardedGrowth);
         guards.StartsOnSection = false;
         if (guards.Section is { } section && guards.SectionSide == 0) guards.SectionSide = Math.Sign(section.Value(State));
         Slid |= sliding.IsActive;
         if (sliding.IsActive && projection.Apply(sliding.Switch, sliding.Surface, Time, Current.End.AsSpan(0, system.StateCount))) Current.EndMoved();
+    }
+
+    private void LockInputs(double time, int direction)
+    {
+        lockedDirection = direction;
+        nextKink = system.Signals?.Lock(time, direction) ?? direction * double.PositiveInfinity;
+    }
+
+    // The inputs have another formula beyond a kink. Where they jump, conditions may find themselves on the other side without a crossing.
+    private void PassKink()
+    {
+        KeepContinuation();
+        LockInputs(Time, guards.Direction);
+        if (!system.Signals!.CanJump)
+        {
+            Current.EndMoved();
+            return;
+        }
+
+        Current.FieldChanged();
+        DecideAnew();
+        surfaceMet = false;
+        events.Look(Time, State);
+    }
+
+    // After a jump of the inputs or of the state, every condition is decided as at a start.
+    private void DecideAnew()
+    {
+        if (system.SwitchCount == 0) return;
+        if (sliding.IsActive)
+        {
+            NewCrossings.Add(new Crossing(Time, sliding.Switch, sliding.EntryBelow, sliding.EntryAbove, CrossingKind.SlidingEnded));
+            sliding.End();
+        }
+
+        double[] before = [.. regime];
+        system.Regime(Time, State, regime);
+        for (int i = 0; i < before.Length; i++)
+        {
+            if (before[i] == regime[i] || (double.IsNaN(before[i]) && double.IsNaN(regime[i]))) continue;
+            if (Math.Abs(before[i] - regime[i]) == 1 && guards.IsOnSurface(i, Time, State))
+            {
+                // To within rounding either side is right, and the motion may just have come to this one.
+                regime[i] = before[i];
+                continue;
+            }
+
+            NewCrossings.Add(new Crossing(Time, i, before[i], regime[i], CrossingKind.Passed));
+            Statistics.Crossings++;
+        }
+
+        unsettled = true;
     }
 
     // Lets the motion meet every surface it stands on and runs at, until it can leave.
@@ -212,6 +288,7 @@ internal sealed class Motion
             if (status != StepStatus.Accepted) return status;
         }
 
+        if (isStart) events.Begin(Time, State);
         // A start on a surface is put on the side it moves to: not a crossing, unless it slides.
         if (isStart) NewCrossings.RemoveAll(static crossing => crossing.Kind == CrossingKind.Passed);
         isStart = false;
@@ -234,11 +311,10 @@ internal sealed class Motion
 
     private StepStatus Meet(Guard guard, bool forced = false)
     {
-        bool sameTime = meetings > 0 && Math.Abs(Time - meetingTime) <= SameTime * Ulp(Time);
-        if (!sameTime) (meetingTime, meetings) = (Time, 0);
-        if (++meetings > MeetingsAtOneTime * (1 + system.SwitchCount)) return StepStatus.CrossingsAccumulate;
-        // Some continuations need more rates: those of the regime in which the step was taken.
-        if (Current.EndTime != Current.StartTime) Current.EnsureDense();
+        if (!CountMeeting()) return StepStatus.CrossingsAccumulate;
+        KeepContinuation();
+        surfaceMet = events.Any && guard.Kind == GuardKind.Surface;
+        if (surfaceMet) rules.Describe(guard.Switch, Time, State, surface);
         StepStatus status = rules.Meet(guard, Time, Current.End.AsSpan(0, Current.Dimension), guards.Direction, forced, out Crossing? crossing);
         if (crossing is not { } what) return status;
         NewCrossings.Add(what);
@@ -247,7 +323,21 @@ internal sealed class Motion
         Slid |= what.Kind == CrossingKind.SlidingBegan;
         Current.FieldChanged();
         unsettled = true;
+        events.Look(Time, State);
         return status;
+    }
+
+    // Some continuations need more rates: those of the regime, modes and inputs in which the step was taken.
+    private void KeepContinuation()
+    {
+        if (Current.EndTime != Current.StartTime) Current.EnsureDense();
+    }
+
+    private bool CountMeeting()
+    {
+        bool sameTime = meetings > 0 && Math.Abs(Time - meetingTime) <= SameTime * Ulp(Time);
+        if (!sameTime) (meetingTime, meetings) = (Time, 0);
+        return ++meetings <= MeetingsAtOneTime * (1 + system.SwitchCount + events.Slots.Length);
     }
 
     // Ends the step at the guard found: the step is taken again to end there, and its end corrected until the guard vanishes to rounding.

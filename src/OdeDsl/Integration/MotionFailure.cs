@@ -25,6 +25,12 @@ internal static class MotionFailure
             StepStatus.SlidingOnSeveralSurfaces => (
                 IntegrationFailure.SlidingOnSeveralSurfaces,
                 "the motion would slide along the surfaces of two conditions at once, for which there is no unique continuation."),
+            StepStatus.EventsAccumulate => (
+                IntegrationFailure.EventsAccumulate,
+                "events follow one another without end while time stands still; give the model a mode for what comes after (a ball at rest)."),
+            StepStatus.TerminalEvent => (IntegrationFailure.TerminalEvent, "a terminal event ended the motion before the time asked for."),
+            StepStatus.EventsInReverse => (
+                IntegrationFailure.EventsInReverse, "the actions of events cannot be undone, so time cannot run backwards in this model."),
             _ => (
                 IntegrationFailure.StepTooSmall,
                 "the tolerance asks for steps too small to change the time; the solution may leave to infinity here, or a rate may jump."),

@@ -1,4 +1,5 @@
 using System.Globalization;
+using OdeDsl.Modeling;
 
 namespace OdeDsl.Integration;
 
@@ -17,7 +18,7 @@ public sealed class Series
         this.stateIndex = stateIndex;
         this.observableIndex = observableIndex;
         Values = new double[run.Store.NodeCount];
-        for (int node = 0; node < Values.Length; node++) Values[node] = Evaluate(run.Store.Times[node], run.Store.State(node));
+        for (int node = 0; node < Values.Length; node++) Values[node] = Evaluate(run.SystemAt(node), run.Store.Times[node], run.Store.State(node));
     }
 
     /// <summary>The name of the state or observable.</summary>
@@ -77,18 +78,20 @@ public sealed class Series
         Span<double> state = stackalloc double[Trajectory.SmallStateCount];
         if (run.StateCount > state.Length) state = new double[run.StateCount];
         run.Store.Evaluate(step, theta, state);
-        return Evaluate(run.Store.TimeAt(step, theta), state[..run.StateCount]);
+        return Evaluate(run.SystemAt(theta >= 1 ? step + 1 : step), run.Store.TimeAt(step, theta), state[..run.StateCount]);
     }
+
+    internal bool IsJump(int step) => run.Store.IsJump(step);
 
     internal double TimeAt(int step, double theta) => run.Store.TimeAt(step, theta);
 
-    private double Evaluate(double time, ReadOnlySpan<double> state)
+    private double Evaluate(DynamicSystem system, double time, ReadOnlySpan<double> state)
     {
         if (stateIndex >= 0) return state[stateIndex];
         Span<double> values = stackalloc double[Trajectory.SmallStateCount];
         int count = run.System.Description.Observables.Length;
         if (count > values.Length) values = new double[count];
-        run.System.Observables(time, state, values[..count]);
+        system.Observables(time, state, values[..count]);
         return values[observableIndex];
     }
 }

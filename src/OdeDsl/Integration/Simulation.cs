@@ -16,13 +16,19 @@ internal static class Simulation
         try
         {
             motion.Begin(options.From, system.InitialState);
-            while (motion.Time != until)
+            while (motion.Time != until && !motion.IsOver)
             {
                 if (cancellationToken.IsCancellationRequested)
                     throw MotionFailure.Cancelled(motion, system.StateCount, run, cancellationToken);
                 StepStatus status = motion.Step(until);
                 // A motion that cannot go on beyond a surface has made its way up to there.
                 if (motion.Time != run.EndTime) run.Append(motion.Current);
+                if (status == StepStatus.Accepted && motion.EventsDue)
+                {
+                    status = motion.Fire();
+                    if (status == StepStatus.Accepted) run.Append(motion.NewEvents);
+                }
+
                 foreach (Crossing crossing in motion.NewCrossings) run.Append(crossing);
                 if (status != StepStatus.Accepted) throw MotionFailure.Of(status, motion, system.StateCount, run);
                 double done = (motion.Time - options.From) / (until - options.From);

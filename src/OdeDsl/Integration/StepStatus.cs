@@ -26,4 +26,13 @@ internal enum StepStatus
 
     /// <summary>Two surfaces attract at once.</summary>
     SlidingOnSeveralSurfaces,
+
+    /// <summary>Events without end at one time.</summary>
+    EventsAccumulate,
+
+    /// <summary>A terminal event came before the end that was asked for.</summary>
+    TerminalEvent,
+
+    /// <summary>Time runs backwards in a model with events.</summary>
+    EventsInReverse,
 }

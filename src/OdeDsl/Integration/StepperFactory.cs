@@ -10,7 +10,7 @@ internal sealed class StepperFactory(
     public Stepper Run<TSystem>(DynamicSystem system)
         where TSystem : struct, IOdeSystem
     {
-        var field = new ModelField<TSystem>(system, system.Parameters.ToArray(), regime, sliding);
+        var field = new ModelField<TSystem>(system, regime, sliding);
         return tangentCount == 0 ? Make(field) : Make(new VariationalField<ModelField<TSystem>>(field, tangentCount));
     }
 

@@ -14,6 +14,8 @@ public sealed class Trajectory
     internal const int SmallStateCount = 64;
 
     private readonly List<Crossing> crossings = [];
+    private readonly List<EventOccurrence> events = [];
+    private readonly List<(int Node, DynamicSystem System)> systems = [];
     private readonly List<IntegrationMethod> methods = [];
 
     internal Trajectory(DynamicSystem system, double time, IntegrationStatistics statistics)
@@ -46,6 +48,12 @@ public sealed class Trajectory
 
     /// <summary>The meetings with surfaces of switching functions, in order.</summary>
     public IReadOnlyList<Crossing> Crossings => crossings;
+
+    /// <summary>The events, in order. At the time of a jump the state is that after it.</summary>
+    public IReadOnlyList<EventOccurrence> Events => events;
+
+    /// <summary>The terminal event that ended the run, or <see langword="null"/> if none did.</summary>
+    public EventOccurrence? EndedBy => events.Count > 0 && System.Description.Events[events[^1].Event].IsTerminal ? events[^1] : null;
 
     /// <summary>The methods in the order of their first use.</summary>
     public IReadOnlyList<IntegrationMethod> MethodsUsed => methods;
@@ -153,8 +161,8 @@ public sealed class Trajectory
         }
 
         int step = Store.StepOf(time);
-        if (time == Times[step]) Store.State(step).CopyTo(state);
-        else if (time == Times[step + 1]) Store.State(step + 1).CopyTo(state);
+        if (time == Times[step + 1]) Store.State(step + 1).CopyTo(state);
+        else if (time == Times[step]) Store.State(step).CopyTo(state);
         else Store.Evaluate(step, Store.Theta(step, time), state);
     }
 
@@ -194,6 +202,29 @@ public sealed class Trajectory
     }
 
     internal void Append(Crossing crossing) => crossings.Add(crossing);
+
+    /// <summary>Adds events that happened where the run has arrived, and the jump they make.</summary>
+    internal void Append(IReadOnlyList<EventOccurrence> happened)
+    {
+        events.AddRange(happened);
+        EventOccurrence last = happened[^1];
+        Store.AppendJump(last.After.AsSpan());
+        if (last.Modes.Length > 0) systems.Add((Store.NodeCount - 1, System.WithModes(last.Modes.AsSpan())));
+    }
+
+    /// <summary>The system with the modes that it has from a node on.</summary>
+    internal DynamicSystem SystemAt(int node)
+    {
+        int low = 0, high = systems.Count;
+        while (low < high)
+        {
+            int middle = (low + high) / 2;
+            if (systems[middle].Node <= node) low = middle + 1;
+            else high = middle;
+        }
+
+        return low == 0 ? System : systems[low - 1].System;
+    }
 
     internal void RequireInside(double time)
     {

@@ -38,6 +38,22 @@ internal sealed class TrajectoryStore(int stateCount, double time, ReadOnlySpan<
         NodeCount++;
     }
 
+    /// <summary>Adds a jump: a step that takes no time.</summary>
+    public void AppendJump(ReadOnlySpan<double> state)
+    {
+        int step = NodeCount - 1, stride = DenseStep.CoefficientCount * stateCount;
+        Grow(ref times, NodeCount + 1);
+        Grow(ref states, (NodeCount + 1) * stateCount);
+        Grow(ref coefficients, (step + 1) * stride);
+        times[NodeCount] = times[NodeCount - 1];
+        state.CopyTo(states.AsSpan(NodeCount * stateCount));
+        coefficients.AsSpan(step * stride, stride).Clear();
+        NodeCount++;
+    }
+
+    /// <summary>Whether a step is a jump.</summary>
+    public bool IsJump(int step) => times[step + 1] == times[step];
+
     /// <summary>The step whose times hold a time.</summary>
     public int StepOf(double time)
     {
@@ -53,8 +69,8 @@ internal sealed class TrajectoryStore(int stateCount, double time, ReadOnlySpan<
         return low;
     }
 
-    /// <summary>Where a time lies inside a step: 0 at its start, 1 at its end.</summary>
-    public double Theta(int step, double time) => (time - times[step]) / (times[step + 1] - times[step]);
+    /// <summary>Where a time lies inside a step: 0 at its start, 1 at its end and behind a jump.</summary>
+    public double Theta(int step, double time) => IsJump(step) ? 1 : (time - times[step]) / (times[step + 1] - times[step]);
 
     /// <summary>The time at a place inside a step.</summary>
     public double TimeAt(int step, double theta) =>

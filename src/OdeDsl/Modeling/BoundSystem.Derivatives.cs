@@ -6,14 +6,14 @@ internal sealed partial class BoundSystem<TSystem>
     public override bool HasHigherDerivatives => TSystem.HasGenericForms;
 
     public override void StateJacobianValues(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> regime, Span<double> values) =>
-        TSystem.StateJacobianValues(time, state, Parameters, regime, values);
+        TSystem.StateJacobianValues(time, state, ConstantsAt(time), regime, values);
 
     public override void ParameterJacobianValues(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> regime, Span<double> values) =>
-        TSystem.ParameterJacobianValues(time, state, Parameters, regime, values);
+        TSystem.ParameterJacobianValues(time, state, ConstantsAt(time), regime, values);
 
     public override void JacobianVectorProduct(
         double time, ReadOnlySpan<double> state, ReadOnlySpan<double> regime, ReadOnlySpan<double> direction, Span<double> product) =>
-        TSystem.JacobianVectorProduct(time, state, Parameters, regime, direction, product);
+        TSystem.JacobianVectorProduct(time, state, ConstantsAt(time), regime, direction, product);
 
     public override void SecondDerivative(
         double time, ReadOnlySpan<double> state, ReadOnlySpan<double> regime, ReadOnlySpan<double> u, ReadOnlySpan<double> v, Span<double> result) =>
@@ -34,7 +34,7 @@ internal sealed partial class BoundSystem<TSystem>
         HigherDerivatives<TSystem>.Mixed(At(time, state, regime), Direction(u), q[..ParameterCount], result[..StateCount]);
 
     private HigherDerivatives<TSystem>.Place At(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> regime) =>
-        new(time, state[..StateCount], Parameters, regime);
+        new(time, state[..StateCount], ConstantsAt(time), regime);
 
     private ReadOnlySpan<double> Direction(ReadOnlySpan<double> direction) => direction[..StateCount];
 }

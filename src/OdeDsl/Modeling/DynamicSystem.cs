@@ -10,16 +10,17 @@ namespace OdeDsl.Modeling;
 /// </remarks>
 public abstract partial class DynamicSystem
 {
-    private readonly double[] parameters;
     private readonly double[] initialState;
 
-    private protected DynamicSystem(ModelDescription description, double[] parameters, double[] initialState)
+    private protected DynamicSystem(ModelDescription description, double[] constants, double[] initialState, InputSignals? signals, bool isOfRun)
     {
-        RequireFinite(parameters, description.Parameters.Length, "parameter", index => description.Parameters[index].Name);
+        RequireFinite(constants, description);
         RequireFinite(initialState, description.States.Length, "initial state", index => description.States[index].Name);
         Description = description;
-        this.parameters = parameters;
+        Constants = constants;
         this.initialState = initialState;
+        Signals = signals;
+        this.isOfRun = isOfRun;
     }
 
     /// <summary>Names, units, bounds, defaults and structure.</summary>
@@ -29,13 +30,13 @@ public abstract partial class DynamicSystem
     public int StateCount => initialState.Length;
 
     /// <summary>The number of parameters, m.</summary>
-    public int ParameterCount => parameters.Length;
+    public int ParameterCount => Description.Parameters.Length;
 
     /// <summary>The number of switching functions, s.</summary>
     public int SwitchCount => Description.Switches.Length;
 
     /// <summary>The parameters, in the order of <see cref="ModelDescription.Parameters"/>.</summary>
-    public ReadOnlySpan<double> Parameters => parameters;
+    public ReadOnlySpan<double> Parameters => Constants.AsSpan(0, ParameterCount);
 
     /// <summary>The state that runs start from, in the order of <see cref="ModelDescription.States"/>.</summary>
     public ReadOnlySpan<double> InitialState => initialState;
@@ -51,11 +52,17 @@ public abstract partial class DynamicSystem
         where TSystem : struct, IOdeSystem
     {
         ArgumentNullException.ThrowIfNull(model);
-        var parameters = new double[model.ParameterCount];
-        var state = new double[model.StateCount];
+        int m = model.ParameterCount;
+        var parameters = new double[m];
         model.ReadParameters(parameters);
+        ModelDescription description = TSystem.DescriptionFor(parameters) ?? TSystem.Description;
+        int k = description.Modes.Length, u = description.Inputs.Length;
+        double[] constants = [.. parameters, .. new double[k + 2 * u]];
+        var state = new double[model.StateCount];
+        model.ReadModes(constants.AsSpan(m, k));
+        model.ReadInputs(constants.AsSpan(m + k, u));
         model.ReadState(state);
-        return new BoundSystem<TSystem>(TSystem.DescriptionFor(parameters) ?? TSystem.Description, parameters, state);
+        return new BoundSystem<TSystem>(description, constants, state);
     }
 
     /// <summary>Binds equations to the defaults in their description.</summary>
@@ -65,7 +72,12 @@ public abstract partial class DynamicSystem
         where TSystem : struct, IOdeSystem =>
         new BoundSystem<TSystem>(
             TSystem.Description,
-            [.. TSystem.Description.Parameters.Select(parameter => parameter.Default)],
+            [
+                .. TSystem.Description.Parameters.Select(static parameter => parameter.Default),
+                .. TSystem.Description.Modes.Select(static mode => mode.Initial),
+                .. TSystem.Description.Inputs.Select(static input => input.Default),
+                .. TSystem.Description.Inputs.Select(static _ => 0.0),
+            ],
             [.. TSystem.Description.States.Select(state => state.Initial)]);
 
     /// <summary>The same equations with one parameter changed.</summary>
@@ -78,10 +90,10 @@ public abstract partial class DynamicSystem
     {
         ArgumentOutOfRangeException.ThrowIfNegative(index);
         ArgumentOutOfRangeException.ThrowIfGreaterThanOrEqual(index, ParameterCount);
-        double[] changed = [.. parameters];
+        double[] changed = [.. Constants];
         changed[index] = value;
         RequireSameLengths(changed);
-        return Rebind(changed, initialState);
+        return Rebind(changed, initialState, Signals, ofRun: false);
     }
 
     /// <summary>The same equations with other parameters.</summary>
@@ -91,14 +103,15 @@ public abstract partial class DynamicSystem
     public DynamicSystem WithParameters(ReadOnlySpan<double> values)
     {
         RequireSameLengths(values);
-        return Rebind(values.ToArray(), initialState);
+        return Rebind([.. values, .. Constants.AsSpan(ParameterCount)], initialState, Signals, ofRun: false);
     }
 
     /// <summary>The same equations starting elsewhere.</summary>
     /// <param name="values">All n states.</param>
     /// <returns>A new system.</returns>
     /// <exception cref="ArgumentException">The number of values is not n, or a value is not finite.</exception>
-    public DynamicSystem WithInitialState(ReadOnlySpan<double> values) => Rebind(parameters, values.ToArray());
+    public DynamicSystem WithInitialState(ReadOnlySpan<double> values) =>
+        Rebind(Constants, values.ToArray(), Signals, ofRun: false);
 
     /// <summary>Hands the equations' type to work that needs it for speed.</summary>
     /// <typeparam name="TResult">What the work yields.</typeparam>
@@ -137,16 +150,26 @@ public abstract partial class DynamicSystem
     public abstract void SwitchingTimeDerivative(
         double time, ReadOnlySpan<double> state, ReadOnlySpan<double> regime, Span<double> derivative);
 
-    private protected abstract DynamicSystem Rebind(double[] newParameters, double[] newInitialState);
+    private protected abstract DynamicSystem Rebind(double[] constants, double[] state, InputSignals? signals, bool ofRun);
+
+    private static void RequireFinite(double[] constants, ModelDescription description)
+    {
+        int m = description.Parameters.Length, k = description.Modes.Length, u = description.Inputs.Length;
+        if (constants.Length != description.ConstantCount)
+            throw new ArgumentException($"This model has {m} parameter values, but {constants.Length - description.ConstantCount + m} were given.");
+        RequireFinite(constants[..m], m, "parameter", index => description.Parameters[index].Name);
+        RequireFinite(constants[m..(m + k)], k, "mode", index => description.Modes[index].Name);
+        RequireFinite(constants[(m + k)..(m + k + u)], u, "input", index => description.Inputs[index].Name);
+    }
 
     private void RequireSameLengths(ReadOnlySpan<double> values)
     {
         int count = Math.Min(values.Length, Description.Parameters.ScalarCount);
         for (int i = 0; i < count; i++)
         {
-            if (values[i] == parameters[i] || !Description.Parameters[i].IsFixed) continue;
+            if (values[i] == Constants[i] || !Description.Parameters[i].IsFixed) continue;
             throw new ArgumentException(
-                $"{Description.Parameters[i].Name} is fixed at {parameters[i]} when the model is made, because lengths of vectors depend on it; make another model instead.");
+                $"{Description.Parameters[i].Name} is fixed at {Constants[i]} when the model is made, because lengths of vectors depend on it; make another model instead.");
         }
     }
 

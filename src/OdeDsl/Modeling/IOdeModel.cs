@@ -29,6 +29,18 @@ public interface IOdeModel<TModel, TSystem>
     /// <param name="parameters">m values.</param>
     void WriteParameters(ReadOnlySpan<double> parameters);
 
+    /// <summary>Copies the model's modes out.</summary>
+    /// <param name="modes">Receives their values.</param>
+    void ReadModes(Span<double> modes)
+    {
+    }
+
+    /// <summary>Copies the constant values of the model's inputs out.</summary>
+    /// <param name="inputs">Receives their values.</param>
+    void ReadInputs(Span<double> inputs)
+    {
+    }
+
     /// <summary>Makes an independent copy of the model.</summary>
     /// <returns>A model of the same class with the same states and parameters.</returns>
     TModel Copy();

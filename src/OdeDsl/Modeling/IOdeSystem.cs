@@ -5,7 +5,8 @@ namespace OdeDsl.Modeling;
 
 /// <summary>
 /// The contract that generated equations fulfil, over flat vectors: state[n], parameters[m], regime[s], with n, m, s the counts
-/// in <see cref="Description"/>.
+/// in <see cref="Description"/>. Behind the parameters, in the same vector, stand the modes, the inputs and the inputs' slopes
+/// (<see cref="ModelDescription.ConstantCount"/> numbers in all): constants as well within one smooth piece of a run.
 /// </summary>
 /// <remarks>
 /// No member allocates, reads anything but its arguments, or throws except <see cref="ArgumentOutOfRangeException"/> for a vector
@@ -224,4 +225,67 @@ public interface IOdeSystem
     static virtual void Substitute<TElement>(ReadOnlySpan<TElement> factors, Span<TElement> vector)
         where TElement : struct, IMatrixElement<TElement> =>
         throw new NotSupportedException("These equations have no unrolled elimination; ask Unrolled first.");
+
+    /// <summary>
+    /// The guards of the events: numbers as they are, conditions as 1 where they hold and -1 where they do not, in the locked regime.
+    /// </summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="values">Receives a value for each of <see cref="ModelDescription.Events"/>.</param>
+    static virtual void EventGuards(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> values)
+    {
+    }
+
+    /// <summary>The derivatives of the events' guards by the states, dense.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="jacobian">Receives n values for each event. Zeros are written too.</param>
+    static virtual void EventGuardJacobian(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> jacobian)
+    {
+    }
+
+    /// <summary>The explicit derivatives of the events' guards by time.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="regime">The regime, s values.</param>
+    /// <param name="derivative">Receives a value for each event.</param>
+    static virtual void EventGuardTimeDerivative(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, ReadOnlySpan<double> regime, Span<double> derivative)
+    {
+    }
+
+    /// <summary>The states and modes that the actions of all events would set, equal to the user's own methods bit for bit.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="values">Receives for each event the n states, then the modes.</param>
+    static virtual void EventActions(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> values)
+    {
+    }
+
+    /// <summary>The derivatives by the states of the states that the actions set, conditions on the side of the state.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="jacobian">Receives n × n values by rows for each event. Zeros are written too.</param>
+    static virtual void EventActionJacobian(double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> jacobian)
+    {
+    }
+
+    /// <summary>The explicit derivatives by time of the states that the actions set.</summary>
+    /// <param name="time">The time.</param>
+    /// <param name="state">The state, n values.</param>
+    /// <param name="parameters">The parameters, m values.</param>
+    /// <param name="derivative">Receives n values for each event.</param>
+    static virtual void EventActionTimeDerivative(
+        double time, ReadOnlySpan<double> state, ReadOnlySpan<double> parameters, Span<double> derivative)
+    {
+    }
 }

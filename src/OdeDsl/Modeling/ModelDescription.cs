@@ -20,11 +20,23 @@ public sealed record ModelDescription
     /// <summary>The parameters, in the order of the parameter vector.</summary>
     public required DescriptionList<ParameterDescription> Parameters { get; init; }
 
+    /// <summary>The modes, in their order behind the parameters in the vector that the equations get.</summary>
+    public ImmutableArray<ModeDescription> Modes { get; init; } = [];
+
+    /// <summary>The inputs, in their order behind the modes.</summary>
+    public ImmutableArray<InputDescription> Inputs { get; init; } = [];
+
+    /// <summary>The length of that vector: parameters, modes, inputs, and the inputs' slopes.</summary>
+    public int ConstantCount => Parameters.Length + Modes.Length + 2 * Inputs.Length;
+
     /// <summary>The observables, in the order of the observable vector.</summary>
     public ImmutableArray<ObservableDescription> Observables { get; init; } = [];
 
     /// <summary>The tables that the equations read.</summary>
     public ImmutableArray<TableDescription> Tables { get; init; } = [];
+
+    /// <summary>The events, in the order of declaration.</summary>
+    public ImmutableArray<EventDescription> Events { get; init; } = [];
 
     /// <summary>The switching functions, in the order of the regime vector.</summary>
     public DescriptionList<SwitchDescription> Switches { get; init; } = [];
@@ -53,6 +65,11 @@ public sealed record ModelDescription
     /// <param name="name">The parameter's name; for an element of a vector as in <c>Weight[3]</c>.</param>
     /// <returns>The index, or -1 if there is no such parameter.</returns>
     public int IndexOfParameter(string name) => IndexOf(Parameters, Parameters.ScalarCount, ParameterVectors, name, static parameter => parameter.Name);
+
+    /// <summary>The position of an input among the inputs.</summary>
+    /// <param name="name">The input's name.</param>
+    /// <returns>The index, or -1 if there is no such input.</returns>
+    public int IndexOfInput(string name) => IndexOf(Inputs, Inputs.Length, [], name, static input => input.Name);
 
     /// <summary>The position of an observable in the observable vector.</summary>
     /// <param name="name">The observable's name.</param>

@@ -60,7 +60,8 @@ internal sealed class EmittedModel
     {
         StringBuilder text = new();
         text.Append("namespace Models;\n/// <summary>A model.</summary>\npublic sealed partial class ").Append(model.Type.Types[0].Name).Append("\n{\n");
-        foreach (PropertyDefinition property in model.States.Select(static s => s.Property).Concat(model.Parameters.Select(static p => p.Property)))
+        foreach (PropertyDefinition property in model.States.Select(static s => s.Property).Concat(model.Parameters.Select(static p => p.Property))
+            .Concat(model.Modes.Select(static m => m.Property)).Concat(model.Inputs.Select(static u => u.Property)))
             text.Append("/// <summary>A number.</summary>\npublic partial double @").Append(property.Name).Append(" { get; set; }\n");
         for (int i = 0; i < model.Tables.Count; i++) text.Append(RandomTables.Declaration(model.Tables[i].Name, i));
         return text.Append("}\n").ToString();

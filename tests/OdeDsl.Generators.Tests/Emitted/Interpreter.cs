@@ -25,7 +25,7 @@ internal sealed class Interpreter(ExpressionGraph graph, double time, double[] s
         Operator.Constant => node.Constant,
         Operator.BooleanConstant => node.Payload,
         Operator.State => state[node.Index],
-        Operator.Parameter => parameters[node.Index],
+        Operator.Parameter or Operator.Mode or Operator.Input or Operator.InputSlope => parameters[node.Index],
         Operator.Time => time,
         Operator.Side => regime![node.Index] == 1 ? 1 : 0,
         Operator.WholeNumber => regime![node.Index],

@@ -54,5 +54,5 @@ internal sealed class ModelBuilder
 
     private static long Bits(double value) => BitConverter.DoubleToInt64Bits(value);
 
-    private static PropertyDefinition Property(string name) => new(name, "", "public", new EquatableArray<string>(["get", "set"]));
+    public static PropertyDefinition Property(string name) => new(name, "", "public", new EquatableArray<string>(["get", "set"]));
 }

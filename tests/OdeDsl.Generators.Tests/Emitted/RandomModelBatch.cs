@@ -13,7 +13,7 @@ internal sealed record RandomModel(ModelDefinition Definition, EmittedModel Emit
 /// <summary>Where a random model is evaluated.</summary>
 internal readonly record struct Point(double Time, double[] State, double[] Parameters)
 {
-    public const int Length = 1 + RandomModels.StateCount + RandomModels.ParameterCount;
+    public const int Length = 1 + RandomModels.StateCount + RandomModels.ConstantCount;
 
     public static Point Of(double[] numbers) => new(
         numbers[0], numbers[1..(RandomModels.StateCount + 1)], numbers[(RandomModels.StateCount + 1)..]);

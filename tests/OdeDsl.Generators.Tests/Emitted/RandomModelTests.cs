@@ -65,7 +65,7 @@ public sealed partial class RandomModelTests(RandomModelBatch batch) : IClassFix
             double[] jacobian = model.Calls.SwitchingJacobian(point.Time, point.State, point.Parameters, regime);
             double[] byTime = model.Calls.SwitchingTimeDerivative(point.Time, point.State, point.Parameters, regime);
             compared += Compare(graph, values, functions, Operator.State, RandomModels.StateCount, jacobian)
-                + Compare(graph, values, functions, Operator.Time, 1, byTime);
+                + CompareByTime(graph, values, functions, point, byTime);
         });
         Assert.True(compared > 2_000, $"only {compared} entries compared");
     }
@@ -97,7 +97,7 @@ public sealed partial class RandomModelTests(RandomModelBatch batch) : IClassFix
         double[] product = calls.JacobianVectorProduct(point.Time, point.State, point.Parameters, regime, point.Parameters);
         return Compare(graph, values, rates, Operator.State, RandomModels.StateCount, jacobian)
             + Compare(graph, values, rates, Operator.Parameter, RandomModels.ParameterCount, byParameters)
-            + Compare(graph, values, rates, Operator.Time, 1, byTime)
+            + CompareByTime(graph, values, rates, point, byTime)
             + CompareAlong(graph, values, rates, node => node.Operator == Operator.State ? point.Parameters[node.Index] : 0, product);
     }
 
@@ -112,6 +112,19 @@ public sealed partial class RandomModelTests(RandomModelBatch batch) : IClassFix
 
         return compared;
     }
+
+    /// <summary>Time passes explicitly, and by way of the inputs with their slopes.</summary>
+    private static int CompareByTime(ExpressionGraph graph, Interpreter values, int[] roots, Point point, double[] derivatives) => CompareAlong(
+        graph,
+        values,
+        roots,
+        node => node.Operator switch
+        {
+            Operator.Time => 1,
+            Operator.Input => point.Parameters[node.Index + RandomModels.InputCount],
+            _ => 0,
+        },
+        derivatives);
 
     private static int CompareAlong(ExpressionGraph graph, Interpreter values, int[] roots, Func<Node, double> seed, double[] derivatives)
     {

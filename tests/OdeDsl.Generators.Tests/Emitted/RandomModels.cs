@@ -12,6 +12,10 @@ internal static class RandomModels
 {
     public const int StateCount = 3;
     public const int ParameterCount = 3;
+    public const int InputCount = 1;
+
+    /// <summary>Parameters, a mode, an input and its slope.</summary>
+    public const int ConstantCount = ParameterCount + 1 + (2 * InputCount);
 
     private static readonly double[] Exponents = [2, 3, 4, 5, 0.5, 1.5, 2.5, -1, -2, -0.5, 0.3, 1, 0];
 
@@ -31,11 +35,18 @@ internal static class RandomModels
         for (int i = 0; i < StateCount; i++) numbers.Add(model.State("X" + i));
         for (int i = 0; i < ParameterCount; i++) numbers.Add(model.Parameter("P" + i));
         numbers.Add(model.Time);
+        numbers.Add(g.Leaf(Operator.Mode, ParameterCount));
+        numbers.Add(g.Leaf(Operator.Input, ParameterCount + 1));
         List<int> conditions = [g.Binary(Operator.Less, numbers[0], numbers[3]), g.Binary(Operator.Greater, numbers[4], g.Constant(0.5))];
         foreach (Instruction instruction in recipe) Apply(g, instruction, numbers, conditions);
         for (int i = 0; i < StateCount; i++) model.Rate(i, numbers[numbers.Count - 1 - i], "state " + i);
         model.Observable("Watched", numbers[^4]);
-        return model.Build() with { Tables = RandomTables.Definitions(name) };
+        return model.Build() with
+        {
+            Tables = RandomTables.Definitions(name),
+            Modes = new([new ModeDefinition(ModelBuilder.Property("M0"), ModeKind.Number, 0)]),
+            Inputs = new([new InputDefinition(ModelBuilder.Property("U0"), "m", 0)]),
+        };
     }
 
     private static void Apply(ExpressionGraph g, Instruction i, List<int> numbers, List<int> conditions)
