@@ -413,4 +413,9 @@ internal static partial class Descriptors
         "ODE0093", "An action must not set a mode to a value outside its range",
         "Action '{0}' can set mode '{1}' to {2}, which is not one of its values; widen 'Lower' and 'Upper', or use Math.Clamp",
         Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0093");
+
+    public static readonly DiagnosticDescriptor VectorsWithInputs = new(
+        "ODE0094", "A model with vectors cannot have inputs, modes or events yet",
+        "Model '{0}' has vectors, and inputs, modes or events as well; declare inputs as parameters, and leave modes and events out",
+        Category, DiagnosticSeverity.Error, isEnabledByDefault: true, helpLinkUri: Help + "ODE0094");
 }

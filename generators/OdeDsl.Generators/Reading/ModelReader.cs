@@ -84,6 +84,8 @@ internal sealed class ModelReader(
         SegmentDefinition[][] segments = [.. properties.VectorStates.Select(state =>
             equations.RateOf(state.Property.Name) is { } rate ? vectorRates.Read(state, rate) : WithoutRate(state))];
         IReadOnlyList<DeclaredEvent> events = new EventReader(model, compilation, _problems, cancellation).Read();
+        if (properties.HasVectors && properties.Inputs.Count + properties.Modes.Count + events.Count > 0)
+            _problems.Report(Descriptors.VectorsWithInputs, model.Locations[0], model.Name);
         int?[] results = rates.Concat(equations.Observables.Select(static observable => observable.Member))
             .Select(member => member is null ? null : bodies.Read(member))
             .Concat(segments.SelectMany(static all => all).Select(static segment => segment.Rate < 0 ? (int?)null : segment.Rate))
