@@ -15,6 +15,7 @@ internal static class Attributes
     public const string Rate = "Rate";
     public const string Observable = "Observable";
     public const string Angle = "Angle";
+    public const string Submodel = "Submodel";
     public const string Table = "Table";
     public const string Input = "Input";
     public const string Mode = "Mode";
@@ -24,7 +25,7 @@ internal static class Attributes
     public static readonly string[] OfNumbers = [State, Parameter, Input, Mode];
 
     /// <summary>The short names of all attributes that mark a member of a model.</summary>
-    public static readonly string[] OfMembers = [State, Parameter, Input, Mode, Rate, Observable, Event, Angle];
+    public static readonly string[] OfMembers = [State, Parameter, Input, Mode, Rate, Observable, Event, Angle, Submodel];
 
     public static AttributeData? Find(ISymbol member, string shortName) =>
         member.GetAttributes().FirstOrDefault(attribute => Is(attribute, shortName));
@@ -38,6 +39,9 @@ internal static class Attributes
     /// <summary>Whether an attribute is one of the modelling attributes.</summary>
     public static bool IsOurs(AttributeData attribute) =>
         attribute.AttributeClass is { ContainingType: null, ContainingNamespace: { Name: Namespace, ContainingNamespace.IsGlobalNamespace: true } };
+
+    /// <summary>Whether an input attribute names an input of a submodel that its member gives.</summary>
+    public static bool IsConnection(AttributeData attribute) => attribute.ConstructorArguments.Length == 2;
 
     /// <summary>Where an attribute stands.</summary>
     public static Location Place(AttributeData attribute, ISymbol member) =>

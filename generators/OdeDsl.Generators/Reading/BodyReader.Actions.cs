@@ -12,16 +12,16 @@ namespace OdeDsl.Generators.Reading;
 /// <content>Actions of events: states and modes are variables that the action sets; helpers see the values set so far.</content>
 internal sealed partial class BodyReader
 {
-    private IReadOnlyList<ISymbol> _settable = [];
+    private ISymbol[] _settable = [];
 
-    private bool IsInAction => _settable.Count > 0;
+    private bool IsInAction => _settable.Length > 0;
 
     /// <summary>Reads the guard of an event.</summary>
     /// <returns>A number, 1 or -1 for a condition; null with a problem reported.</returns>
-    public int? ReadGuard(ISymbol member)
+    public int? ReadGuard(ModelScope model, ISymbol member)
     {
-        Value[] arguments = member is IMethodSymbol { Parameters.Length: 1 } ? [new NumberValue(_graph.Leaf(Operator.Time))] : [];
-        return (_leaves.TryGetValue(member, out Value? leaf) ? leaf : Call(member, arguments)) switch
+        _scope = model;
+        return (model.Leaves.TryGetValue(member, out Value? leaf) ? leaf : Call(member, TimeFor(member))) switch
         {
             NumberValue number => number.Node,
             ConditionValue condition => _graph.Ternary(Operator.Conditional, condition.Node, _graph.Constant(1.0), _graph.Constant(-1.0)),
@@ -30,17 +30,19 @@ internal sealed partial class BodyReader
     }
 
     /// <summary>Runs the action of an event.</summary>
+    /// <param name="model">The model it belongs to.</param>
     /// <param name="action">The method.</param>
-    /// <param name="settable">The states, then the modes.</param>
-    /// <param name="modes">The modes.</param>
-    /// <returns>The values they have afterwards, in that order; null with a problem reported.</returns>
-    public int[]? ReadAction(IMethodSymbol action, IReadOnlyList<ISymbol> settable, IReadOnlyList<DeclaredMode> modes)
+    /// <returns>The values that all states, those of submodels behind, and the modes have afterwards; null with a problem reported.</returns>
+    public int[]? ReadAction(ModelScope model, IMethodSymbol action)
     {
+        _scope = _receiver = model;
+        IReadOnlyList<DeclaredMode> modes = model.Properties.Modes;
+        ISymbol[] settable = [.. model.Properties.States.Select(static state => state.Symbol), .. modes.Select(static mode => mode.Symbol)];
         Flow before = _flow;
         int problemsBefore = _problems.Found.Count;
-        ImmutableDictionary<ISymbol, Value> variables = NoVariables.SetItems(settable.Select(symbol => new KeyValuePair<ISymbol, Value>(symbol, _leaves[symbol])));
+        ImmutableDictionary<ISymbol, Value> variables = NoVariables.SetItems(settable.Select(symbol => new KeyValuePair<ISymbol, Value>(symbol, model.Leaves[symbol])));
         if (action.Parameters.Length == 1) variables = variables.SetItem(action.Parameters[0], new NumberValue(_graph.Leaf(Operator.Time)));
-        _active.Add(action);
+        _active.Add((action, model));
         _settable = settable;
         try
         {
@@ -52,7 +54,11 @@ internal sealed partial class BodyReader
                 : Join(_flow.Returned, _flow.AfterReturn, _flow.Variables);
             if (_problems.Found.Count > problemsBefore) return null;
             foreach (DeclaredMode mode in modes) CheckValues(mode, after[mode.Symbol], action);
-            return [.. settable.Select(symbol => NumberOf(after[symbol]))];
+            return
+            [
+                .. model.States().Select(item => NumberOf(item.Scope == model ? after[item.State.Symbol] : item.Scope.Leaves[item.State.Symbol])),
+                .. modes.Select(mode => NumberOf(after[mode.Symbol])),
+            ];
         }
         finally
         {
@@ -81,9 +87,9 @@ internal sealed partial class BodyReader
         ISymbol? member = (target as IMemberReferenceOperation)?.Member.OriginalDefinition;
         if (member is null) return null;
         bool isOwn = (target as IMemberReferenceOperation)?.Instance is IInstanceReferenceOperation;
-        bool isHelper = !SymbolEqualityComparer.Default.Equals(_active[_active.Count - 1], _active[0]);
+        bool isHelper = !SymbolEqualityComparer.Default.Equals(_active[_active.Count - 1].Member, _active[0].Member);
         if (isOwn && !isHelper && _settable.FirstOrDefault(symbol => SymbolEqualityComparer.Default.Equals(symbol, member)) is { } settable) return settable;
-        Problem(Descriptors.EventAssignment, target, UserText.Of(target.Syntax), _active[0].Name);
+        Problem(Descriptors.EventAssignment, target, UserText.Of(target.Syntax), _active[0].Member.Name);
         return null;
     }
 

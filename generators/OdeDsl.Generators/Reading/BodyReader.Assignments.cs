@@ -93,7 +93,7 @@ internal sealed partial class BodyReader
         if (variable is null && IsInAction && target is IMemberReferenceOperation) return SetByAction(target);
         // A local function that changes a variable around it would have an effect beyond its result.
         bool isOwn = variable is not null
-            && (_active[_active.Count - 1] is not IMethodSymbol { MethodKind: MethodKind.LocalFunction } function
+            && (_active[_active.Count - 1].Member is not IMethodSymbol { MethodKind: MethodKind.LocalFunction } function
                 || SymbolEqualityComparer.Default.Equals(variable.ContainingSymbol, function));
         if (isOwn && variable!.ContainingSymbol is not IMethodSymbol { MethodKind: MethodKind.Constructor }) return variable;
         if (target is IInvalidOperation) Unresolved(target);

@@ -22,9 +22,10 @@ internal sealed partial class BodyReader
         bool isLocal = method.MethodKind == MethodKind.LocalFunction;
         if (!isLocal && !method.IsStatic && !BelongsToModel(operation.Instance, operation, method)) return UnknownValue.Instance;
         if (method.RefKind != RefKind.None) return Unsupported(operation);
-        if (Reach(method, !operation.IsVirtual, operation) is not IMethodSymbol reached) return UnknownValue.Instance;
+        ModelScope receiver = isLocal || method.IsStatic ? _scope : _receiver;
+        if (At(receiver, () => Reach(method, !operation.IsVirtual, operation)) is not IMethodSymbol reached) return UnknownValue.Instance;
         if (Bodies.Find(reached, _compilation, _cancellation) is null) return WithoutSource(operation, reached);
-        return Arguments(operation, isLocal) is { } arguments ? Call(reached, arguments) : UnknownValue.Instance;
+        return Arguments(operation, isLocal) is { } arguments ? At(receiver, () => Call(reached, arguments)) : UnknownValue.Instance;
     }
 
     /// <summary>The arguments in the order of the parameters, evaluated in the order of the text.</summary>
@@ -54,11 +55,11 @@ internal sealed partial class BodyReader
     private Value Call(ISymbol member, Value[] arguments)
     {
         ISymbol definition = ((member as IMethodSymbol)?.PartialImplementationPart ?? member).OriginalDefinition;
-        if (_active.Contains(definition, SymbolEqualityComparer.Default)) return Recursion(definition);
+        if (_active.Any(active => active.Scope == _scope && SymbolEqualityComparer.Default.Equals(active.Member, definition))) return Recursion(definition);
 
         // The value of a local function depends on variables around it, and while static members are set their order matters.
         bool isReusable = definition is not IMethodSymbol { MethodKind: MethodKind.LocalFunction } && _initializing.Count == 0 && !IsInAction;
-        CallKey key = new(member, new(arguments));
+        CallKey key = new(member, _scope, new(arguments));
         if (isReusable && _known.TryGetValue(key, out Value? known)) return known;
         Value value = Run(definition, arguments);
         return isReusable ? Know(key, value) : value;
@@ -66,8 +67,8 @@ internal sealed partial class BodyReader
 
     private UnknownValue Recursion(ISymbol definition)
     {
-        int start = _active.FindIndex(active => SymbolEqualityComparer.Default.Equals(active, definition));
-        string cycle = string.Join(" → ", _active.Skip(start).Append(definition).Select(static member => member.Name));
+        int start = _active.FindIndex(active => active.Scope == _scope && SymbolEqualityComparer.Default.Equals(active.Member, definition));
+        string cycle = string.Join(" → ", _active.Skip(start).Append((definition, _scope)).Select(static active => active.Item2.Path + active.Item1.Name));
         return Problem(Descriptors.Recursion, _current?.Syntax.GetLocation() ?? definition.Locations[0], definition.Name, cycle);
     }
 
@@ -84,7 +85,7 @@ internal sealed partial class BodyReader
         }
 
         Flow before = _flow;
-        _active.Add(definition);
+        _active.Add((definition, _scope));
         try
         {
             _flow = Start(variables);

@@ -20,7 +20,7 @@ internal sealed partial class BodyReader
         if (TableReader.IsTable(field.Type)) return Table(operation, field);
         if (!field.IsStatic && !BelongsToModel(operation.Instance, operation, field)) return UnknownValue.Instance;
         if (!field.IsReadOnly) return Changeable(operation, field.AssociatedSymbol ?? field);
-        return Initial(operation, field);
+        return At(field.IsStatic ? _scope : _receiver, () => Initial(operation, field));
     }
 
     private Value Property(IPropertyReferenceOperation operation)
@@ -31,9 +31,15 @@ internal sealed partial class BodyReader
         if (TableReader.IsTable(property.Type)) return Table(operation, property);
         if (LengthOf(operation) is { } length) return length;
         if (!property.IsStatic && !BelongsToModel(operation.Instance, operation, property)) return UnknownValue.Instance;
+        return At(property.IsStatic ? _scope : _receiver, () => Reached(operation, property));
+    }
+
+    private Value Reached(IPropertyReferenceOperation operation, IPropertySymbol property)
+    {
+        if (Part(property) is { } part) return part;
         if (VectorOrLength(property) is { } vector) return vector;
         if (IsInAction && _flow.Variables.TryGetValue(property.OriginalDefinition, out Value? set)) return set;
-        if (_leaves.TryGetValue(property.OriginalDefinition, out Value? leaf)) return leaf;
+        if (_scope.Leaves.TryGetValue(property.OriginalDefinition, out Value? leaf)) return leaf;
         if (Attributes.OfNumbers.Any(name => Attributes.Find(property, name) is not null))
             return UnknownValue.Instance; // Its declaration has a problem that is reported there.
         bool isBaseCall = operation.Syntax is MemberAccessExpressionSyntax { Expression: BaseExpressionSyntax };
@@ -62,7 +68,7 @@ internal sealed partial class BodyReader
         {
             Problem(Descriptors.NotAFunction, operation, Name(member));
         }
-        else if (instance is IMemberReferenceOperation holder && !NotAFunction.Contains(holder.Member.ContainingType))
+        else if (instance is IMemberReferenceOperation holder && !NotAFunction.Contains(holder.Member.ContainingType) && !IsSubmodel(holder.Member))
         {
             OfOther(operation);
         }
@@ -74,7 +80,12 @@ internal sealed partial class BodyReader
         {
             Value value = Evaluate(instance);
             _current = operation;
-            if (value is ModelValue && member.ContainingType.TypeKind == TypeKind.Class) return true;
+            if (value is ModelValue { Scope: var scope } && member.ContainingType.TypeKind == TypeKind.Class)
+            {
+                _receiver = scope;
+                return true;
+            }
+
             if (value is ModelValue) Unsupported(operation);
             else if (value is not UnknownValue) OfOther(operation);
         }
@@ -88,9 +99,9 @@ internal sealed partial class BodyReader
     private ISymbol? Reach(ISymbol member, bool isBaseCall, IOperation operation)
     {
         if (isBaseCall || !(member.IsVirtual || member.IsAbstract || member.IsOverride) || member.IsStatic) return member;
-        ISymbol reached = Overriding.Reached(member, _model);
-        if (!Overriding.CanBeOverridden(reached, _model)) return reached;
-        Problem(Descriptors.MemberOverridable, operation, member.Name, _model.Name);
+        ISymbol reached = Overriding.Reached(member, _scope.Type);
+        if (!Overriding.CanBeOverridden(reached, _scope.Type)) return reached;
+        Problem(Descriptors.MemberOverridable, operation, member.Name, _scope.Type.Name);
         return null;
     }
 
@@ -104,7 +115,7 @@ internal sealed partial class BodyReader
         if (reader is not null && Constructors.InitializersMention(member.ContainingType, reader, _cancellation))
             return Problem(Descriptors.StaticOrder, operation, Name(member), Name(reader));
         if (Constructors.Mention(member, _cancellation)) return Problem(Descriptors.ConstructorSetsValue, operation, member.Name);
-        CallKey key = new(member, EquatableArray<Value>.Empty);
+        CallKey key = new(member, _scope, EquatableArray<Value>.Empty);
         if (_known.TryGetValue(key, out Value? known)) return known;
         return Know(key, Initializer(member) is { } initializer ? RunInitializer(member, initializer) : DefaultOf(operation, member));
     }

@@ -103,7 +103,7 @@ internal sealed partial class BodyReader
 
     private void Remember(int node, string text)
     {
-        if (!ConditionTexts.ContainsKey(node)) ConditionTexts.Add(node, text);
+        if (!ConditionTexts.ContainsKey(node)) ConditionTexts.Add(node, _scope.Path.Length == 0 ? text : _scope.Path.TrimEnd('.') + ": " + text);
     }
 
     private Value Logic(IOperation operation, BinaryOperatorKind kind, int first, int second) => kind switch

@@ -21,10 +21,10 @@ internal sealed partial class BodyReader
         if (known >= 0) return new TableReference(known);
         if (Attributes.Find(member, Attributes.Table) is not { } mark)
             return Problem(Descriptors.TableNotMarked, operation, Name(member));
-        bool isOwn = SymbolEqualityComparer.Default.Equals(member.ContainingType, _model);
+        bool isOwn = SymbolEqualityComparer.Default.Equals(member.ContainingType, _scope.Type);
         if (!TableReader.IsFixed(member, _compilation, _cancellation))
             return isOwn ? UnknownValue.Instance : Problem(Descriptors.TableNotFixed, operation, Name(member)); // The model's own is reported where it is declared.
-        if (!_compilation.IsSymbolAccessibleWithin(member, _model)) return Problem(Descriptors.TableNotAccessible, operation, Name(member), _model.Name);
+        if (!_compilation.IsSymbolAccessibleWithin(member, Outermost(_scope).Type)) return Problem(Descriptors.TableNotAccessible, operation, Name(member), Outermost(_scope).Type.Name);
         _tableSymbols.Add(member);
         _tables.Add(TableReader.Define(member, mark));
         return new TableReference(_tables.Count - 1);

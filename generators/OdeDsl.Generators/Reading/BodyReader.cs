@@ -25,9 +25,7 @@ internal sealed partial class BodyReader
     private static readonly ImmutableDictionary<ISymbol, Value> NoVariables =
         ImmutableDictionary.Create<ISymbol, Value>(SymbolEqualityComparer.Default);
 
-    private readonly INamedTypeSymbol _model;
     private readonly Compilation _compilation;
-    private readonly IReadOnlyDictionary<ISymbol, Value> _leaves;
     private readonly VectorTables _vectors;
     private readonly ExpressionGraph _graph;
     private readonly Conditions _conditions;
@@ -36,24 +34,24 @@ internal sealed partial class BodyReader
 
     private readonly Dictionary<CallKey, Value> _known = [];
     private readonly List<CallKey> _knownInOrder = [];
-    private readonly List<ISymbol> _active = [];
+    private readonly List<(ISymbol Member, ModelScope Scope)> _active = [];
+    private ModelScope _scope;
+    private ModelScope _receiver;
     private Flow _flow;
     private IOperation? _current;
 
-    /// <param name="leaves">What the states, parameters, modes and inputs stand for.</param>
+    /// <param name="model">The model with its submodels and the nodes of their numbers.</param>
     /// <param name="vectors">Vectors and lengths.</param>
     public BodyReader(
-        INamedTypeSymbol model,
+        ModelScope model,
         Compilation compilation,
-        IReadOnlyDictionary<ISymbol, Value> leaves,
         VectorTables vectors,
         ExpressionGraph graph,
         Problems problems,
         CancellationToken cancellation)
     {
-        _model = model;
+        _scope = _receiver = model;
         _compilation = compilation;
-        _leaves = leaves;
         _vectors = vectors;
         _graph = graph;
         _conditions = new(graph);
@@ -66,13 +64,16 @@ internal sealed partial class BodyReader
     public Dictionary<int, string> ConditionTexts { get; } = [];
 
     /// <summary>Reads a rate or an observable.</summary>
+    /// <param name="scope">The model or submodel it belongs to.</param>
     /// <returns>The node of its value, or null with a problem reported.</returns>
-    public int? Read(ISymbol member) => Read(member, []);
+    public int? Read(ModelScope scope, ISymbol member) => Read(scope, member, []);
 
     /// <summary>Reads the rate of an element of a vector.</summary>
+    /// <param name="scope">The model it belongs to.</param>
     /// <param name="indices">The element's indices, in the order of the member's whole-number arguments.</param>
-    public int? Read(ISymbol member, IReadOnlyList<Affine> indices)
+    public int? Read(ModelScope scope, ISymbol member, IReadOnlyList<Affine> indices)
     {
+        _scope = scope;
         Queue<Affine> left = new(indices);
         Value[] arguments = [.. (member is IMethodSymbol method ? method.Parameters : ImmutableArray<IParameterSymbol>.Empty).Select(parameter =>
             parameter.Type.SpecialType == SpecialType.System_Double ? new NumberValue(_graph.Leaf(Operator.Time)) : WholeOf(left.Dequeue()))];
@@ -118,7 +119,7 @@ internal sealed partial class BodyReader
         {
             ILocalReferenceOperation local => Variable(local.Local, operation),
             IParameterReferenceOperation parameter => Variable(parameter.Parameter, operation),
-            IInstanceReferenceOperation { ReferenceKind: InstanceReferenceKind.ContainingTypeInstance } => ModelValue.Instance,
+            IInstanceReferenceOperation { ReferenceKind: InstanceReferenceKind.ContainingTypeInstance } => new ModelValue(_scope),
             IArrayElementReferenceOperation element => Element(element),
             IFieldReferenceOperation field => Field(field),
             IPropertyReferenceOperation property => Property(property),
@@ -207,5 +208,5 @@ internal sealed partial class BodyReader
     private bool UsesUnknown(IOperation operation) => operation.DescendantsAndSelf().OfType<ILocalReferenceOperation>()
         .Any(local => _flow.Variables.TryGetValue(local.Local, out Value? value) && value is UnknownValue);
 
-    private sealed record CallKey(ISymbol Member, EquatableArray<Value> Arguments);
+    private sealed record CallKey(ISymbol Member, ModelScope Scope, EquatableArray<Value> Arguments);
 }

@@ -68,7 +68,8 @@ internal sealed class EquationReader(
             Observables.Add((member, unit ?? ""));
     }
 
-    private bool IsReadable(ISymbol member, string role, DeclaredVector? vector, bool isOfFailed = false)
+    /// <summary>Whether a member can be an equation; if not, the problem is reported.</summary>
+    public bool IsReadable(ISymbol member, string role, DeclaredVector? vector, bool isOfFailed = false)
     {
         Location place = member.Locations[0];
         ITypeSymbol? type = member switch

@@ -1,3 +1,4 @@
+using System.Linq;
 using OdeDsl.Generators.Algebra;
 
 namespace OdeDsl.Generators.Reading;
@@ -34,6 +35,14 @@ internal sealed record ModelDefinition(
 
     /// <summary>The events, in the order of declaration.</summary>
     public EquatableArray<EventDefinition> Events { get; init; } = EquatableArray<EventDefinition>.Empty;
+
+    /// <summary>The submodels of the model itself. Their states and parameters stand behind the model's own, in this order.</summary>
+    public EquatableArray<SubmodelDefinition> Submodels { get; init; } = EquatableArray<SubmodelDefinition>.Empty;
+
+    /// <summary>How many states, the first ones, are the model's own; likewise parameters.</summary>
+    public int OwnStateCount => States.Count - Submodels.Sum(static submodel => submodel.StateCount);
+
+    public int OwnParameterCount => Parameters.Count - Submodels.Sum(static submodel => submodel.ParameterPlaces.Count(static place => place >= 0));
 
     /// <summary>The tables that the equations read; nodes name them by position.</summary>
     public EquatableArray<TableDefinition> Tables { get; init; } = EquatableArray<TableDefinition>.Empty;
@@ -138,3 +147,12 @@ internal sealed record PropertyDefinition(string Name, string Summary, string Mo
 /// <param name="Node">The node.</param>
 /// <param name="Text">The text, white space folded.</param>
 internal sealed record ConditionText(int Node, string Text);
+
+/// <summary>A submodel of a model.</summary>
+/// <param name="Name">The property's name, unescaped.</param>
+/// <param name="TypeName">The submodel's class, fully qualified.</param>
+/// <param name="Partial">The property's implementing part to print, or null where the compiler makes its storage.</param>
+/// <param name="StateCount">The number of states of the submodel.</param>
+/// <param name="ParameterPlaces">For each parameter of the submodel its place in the whole's vector; -1 where the whole gives it by an equation.</param>
+internal sealed record SubmodelDefinition(
+    string Name, string TypeName, PropertyDefinition? Partial, int StateCount, EquatableArray<int> ParameterPlaces);

@@ -1,4 +1,3 @@
-using System.Collections.Generic;
 using System.Numerics;
 using Microsoft.CodeAnalysis;
 using OdeDsl.Generators.Algebra;
@@ -8,18 +7,18 @@ namespace OdeDsl.Generators.Reading;
 /// <summary>What a model's own numbers stand for in expressions: states, and the vector of parameters, modes, inputs and inputs' slopes.</summary>
 internal static class ModelLeaves
 {
-    public static Dictionary<ISymbol, Value> Of(PropertyReader properties, ExpressionGraph graph)
+    /// <summary>Notes the leaves of a whole model in its scopes. Modes and inputs are the model's own: submodels with open ones are refused.</summary>
+    public static void AddTo(ModelScope whole, ExpressionGraph graph)
     {
-        Dictionary<ISymbol, Value> leaves = new(SymbolEqualityComparer.Default);
-        foreach (DeclaredState state in properties.States)
-            leaves.Add(state.Symbol, new NumberValue(graph.Leaf(Operator.State, leaves.Count)));
         int place = 0;
-        foreach (DeclaredParameter parameter in properties.Parameters)
-            leaves.Add(parameter.Symbol, new NumberValue(graph.Leaf(Operator.Parameter, place++)));
-        foreach (DeclaredMode mode in properties.Modes) leaves.Add(mode.Symbol, Mode(mode, graph, graph.Leaf(Operator.Mode, place++)));
-        foreach (DeclaredInput input in properties.Inputs)
-            leaves.Add(input.Symbol, new NumberValue(graph.Leaf(Operator.Input, place++)));
-        return leaves;
+        foreach ((ModelScope scope, DeclaredState state) in whole.States())
+            scope.Leaves.Add(state.Symbol, new NumberValue(graph.Leaf(Operator.State, place++)));
+        place = 0;
+        foreach ((ModelScope scope, DeclaredParameter parameter) in whole.Parameters())
+            scope.Leaves.Add(parameter.Symbol, new NumberValue(graph.Leaf(Operator.Parameter, place++)));
+        foreach (DeclaredMode mode in whole.Properties.Modes) whole.Leaves.Add(mode.Symbol, Mode(mode, graph, graph.Leaf(Operator.Mode, place++)));
+        foreach (DeclaredInput input in whole.Properties.Inputs)
+            whole.Leaves.Add(input.Symbol, new NumberValue(graph.Leaf(Operator.Input, place++)));
     }
 
     private static Value Mode(DeclaredMode mode, ExpressionGraph graph, int leaf)

@@ -34,21 +34,25 @@ internal sealed class ModelReader(
         ReportInherited(place);
         PropertyReader properties = new(model, compilation, _problems, cancellation);
         properties.Read();
-        if (properties.States.Count + properties.VectorStates.Count + properties.FailedStates.Count == 0)
-            _problems.Report(Descriptors.ModelWithoutStates, place, model.Name);
         TableReader.Check(model, compilation, _problems, cancellation);
         EquationReader equations = new(model, properties, compilation, _problems, cancellation);
         equations.Read();
-        ModelDefinition definition = Define(chain, type.TakenNames(), properties, equations);
+        SubmodelReader submodels = new(compilation, _problems, cancellation);
+        ModelScope whole = submodels.Read(model, properties, equations);
+        if (submodels.IsSound && properties.FailedStates.Count + properties.VectorStates.Count == 0 && !whole.States().Any())
+            _problems.Report(Descriptors.ModelWithoutStates, place, model.Name);
+        ModelDefinition definition = Define(chain, type.TakenNames(), whole, submodels.IsSound);
         Problems advice = new();
-        if (_problems.Found.Count == 0)
-        {
-            var rates = properties.States.Select(state => ((ISymbol)state.Symbol, equations.RateOf(state.Property.Name)));
-            UnitChecker.Check(model, rates, compilation, advice, cancellation);
-        }
-
-        return new(definition, new([.. _problems.Found, .. advice.Found]));
+        if (_problems.Found.Count == 0) UnitChecker.Check(model, Equations(whole), compilation, advice, cancellation);
+        return new(definition, new([.. _problems.Found.Where(problem => !IsInSubmodel(problem, whole)), .. advice.Found]));
     }
+
+    /// <summary>Whether a problem stands in a submodel, where it is told when that is read on its own.</summary>
+    private bool IsInSubmodel(Diagnostic problem, ModelScope whole) => whole.All().Skip(1)
+        .SelectMany(static scope => scope.Type.DeclaringSyntaxReferences)
+        .Any(part => part.SyntaxTree == problem.Location.SourceTree
+            && part.Span.Contains(problem.Location.SourceSpan)
+            && !model.DeclaringSyntaxReferences.Any(own => own.SyntaxTree == part.SyntaxTree && part.Span.Contains(own.Span)));
 
     /// <summary>Where the attribute of this part stands, if another part of the class carries it before.</summary>
     private Location? RepeatedMark()
@@ -75,29 +79,36 @@ internal sealed class ModelReader(
     }
 
     private ModelDefinition Define(
-        TypeChain chain, EquatableArray<string> takenNames, PropertyReader properties, EquationReader equations)
+        TypeChain chain, EquatableArray<string> takenNames, ModelScope whole, bool isReadable)
     {
         ExpressionGraph graph = new();
-        BodyReader bodies = new(model, compilation, ModelLeaves.Of(properties, graph), properties.Tables, graph, _problems, cancellation);
-        ISymbol?[] rates = properties.States.Select(state => equations.RateOf(state.Property.Name)).ToArray();
-        VectorRateReader vectorRates = new(bodies, properties.Tables, graph, _problems, cancellation);
+        PropertyReader properties = whole.Properties;
+        EquationReader equations = whole.Equations;
+        ModelLeaves.AddTo(whole, graph);
+        BodyReader bodies = new(whole, compilation, properties.Tables, graph, _problems, cancellation);
+        (ModelScope Scope, ISymbol? Member)[] rates =
+            [.. whole.States().Select(static item => (item.Scope, item.Scope.Equations.RateOf(item.State.Property.Name)))];
+        (ModelScope Scope, (ISymbol Member, string Unit) Observable)[] observables =
+            [.. whole.All().SelectMany(static scope => scope.Equations.Observables.Select(observable => (scope, observable)))];
+        VectorRateReader vectorRates = new(whole, bodies, properties.Tables, graph, _problems, cancellation);
         SegmentDefinition[][] segments = [.. properties.VectorStates.Select(state =>
             equations.RateOf(state.Property.Name) is { } rate ? vectorRates.Read(state, rate) : WithoutRate(state))];
         IReadOnlyList<DeclaredEvent> events = new EventReader(model, compilation, _problems, cancellation).Read();
         if (properties.HasVectors && properties.Inputs.Count + properties.Modes.Count + events.Count > 0)
             _problems.Report(Descriptors.VectorsWithInputs, model.Locations[0], model.Name);
-        int?[] results = rates.Concat(equations.Observables.Select(static observable => observable.Member))
-            .Select(member => member is null ? null : bodies.Read(member))
+        (ModelScope Scope, ISymbol? Member)[] members = [.. rates, .. observables.Select(static item => (item.Scope, (ISymbol?)item.Observable.Member))];
+        int?[] results = members
+            .Select(item => item.Member is null ? null : bodies.Read(item.Scope, item.Member))
             .Concat(segments.SelectMany(static all => all).Select(static segment => segment.Rate < 0 ? (int?)null : segment.Rate))
-            .Concat(events.SelectMany(item => EventResults(item, bodies, properties)))
+            .Concat(events.SelectMany(item => EventResults(item, bodies, whole)))
             .ToArray();
         RequireLengths(properties);
-        foreach ((ISymbol? member, int? node) in rates.Concat(equations.Observables.Select(static observable => (ISymbol?)observable.Member)).Zip(results, static (member, node) => (member, node)))
+        foreach ((ISymbol? member, int? node) in members.Zip(results, static (item, node) => (item.Member, node)))
         {
             if (member is not null && node is { } equation) vectorRates.RequireFixedSwitches(member, equation);
         }
 
-        bool isSound = _problems.Found.Count == 0 && results.All(static result => result is not null);
+        bool isSound = isReadable && _problems.Found.Count == 0 && results.All(static result => result is not null);
         PrunedGraph pruned = isSound
             ? PrunedGraph.Of(graph, results.Select(static result => result!.Value).ToArray())
             : PrunedGraph.NotANumber(results.Length);
@@ -106,17 +117,18 @@ internal sealed class ModelReader(
         return new(
             chain,
             Summaries.Of(model, cancellation),
-            new(properties.States.Select((state, i) => Define(state, pruned.Results[i], TextOf(rates[i]))).ToArray()),
-            new(properties.Parameters.Select(static parameter => parameter.Definition).ToArray()),
-            new(equations.Observables.Select((observable, i) => Define(observable, pruned.Results[rates.Length + i])).ToArray()),
+            new([.. whole.States().Select((item, i) => Define(item.Scope, item.State, pruned.Results[i], TextOf(rates[i].Member)))]),
+            new([.. whole.Parameters().Select(static item => Define(item.Scope, item.Parameter))]),
+            new([.. observables.Select((item, i) => Define(item.Scope, item.Observable, pruned.Results[rates.Length + i]))]),
             pruned.Nodes,
             pruned.Renumber(bodies.ConditionTexts),
             takenNames)
         {
+            Submodels = new([.. whole.Submodels.Select(submodel => Define(whole, submodel))]),
             Modes = new(properties.Modes.Select(static mode => mode.Definition).ToArray()),
             Inputs = new(properties.Inputs.Select(static input => input.Definition).ToArray()),
             Events = new(events.Select((item, i) => Define(
-                item, properties, pruned.Results.Skip(rates.Length + equations.Observables.Count + segments.Sum(static all => all.Length)), i)).ToArray()),
+                item, whole, pruned.Results.Skip(members.Length + segments.Sum(static all => all.Length)), i)).ToArray()),
             Tables = isSound ? new(bodies.Tables.ToArray()) : EquatableArray<TableDefinition>.Empty,
             TimeUnit = Attributes.Find(model, "OdeModel") is { } mark ? Attributes.Named(mark, "TimeUnit", "") ?? "" : "",
             Vectors = properties.HasVectors
@@ -166,35 +178,58 @@ internal sealed class ModelReader(
         PropertyReader.Bits(parameter.Upper),
         parameter.Lengths);
 
-    /// <summary>The guard's node, then those of the states and modes that the action sets.</summary>
-    private static IEnumerable<int?> EventResults(DeclaredEvent item, BodyReader bodies, PropertyReader properties)
+    /// <summary>The guard's node, then those of the states and modes that the action sets: those of submodels stay as they are.</summary>
+    private static IEnumerable<int?> EventResults(DeclaredEvent item, BodyReader bodies, ModelScope whole)
     {
-        ISymbol[] settable = [.. properties.States.Select(static state => state.Symbol), .. properties.Modes.Select(static mode => mode.Symbol)];
-        int[]? set = bodies.ReadAction(item.Action, settable, properties.Modes);
-        return new[] { bodies.ReadGuard(item.Guard) }.Concat(settable.Select((_, i) => set?[i]));
+        int[]? set = bodies.ReadAction(whole, item.Action);
+        int count = whole.States().Count() + whole.Properties.Modes.Count;
+        return new[] { bodies.ReadGuard(whole, item.Guard) }.Concat(Enumerable.Range(0, count).Select(i => set?[i]));
     }
 
-    private EventDefinition Define(DeclaredEvent item, PropertyReader properties, IEnumerable<int> results, int index)
+    private EventDefinition Define(DeclaredEvent item, ModelScope whole, IEnumerable<int> results, int index)
     {
-        int n = properties.States.Count, k = properties.Modes.Count;
+        int n = whole.States().Count(), k = whole.Properties.Modes.Count;
         int[] own = [.. results.Skip(index * (1 + n + k)).Take(1 + n + k)];
         return new(
             item.Action.Name, Summaries.Of(item.Action, cancellation), item.Guard.Name, TextOf(item.Guard) is { Length: > 0 } text ? text : item.Guard.Name, TextOf(item.Action), item.Direction,
             item.IsTerminal, item.IsCondition, own[0], new([.. own.Skip(1).Take(n)]), new([.. own.Skip(1 + n)]));
     }
 
-    private static StateDefinition Define(DeclaredState state, int rate, string text) => new(
-        state.Property,
+    /// <summary>What the units of must fit: states with their rates, and numbers of submodels with what is given to them.</summary>
+    private static IEnumerable<(ISymbol Target, ISymbol? Member, bool IsRate)> Equations(ModelScope whole) =>
+        whole.Properties.States.Select(state => ((ISymbol)state.Symbol, whole.Equations.RateOf(state.Property.Name), true))
+            .Concat(whole.Submodels.SelectMany(static submodel => submodel.Scope.Connections).Select(static pair => (pair.Key, (ISymbol?)pair.Value, false)));
+
+    private static StateDefinition Define(ModelScope scope, DeclaredState state, int rate, string text) => new(
+        state.Property with { Name = scope.Path + state.Property.Name },
         state.Unit,
-        PropertyReader.Bits(state.Initial),
+        PropertyReader.Bits(scope.Start(state.Symbol, state.Initial)),
         PropertyReader.Bits(state.Lower),
         PropertyReader.Bits(state.Upper),
         state.AnglePeriod is { } period ? PropertyReader.Bits(period) : null,
         rate,
         text);
 
-    private ObservableDefinition Define((ISymbol Member, string Unit) observable, int value) => new(
-        observable.Member.Name, Summaries.Of(observable.Member, cancellation), observable.Unit, value, TextOf(observable.Member));
+    private static ParameterDefinition Define(ModelScope scope, DeclaredParameter parameter)
+    {
+        ParameterDefinition declared = parameter.Definition;
+        double value = scope.Start(parameter.Symbol, System.BitConverter.Int64BitsToDouble(declared.ValueBits));
+        return declared with { Property = declared.Property with { Name = scope.Path + declared.Property.Name }, ValueBits = PropertyReader.Bits(value) };
+    }
+
+    private static SubmodelDefinition Define(ModelScope whole, DeclaredSubmodel submodel)
+    {
+        var all = whole.Parameters().ToList();
+        return new(
+            submodel.Symbol.Name,
+            submodel.Scope.Type.ToDisplayString(SymbolDisplayFormat.FullyQualifiedFormat),
+            submodel.Partial,
+            submodel.Scope.States().Count(),
+            new([.. submodel.Scope.Parameters().Select(own => all.FindIndex(item => item.Scope == own.Scope && item.Parameter == own.Parameter))]));
+    }
+
+    private ObservableDefinition Define(ModelScope scope, (ISymbol Member, string Unit) observable, int value) => new(
+        scope.Path + observable.Member.Name, Summaries.Of(observable.Member, cancellation), observable.Unit, value, TextOf(observable.Member));
 
     private string TextOf(ISymbol? member) =>
         member is not null && Bodies.Find(member, compilation, cancellation) is { } body ? UserText.OfBody(body) : "";

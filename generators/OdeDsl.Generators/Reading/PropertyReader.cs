@@ -24,6 +24,10 @@ internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation
 
     public List<DeclaredParameter> Parameters { get; } = [];
 
+    /// <summary>The numbers that a model around this one may give.</summary>
+    public IEnumerable<ISymbol> Open =>
+        Parameters.Select(static parameter => (ISymbol)parameter.Symbol).Concat(Inputs.Select(static input => input.Symbol));
+
     /// <summary>Properties that were meant to be states but cannot be: their rates are no further problem.</summary>
     public HashSet<string> FailedStates { get; } = [];
 
@@ -37,7 +41,7 @@ internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation
             AttributeData? angle = Attributes.Find(member, Attributes.Angle);
             if (angle is not null && state is null)
                 problems.Report(Descriptors.AngleWithoutState, Attributes.Place(angle, member), member.Name);
-            AttributeData? input = Attributes.Find(member, Attributes.Input);
+            AttributeData? input = Attributes.Find(member, Attributes.Input) is { } mark && !Attributes.IsConnection(mark) ? mark : null;
             AttributeData? mode = Attributes.Find(member, Attributes.Mode);
             if (member is not IPropertySymbol property || (state ?? parameter ?? input ?? mode) is null) continue;
             if (!HasOneRole(property))
@@ -148,12 +152,17 @@ internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation
             problems.Report(Descriptors.PropertyNotPartial, place, role, property.Name);
         else if (Bodies.Find(property, compilation, cancellation) is not null || declaration.Initializer is not null)
             problems.Report(Descriptors.PropertyImplemented, place, role, property.Name);
-        else return Definition(property, declaration);
+        else return Definition(property, cancellation);
         return null;
     }
 
-    private PropertyDefinition Definition(IPropertySymbol property, PropertyDeclarationSyntax declaration)
+    /// <summary>What to repeat in the implementing part of a partial property.</summary>
+    public static PropertyDefinition Definition(IPropertySymbol property, CancellationToken cancellation)
     {
+        PropertyDeclarationSyntax declaration = property.DeclaringSyntaxReferences
+            .Select(reference => reference.GetSyntax(cancellation))
+            .OfType<PropertyDeclarationSyntax>()
+            .First();
         string modifiers = string.Join(" ", declaration.Modifiers
             .Where(static modifier => !modifier.IsKind(SyntaxKind.PartialKeyword))
             .Select(static modifier => modifier.Text));

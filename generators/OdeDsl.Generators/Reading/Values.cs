@@ -21,11 +21,8 @@ internal sealed record LiteralValue(object? Constant) : Value;
 /// <summary>A table, by its position in the model.</summary>
 internal sealed record TableReference(int Index) : Value;
 
-/// <summary>The model itself.</summary>
-internal sealed record ModelValue : Value
-{
-    public static readonly ModelValue Instance = new();
-}
+/// <summary>The model itself or a submodel.</summary>
+internal sealed record ModelValue(ModelScope Scope) : Value;
 
 /// <summary>The value of code with a problem that is told already. It spreads silently.</summary>
 internal sealed record UnknownValue : Value

@@ -12,7 +12,7 @@ namespace OdeDsl.Generators.Reading;
 /// loops. The segments are found while reading: a condition that is open on a segment splits it, and the rate is read again.
 /// </summary>
 internal sealed class VectorRateReader(
-    BodyReader bodies, VectorTables tables, ExpressionGraph graph, Problems problems, CancellationToken cancellation)
+    ModelScope whole, BodyReader bodies, VectorTables tables, ExpressionGraph graph, Problems problems, CancellationToken cancellation)
 {
     /// <summary>Segments of one index at most; more would mean a rate that is written out cell by cell.</summary>
     private const int LargestSplitCount = 200;
@@ -46,7 +46,7 @@ internal sealed class VectorRateReader(
 
     private SegmentDefinition Read(ISymbol member, IndexRange[] ranges)
     {
-        int? rate = bodies.Read(member, [.. ranges.Select(SplitSet.IndexOn)]);
+        int? rate = bodies.Read(whole, member, [.. ranges.Select(SplitSet.IndexOn)]);
         if (rate is { } node)
         {
             RequireOrder(member, node);

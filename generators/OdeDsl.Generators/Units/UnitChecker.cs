@@ -45,18 +45,19 @@ internal sealed partial class UnitChecker
     }
 
     /// <summary>Checks a model.</summary>
-    /// <param name="rates">The states with the members that compute their rates.</param>
+    /// <param name="equations">The states with the members that compute their rates, and other numbers with the members that give them.</param>
     public static void Check(
         INamedTypeSymbol model,
-        IEnumerable<(ISymbol State, ISymbol? Rate)> rates,
+        IEnumerable<(ISymbol Target, ISymbol? Member, bool IsRate)> equations,
         Compilation compilation,
         Problems problems,
         CancellationToken cancellation)
     {
-        if (!model.GetMembers().Any(StatedUnits.IsStated)) return;
+        (ISymbol Target, ISymbol? Member, bool IsRate)[] all = [.. equations];
+        if (!model.GetMembers().Concat(all.Select(static item => item.Target)).Any(StatedUnits.IsStated)) return;
         try
         {
-            new UnitChecker(model, compilation, problems, cancellation).Check([.. rates]);
+            new UnitChecker(model, compilation, problems, cancellation).Check(all);
         }
         catch (InsufficientExecutionStackException)
         {
@@ -64,20 +65,20 @@ internal sealed partial class UnitChecker
         }
     }
 
-    private void Check((ISymbol State, ISymbol? Rate)[] rates)
+    private void Check((ISymbol Target, ISymbol? Member, bool IsRate)[] equations)
     {
         _time = _stated.OfTime(_model);
-        foreach ((_, ISymbol? rate) in rates)
+        foreach ((_, ISymbol? member, _) in equations)
         {
-            if (rate is not null) _checked.Add(rate);
+            if (member is not null) _checked.Add(member);
         }
 
-        foreach ((ISymbol state, ISymbol? rate) in rates)
+        foreach ((ISymbol target, ISymbol? member, bool isRate) in equations)
         {
-            if (rate is null) continue;
-            Unit? unit = _stated.Of(state);
-            Unit? wanted = unit is null || _time is null ? null : unit.Difference().Times(_time, -1);
-            CheckBody(rate, wanted is null ? null : ($"the rate of '{state.Name}'", wanted, false));
+            if (member is null) continue;
+            Unit? unit = _stated.Of(target);
+            if (isRate) unit = unit is null || _time is null ? null : unit.Difference().Times(_time, -1);
+            CheckBody(member, unit is null ? null : (isRate ? $"the rate of '{target.Name}'" : $"'{target.Name}'", unit, !isRate));
         }
 
         foreach (ISymbol member in _model.GetMembers())

@@ -1,4 +1,5 @@
 using System.Collections.Generic;
+using System.Linq;
 using OdeDsl.Generators.Reading;
 
 namespace OdeDsl.Generators.Writing;
@@ -9,11 +10,15 @@ internal static class Identifiers
     /// <summary>The identifier as it must be written: keywords get their <c>@</c>, also those that are keywords only in places.</summary>
     public static string Escape(string name) => UserText.Escaped(name);
 
-    /// <summary>The name with a small first letter, as locals have it.</summary>
-    public static string Local(string name) => char.ToLowerInvariant(name[0]) + name.Substring(1);
+    /// <summary>The name with a small first letter, as locals have it. The dots of a submodel's members are left out.</summary>
+    public static string Local(string name) => char.ToLowerInvariant(name[0]) + Joined(name).Substring(1);
 
     /// <summary>The name with a capital first letter, as parts of names have it.</summary>
-    public static string Part(string name) => char.ToUpperInvariant(name[0]) + name.Substring(1);
+    public static string Part(string name) => char.ToUpperInvariant(name[0]) + Joined(name).Substring(1);
+
+    private static string Joined(string name) => name.IndexOf('.') < 0
+        ? name
+        : string.Concat(name.Split('.').Select(static part => char.ToUpperInvariant(part[0]) + part.Substring(1)));
 }
 
 /// <summary>Hands out names that are not taken yet.</summary>

@@ -9,8 +9,10 @@ internal sealed class ModelMembersWriter(SourceWriter writer, ModelDefinition mo
     private const string Input = "global::System.ReadOnlySpan<double>";
     private const string Output = "global::System.Span<double>";
 
-    private readonly string[] _states = [.. model.States.Select(state => members.Claim(FieldName(state.Property)))];
-    private readonly string[] _parameters = [.. model.Parameters.Select(parameter => members.Claim(FieldName(parameter.Property)))];
+    private readonly string[] _states = [.. model.States.Take(model.OwnStateCount).Select(state => members.Claim(FieldName(state.Property)))];
+    private readonly string[] _parameters = [.. model.Parameters.Take(model.OwnParameterCount).Select(parameter => members.Claim(FieldName(parameter.Property)))];
+
+    private readonly SubmodelWriter _submodels = new(writer, model, members);
 
     private readonly string[] _modes = [.. model.Modes.Select(mode => members.Claim(FieldName(mode.Property)))];
     private readonly string[] _inputs = [.. model.Inputs.Select(input => members.Claim(FieldName(input.Property)))];
@@ -23,34 +25,39 @@ internal sealed class ModelMembersWriter(SourceWriter writer, ModelDefinition mo
         for (int i = 0; i < _modes.Length; i++) PropertyWriter.Write(writer, model.Modes[i].Property, _modes[i], ModeValue(model.Modes[i]));
         for (int i = 0; i < _inputs.Length; i++) PropertyWriter.Write(writer, model.Inputs[i].Property, _inputs[i], model.Inputs[i].ValueBits);
 
+        _submodels.WriteStorage(modelName);
         string contract = $"global::OdeDsl.Modeling.IOdeModel<{modelName}, {modelName}.{equationsName}>";
-        Transfer($"void {contract}.ReadState({Output} state)", "state", _states, static (vector, field) => $"{vector} = {field};");
-        Transfer($"void {contract}.WriteState({Input} state)", "state", _states, static (vector, field) => $"{field} = {vector};");
+        Transfer($"void {contract}.ReadState({Output} state)", "ReadState", "state", _states, static (vector, field) => $"{vector} = {field};");
+        Transfer($"void {contract}.WriteState({Input} state)", "WriteState", "state", _states, static (vector, field) => $"{field} = {vector};");
         Transfer(
-            $"void {contract}.ReadParameters({Output} parameters)", "parameters", _parameters, static (vector, field) => $"{vector} = {field};");
+            $"void {contract}.ReadParameters({Output} parameters)", "ReadParameters", "parameters", _parameters, static (vector, field) => $"{vector} = {field};");
         Transfer(
-            $"void {contract}.WriteParameters({Input} parameters)", "parameters", _parameters, static (vector, field) => $"{field} = {vector};");
+            $"void {contract}.WriteParameters({Input} parameters)", "WriteParameters", "parameters", _parameters, static (vector, field) => $"{field} = {vector};");
         if (_modes.Length > 0)
         {
             string[] values = [.. _modes.Select((field, i) => ModeNumber(model.Modes[i].Kind, field))];
-            Transfer($"void {contract}.ReadModes({Output} modes)", "modes", values, static (vector, value) => $"{vector} = {value};");
+            Transfer($"void {contract}.ReadModes({Output} modes)", "ReadModes", "modes", values, static (vector, value) => $"{vector} = {value};");
         }
 
         if (_inputs.Length > 0)
-            Transfer($"void {contract}.ReadInputs({Output} inputs)", "inputs", _inputs, static (vector, field) => $"{vector} = {field};");
-        writer.Line(GeneratedMark.Code);
-        writer.Line(GeneratedMark.NotCovered);
-        writer.Line($"{modelName} {contract}.Copy() => ({modelName})base.MemberwiseClone();");
-        writer.Line();
+            Transfer($"void {contract}.ReadInputs({Output} inputs)", "ReadInputs", "inputs", _inputs, static (vector, field) => $"{vector} = {field};");
+        _submodels.WriteCopy(modelName, contract);
     }
 
-    private void Transfer(string signature, string vector, string[] fields, System.Func<string, string, string> line)
+    private void Transfer(string signature, string method, string vector, string[] fields, System.Func<string, string, string> line)
     {
         writer.Line(GeneratedMark.Code);
         writer.Line(GeneratedMark.NotCovered);
         writer.Open(signature);
-        writer.Line($"{vector} = {vector}[..{Literals.Integer(fields.Length)}];");
+        int count = vector switch
+        {
+            "state" => model.States.Count,
+            "parameters" => model.Parameters.Count,
+            _ => fields.Length,
+        };
+        writer.Line($"{vector} = {vector}[..{Literals.Integer(count)}];");
         for (int i = 0; i < fields.Length; i++) writer.Line(line($"{vector}[{Literals.Integer(i)}]", fields[i]));
+        if (vector is "state" or "parameters") _submodels.WriteTransfer(method, vector);
         writer.Close();
         writer.Line();
     }

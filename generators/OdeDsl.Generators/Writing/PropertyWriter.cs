@@ -15,10 +15,16 @@ internal static class PropertyWriter
         writer.Line(GeneratedMark.Code);
         writer.Line($"private {property.Type} {field} = {initial};");
         writer.Line();
+        WriteOver(writer, property, property.Type, field);
+    }
+
+    /// <summary>The implementing part of a property over a field that is printed elsewhere.</summary>
+    public static void WriteOver(SourceWriter writer, PropertyDefinition property, string type, string field)
+    {
         writer.Line(GeneratedMark.Code);
         writer.Line(GeneratedMark.NotCovered);
         string modifiers = property.Modifiers.Length > 0 ? property.Modifiers + " " : "";
-        writer.Open($"{modifiers}partial {property.Type} {Identifiers.Escape(property.Name)}");
+        writer.Open($"{modifiers}partial {type} {Identifiers.Escape(property.Name)}");
         foreach (string accessor in property.Accessors)
             writer.Line(IsGetter(accessor) ? $"{accessor} => {field};" : $"{accessor} => {field} = value;");
         writer.Close();

@@ -128,13 +128,17 @@ public sealed class Trajectory
     public Series this[double[,] vector, int row, int column, [CallerArgumentExpression(nameof(vector))] string expression = ""] =>
         this[string.Create(CultureInfo.InvariantCulture, $"{NameIn(expression)}[{row}, {column}]")];
 
-    private static string NameIn(string expression)
+    private string NameIn(string expression)
     {
         string path = expression.StartsWith("new ", StringComparison.Ordinal) ? expression[4..] : expression;
         if (!path.All(static letter => char.IsLetterOrDigit(letter) || letter is '.' or '_' or '@' or '(' or ')' or '?' or '!'))
             throw new ArgumentException($"Name one state or observable, as in run[model.Level]; '{expression}' computes something.", nameof(expression));
-        return expression[(expression.LastIndexOf('.') + 1)..].TrimStart('@').TrimEnd('(', ')');
+        // The longest ending that is a name: run[plant.Upper.Level] is the level of the upper tank.
+        string[] parts = [.. path.Split('.').Select(static part => part.TrimStart('@').TrimEnd('(', ')', '?', '!'))];
+        return Enumerable.Range(0, parts.Length).Select(i => string.Join('.', parts[i..])).FirstOrDefault(Has) ?? parts[^1];
     }
+
+    private bool Has(string name) => System.Description.IndexOfState(name) >= 0 || System.Description.IndexOfObservable(name) >= 0;
 
     /// <summary>The state at a time.</summary>
     /// <param name="time">A time within the run.</param>
