@@ -1,6 +1,6 @@
 namespace OdeDsl.Integration;
 
-/// <summary>Which methods the automatic choice works with: those that were fastest at a tolerance on the public problems (benchmarks/README.md).</summary>
+/// <summary>Which methods the automatic choice works with: those that were fastest at a tolerance on the public problems (benchmarks/work-precision.md).</summary>
 internal static class AutomaticChoice
 {
     /// <summary>The method for motion that is not stiff.</summary>

@@ -25,7 +25,7 @@ internal readonly struct ModelField<TSystem> : IVectorField
         this.regime = regime;
         this.sliding = sliding;
         Dimension = system.StateCount;
-        DependsOnTime = system.Description.DependsOnTime;
+        DependsOnTime = system.DependsOnTime;
         structure = JacobianStructure.Of(system.Description.StateSparsity);
         bool whole = structure.Pattern is not null && system.SwitchCount > 0 && Dimension <= LargestWhole;
         slidingStructure = whole ? JacobianStructure.Dense(Dimension) : structure;

@@ -41,13 +41,12 @@ internal sealed class TrajectoryStore(int stateCount, double time, ReadOnlySpan<
     /// <summary>Adds a jump: a step that takes no time.</summary>
     public void AppendJump(ReadOnlySpan<double> state)
     {
-        int step = NodeCount - 1, stride = DenseStep.CoefficientCount * stateCount;
         Grow(ref times, NodeCount + 1);
         Grow(ref states, (NodeCount + 1) * stateCount);
-        Grow(ref coefficients, (step + 1) * stride);
+        Grow(ref starts, NodeCount + 1);
+        starts[NodeCount] = starts[NodeCount - 1];
         times[NodeCount] = times[NodeCount - 1];
         state.CopyTo(states.AsSpan(NodeCount * stateCount));
-        coefficients.AsSpan(step * stride, stride).Clear();
         NodeCount++;
     }
 
