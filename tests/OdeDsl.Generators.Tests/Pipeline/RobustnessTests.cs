@@ -19,7 +19,7 @@ public sealed class RobustnessTests
             [OdeModel]
             public sealed partial class Model
             {
-                [State(Initial = -1.5, Lower = -10, Upper = 10, Unit = "m"), Angle] public partial double X { get; set; }
+                [State(Initial = -1.5, Lower = -10, Upper = 10, Unit = "1"), Angle] public partial double X { get; set; }
                 [State] public partial double Y { get; private set; }
                 [Parameter(2.5, Lower = 0)] public partial double P { get; init; }
                 private static readonly double Root = Math.Sqrt(2);
@@ -31,7 +31,7 @@ public sealed class RobustnessTests
                     switch (n) { case 1: return time; case 0: break; default: n += 2; break; }
                     return n / 2 * Math.Abs(Y) + (double)(3 % 2) - Flow(factor: X, level: Y);
                 }
-                [Observable(Unit = "m3")] public double Volume => P * X;
+                [Observable(Unit = "1")] public double Volume => P * X;
             }
         }
         """;

@@ -16,9 +16,9 @@ public sealed class SimpleModelTests
         public sealed partial class Tank
         {
             /// <summary>Water level.</summary>
-            [State(Initial = -2.0, Lower = -15, Upper = 15, Unit = "m")] public partial double Level { get; set; }
+            [State(Initial = -2.0, Lower = -15, Upper = 15, Unit = "1")] public partial double Level { get; set; }
             [State(Initial = 2)] public partial double Velocity { get; private set; }
-            [Parameter(60.0, Lower = 5, Upper = 400, Unit = "m2")] public partial double Area { get; set; }
+            [Parameter(60.0, Lower = 5, Upper = 400, Unit = "1")] public partial double Area { get; set; }
             private const double Gravity = 9.81;
             private double Flow => Area / (Gravity + Level);
             [Rate(nameof(Level))] private double LevelRate => (Velocity /* speed */ - Flow)
