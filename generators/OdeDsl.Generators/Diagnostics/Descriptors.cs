@@ -367,7 +367,7 @@ internal static partial class Descriptors
 
     public static readonly DiagnosticDescriptor JumpInEquation = new(
         "ODE0125", "An equation jumps",
-        "'{1}' jumps where '{0}' changes, at each crossing and in both directions; if it stands for something that happens once or stays, declare an event",
+        "'{1}' jumps where '{0}' changes, at each crossing and in both directions; if it stands for something that happens once or stays, write an [Event] that sets a [Mode]",
         Category, DiagnosticSeverity.Info, isEnabledByDefault: true, helpLinkUri: Help + "ODE0125");
 
     public static readonly DiagnosticDescriptor HelperNotStatic = new(
