@@ -1,3 +1,4 @@
+using System.Collections.Generic;
 using System.Linq;
 using System.Threading;
 using Microsoft.CodeAnalysis;
@@ -30,15 +31,28 @@ internal static class Bodies
     /// against has no symbol for it yet.)
     /// </summary>
     private static SyntaxNode? ImplementingPart(IPropertySymbol property, Compilation compilation, CancellationToken cancellation) =>
-        property.ContainingType.DeclaringSyntaxReferences
+        PartialProperties(property.ContainingType, compilation, cancellation)
+            .Where(part => part.Identifier.ValueText == property.Name)
+            .Select(BodyOf)
+            .FirstOrDefault(static body => body is not null);
+
+    /// <summary>
+    /// The names of the partial properties of a class that the user implements, found in one pass: to ask for each property would look
+    /// through all members each time.
+    /// </summary>
+    public static HashSet<string> ImplementedPartialProperties(INamedTypeSymbol type, Compilation compilation, CancellationToken cancellation) =>
+        [.. PartialProperties(type, compilation, cancellation)
+            .Where(static part => BodyOf(part) is not null)
+            .Select(static part => part.Identifier.ValueText)];
+
+    private static IEnumerable<PropertyDeclarationSyntax> PartialProperties(INamedTypeSymbol type, Compilation compilation, CancellationToken cancellation) =>
+        type.DeclaringSyntaxReferences
             .Where(reference => compilation.ContainsSyntaxTree(reference.SyntaxTree))
             .Select(reference => reference.GetSyntax(cancellation))
             .OfType<TypeDeclarationSyntax>()
-            .SelectMany(static type => type.Members)
+            .SelectMany(static part => part.Members)
             .OfType<PropertyDeclarationSyntax>()
-            .Where(part => part.Identifier.ValueText == property.Name && part.Modifiers.Any(SyntaxKind.PartialKeyword))
-            .Select(BodyOf)
-            .FirstOrDefault(static body => body is not null);
+            .Where(static part => part.Modifiers.Any(SyntaxKind.PartialKeyword));
 
     public static bool IsPartial(IPropertySymbol property, CancellationToken cancellation) =>
         property.OriginalDefinition.DeclaringSyntaxReferences

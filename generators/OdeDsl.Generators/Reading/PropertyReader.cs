@@ -20,6 +20,8 @@ internal sealed record DeclaredParameter(IPropertySymbol Symbol, ParameterDefini
 /// <summary>Reads the states and parameters of a model, in the order of declaration.</summary>
 internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation compilation, Problems problems, CancellationToken cancellation)
 {
+    private HashSet<string>? _implemented;
+
     public List<DeclaredState> States { get; } = [];
 
     public List<DeclaredParameter> Parameters { get; } = [];
@@ -130,6 +132,9 @@ internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation
         return (low, high, unit ?? "");
     }
 
+    private bool IsImplemented(IPropertySymbol property) =>
+        (_implemented ??= Bodies.ImplementedPartialProperties(model, compilation, cancellation)).Contains(property.Name);
+
     /// <returns>What to generate, or null with a problem reported.</returns>
     private PropertyDefinition? ReadProperty(IPropertySymbol property, string role, bool anyType = false)
     {
@@ -150,7 +155,7 @@ internal sealed partial class PropertyReader(INamedTypeSymbol model, Compilation
         }
         else if (declaration is null || !Bodies.IsPartial(property, cancellation))
             problems.Report(Descriptors.PropertyNotPartial, place, role, property.Name);
-        else if (Bodies.Find(property, compilation, cancellation) is not null || declaration.Initializer is not null)
+        else if (IsImplemented(property) || declaration.Initializer is not null)
             problems.Report(Descriptors.PropertyImplemented, place, role, property.Name);
         else return Definition(property, cancellation);
         return null;
