@@ -91,9 +91,17 @@ internal sealed class GuardSet
     /// <summary>Whether a point lies on a surface of a switching function, to within rounding.</summary>
     public bool IsOnSurface(int index, double time, ReadOnlySpan<double> state)
     {
+        const double SameTime = 16; // units of rounding of the time within which the motion came to the surface
         system.SwitchingFunctions(time, state, regime, functions);
         double level = kinds[index] == SwitchKind.WholeNumber ? Math.Round(functions[index]) : 0;
-        return Math.Abs(functions[index] - level) <= Rounding(index, time, state);
+        double near = Rounding(index, time, state);
+        double[] rates = new double[state.Length], byTime = new double[functions.Length];
+        system.Rates(time, state, regime, rates);
+        system.SwitchingTimeDerivative(time, state, regime, byTime);
+        double speed = byTime[index];
+        for (int i = 0; i < rates.Length; i++) speed += gradients[index * rates.Length + i] * rates[i];
+        if (double.IsFinite(speed)) near += SameTime * (Math.BitIncrement(Math.Abs(time)) - Math.Abs(time)) * Math.Abs(speed);
+        return Math.Abs(functions[index] - level) <= near;
     }
 
     /// <summary>How far rounding of the state may move a guard's value.</summary>

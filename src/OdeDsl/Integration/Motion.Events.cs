@@ -9,6 +9,12 @@ internal sealed partial class Motion
     /// <summary>A step of no more than so many units of rounding of the time says nothing about a guard that has to rise.</summary>
     private const double TooShortToRise = 1024;
 
+    /// <summary>So many events within so many units of rounding of the time accumulate: no model means them to be told apart.</summary>
+    private const int CrowdedEvents = 24;
+    private const double CrowdedTime = 65536;
+
+    private readonly double[] lastEvents = new double[CrowdedEvents];
+    private int eventCount;
     private readonly EventSet events;
     private readonly double[] initialModes;
     private readonly double[] surface;
@@ -28,7 +34,7 @@ internal sealed partial class Motion
     public StepStatus Fire()
     {
         NewEvents.Clear();
-        if (!CountMeeting()) return StepStatus.EventsAccumulate;
+        if (!CountMeeting() || IsCrowded()) return StepStatus.EventsAccumulate;
         KeepContinuation();
         events.Fire(Time, Current.End.AsSpan(0, Current.Dimension), surfaceMet ? surface : [], DecideAnew, NewEvents);
         surfaceMet = false;
@@ -43,9 +49,18 @@ internal sealed partial class Motion
         return StepStatus.Accepted;
     }
 
+    private bool IsCrowded()
+    {
+        int place = eventCount++ % CrowdedEvents;
+        double earlier = lastEvents[place];
+        lastEvents[place] = Time;
+        return eventCount > CrowdedEvents && Math.Abs(Time - earlier) <= CrowdedTime * Ulp(Time);
+    }
+
     private void BeginEvents(double time, ReadOnlySpan<double> state)
     {
         events.Begin(time, state);
+        eventCount = 0;
         NewEvents.Clear();
         Array.Clear(rising);
         Array.Clear(guards.Leaves);
@@ -81,16 +96,24 @@ internal sealed partial class Motion
         return false;
     }
 
-    // The event found, and those whose guards vanish at the same moment.
-    private void MeetEvents(int found)
+    // The event found, and those whose guards vanish at the same moment. False where a motion that has no room left to move meets a guard
+    // that it does not run at: rounding moves it to and fro.
+    private bool MeetEvents(int found)
     {
+        bool isShort = Math.Abs(Current.EndTime - Current.StartTime) <= TooShortToRise * Ulp(Current.EndTime);
         guards.Evaluate(Time, State, guardValues);
         for (int i = 0; i < events.Slots.Length; i++)
         {
             int index = guards.SectionIndex + 1 + i;
-            bool together = search.StartsArmed(index)
-                && guardValues[index] <= GuardRounding * events.Sensitivity(events.Slots[i].Switch, Time, State);
-            if (index == found || together) events.Meet(events.Slots[i].Switch);
+            Guard guard = events.Slots[i];
+            double rate = guard.Sign * events.GuardRate(guard.Switch, Time, State);
+            double near = GuardRounding * events.Sensitivity(guard.Switch, Time, State) + SameTime * Ulp(Time) * Math.Abs(rate);
+            bool together = search.StartsArmed(index) && guardValues[index] <= near;
+            if (index != found && !together) continue;
+            if (isShort && rate >= 0) return false;
+            events.Meet(guard.Switch);
         }
+
+        return true;
     }
 }

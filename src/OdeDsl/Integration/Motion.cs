@@ -50,6 +50,8 @@ internal sealed partial class Motion
 
     public Motion(DynamicSystem system, IntegrationOptions options, int tangentCount)
     {
+        if (options.Method == IntegrationMethod.BackwardDifferentiation && system.Description.Events.Length > 0)
+            throw new ArgumentException($"{system.Description.Name} has events, and the backward differentiation formulas do not start again reliably after them; choose another method.", nameof(options));
         options.Validate();
         this.system = system = system.ForRun();
         this.options = options;
@@ -182,10 +184,12 @@ internal sealed partial class Motion
 
             if (guard.Kind == GuardKind.Event)
             {
-                MeetEvents(search.Found);
+                if (!MeetEvents(search.Found)) return StepStatus.EventsAccumulate;
                 break;
             }
 
+            // A guard that vanishes where a condition changes is met here: beyond, it would be taken for one that was passed before.
+            if (events.Any && !MeetEvents(search.Found)) return StepStatus.EventsAccumulate;
             status = Meet(guard);
             if (status != StepStatus.Accepted) return status;
             if (Current.EndTime != Current.StartTime || EventsDue) break;

@@ -118,3 +118,40 @@ public sealed partial class Sampled
         Next += Period;
     }
 }
+
+/// <summary>A basin whose overflow alarm looks at the level at which the inflow is throttled.</summary>
+[OdeModel]
+public sealed partial class ThrottledBasin
+{
+    [State(Initial = 1)] public partial double Level { get; set; }
+
+    [Mode(0.0)] public partial double Alarms { get; set; }
+
+    private double Overflow => 2 * Level - 6;
+
+    private bool IsHigh => Level > 3;
+
+    [Rate(nameof(Level))] private double LevelRate => 0.3 - (Level > 3 ? 0.1 : 0);
+
+    [Event(nameof(Overflow), Direction = GuardDirection.Rising)]
+    private void Alarm() => Alarms += 1;
+
+    [Event(nameof(IsHigh), Direction = GuardDirection.Rising)]
+    private void Note() => Alarms += 10;
+}
+
+/// <summary>A condition as guard, many times over.</summary>
+[OdeModel]
+public sealed partial class SwingPastMark
+{
+    [State] public partial double X { get; set; }
+
+    [Mode(0.0)] public partial double Passes { get; set; }
+
+    private bool IsPast => X > 0.5;
+
+    [Rate(nameof(X))] private double XRate(double time) => Math.Cos(time);
+
+    [Event(nameof(IsPast), Direction = GuardDirection.Rising)]
+    private void Count() => Passes += 1;
+}

@@ -127,4 +127,52 @@ public sealed class EventTests
         IntegrationException failure = Assert.Throws<IntegrationException>(() => new Ball().Simulate(until: -1));
         Assert.Equal(IntegrationFailure.EventsInReverse, failure.Reason);
     }
+
+    public static TheoryData<IntegrationMethod> Methods => [.. Enum.GetValues<IntegrationMethod>().Where(static method => method != IntegrationMethod.BackwardDifferentiation)];
+
+    [Fact]
+    public void The_backward_differentiation_formulas_refuse_events() => Assert.Contains(
+        "choose another method",
+        Assert.Throws<ArgumentException>(static () => new Ball().Simulate(1, new SimulationOptions { Method = IntegrationMethod.BackwardDifferentiation })).Message,
+        StringComparison.Ordinal);
+
+    // Level = 1 + 0.3 t reaches 3 at t = 20/3.
+    [Theory]
+    [MemberData(nameof(Methods))]
+    public void Guards_on_the_surface_of_a_condition_are_met_with_it(IntegrationMethod method)
+    {
+        Trajectory run = new ThrottledBasin().Simulate(20, new SimulationOptions { Method = method });
+        Assert.Equal(2, run.Events.Count);
+        Assert.All(run.Events, static item => Assert.True(Math.Abs(item.Time - 20.0 / 3) <= 1e-9));
+        Assert.True(Math.Abs(run.FinalState[0] - (3 + 0.2 * (20 - 20.0 / 3))) <= 1e-6);
+    }
+
+    // X = sin t passes 1/2 upwards at π/6 + 2πk: 160 times before t = 1000.
+    [Theory]
+    [MemberData(nameof(Methods))]
+    public void A_condition_as_guard_is_met_once_a_turn_for_many_turns(IntegrationMethod method)
+    {
+        const double Until = 1000;
+        Trajectory run = new SwingPastMark().Simulate(Until, new SimulationOptions { Method = method });
+        Assert.Equal((int)Math.Floor((Until - Math.PI / 6) / Math.Tau) + 1, run.Events.Count);
+    }
+
+    // The impacts of a ball accumulate at sqrt(2 h / g) (1 + e) / (1 - e) (mechanics textbooks): a failure there, whatever the restitution.
+    [Theory]
+    [InlineData(0.1)]
+    [InlineData(0.3)]
+    [InlineData(0.5)]
+    [InlineData(0.8)]
+    [InlineData(0.9)]
+    public void Impacts_that_accumulate_end_the_run_where_they_do(double restitution)
+    {
+        foreach (IntegrationMethod method in Methods)
+        {
+            var options = new SimulationOptions { Method = method, RelativeTolerance = 1e-6 };
+            IntegrationException failure = Assert.Throws<IntegrationException>(() => new Ball { Restitution = restitution }.Simulate(20, options));
+            Assert.Equal(IntegrationFailure.EventsAccumulate, failure.Reason);
+            double end = Math.Sqrt(2 / 9.81) * (1 + restitution) / (1 - restitution);
+            Assert.True(Math.Abs(failure.Time - end) <= 1e-3 * end, $"{method}: {failure.Time:R}, not {end:R}");
+        }
+    }
 }
