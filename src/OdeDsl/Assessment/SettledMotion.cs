@@ -57,7 +57,7 @@ internal sealed record SettledMotion(double[] State, ReturnSequence? Returns, st
 
             state = run.FinalState;
             if (region.IsRunaway(state)) return new SettledMotion(state, null, "the motion from it runs away");
-            if (IsStill(run, region)) return new SettledMotion(state, null, "the motion from it comes to rest");
+            if (RestWatch.IsStill(run, region, Still)) return new SettledMotion(state, null, "the motion from it comes to rest");
             if (ReturnSequence.Of(run, region) is { Lag: > 0, Displacement: <= Repeats } returns && IsOfSize(run, returns, from))
             {
                 return new SettledMotion([.. returns.States[^1]], returns, string.Create(
@@ -81,16 +81,5 @@ internal sealed record SettledMotion(double[] State, ReturnSequence? Returns, st
         }
 
         return Enumerable.Range(0, low.Length).Any(i => high[i] - low[i] >= SmallestPart * from.Extents[i]);
-    }
-
-    private static bool IsStill(Trajectory run, SearchRegion region)
-    {
-        ReadOnlySpan<double> end = run.StateAtNode(run.Times.Length - 1);
-        for (int node = run.Times.Length / 2; node < run.Times.Length; node++)
-        {
-            if (!(region.Distance(end, run.StateAtNode(node)) <= Still)) return false;
-        }
-
-        return true;
     }
 }

@@ -43,15 +43,19 @@ internal sealed class RestWatch(DynamicSystem system, SearchRegion region, Immut
                 return (k, Invariant($"settles at equilibrium {k + 1}."));
         }
 
-        return IsStill(run, end) ? Unlisted(end) : null;
+        return IsStill(run, region, Still) ? Unlisted(end) : null;
     }
 
-    // All of the later half counts: a cycle that meets surfaces has steps that end at the very same places turn after turn.
-    private bool IsStill(Trajectory run, ReadOnlySpan<double> end)
+    /// <summary>
+    /// Whether a run stays within a part of the region around its end. All of the later half counts: a cycle that meets surfaces has steps that
+    /// end at the very same places turn after turn.
+    /// </summary>
+    public static bool IsStill(Trajectory run, SearchRegion region, double still)
     {
+        ReadOnlySpan<double> end = run.StateAtNode(run.Times.Length - 1);
         for (int node = run.Times.Length / 2; node < run.Times.Length; node++)
         {
-            if (!(region.Distance(end, run.StateAtNode(node)) <= Still)) return false;
+            if (!(region.Distance(end, run.StateAtNode(node)) <= still)) return false;
         }
 
         return true;

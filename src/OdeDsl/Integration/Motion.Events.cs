@@ -74,10 +74,13 @@ internal sealed partial class Motion
         Guard guard = events.Slots[slot];
         double value = guard.Sign * events.Evaluate(Time, State)[guard.Switch];
         double rate = guard.Sign * events.GuardRate(guard.Switch, Time, State);
-        double rounding = GuardRounding * events.Sensitivity(guard.Switch, Time, State) + SameTime * Ulp(Time) * Math.Abs(rate);
-        bool stands = Math.Abs(value) <= rounding;
+        bool stands = Math.Abs(value) <= GuardUncertainty(guard, rate);
         return (stands, stands && rate >= 0);
     }
+
+    // How far rounding of the state, and of the time at the speed the guard has, may move its value.
+    private double GuardUncertainty(Guard guard, double rate) =>
+        GuardRounding * events.Sensitivity(guard.Switch, Time, State) + SameTime * Ulp(Time) * Math.Abs(rate);
 
     private bool HasFallenBack(int landed)
     {
@@ -105,11 +108,10 @@ internal sealed partial class Motion
         for (int i = 0; i < events.Slots.Length; i++)
         {
             int index = guards.SectionIndex + 1 + i;
+            if (index != found && !search.StartsArmed(index)) continue;
             Guard guard = events.Slots[i];
             double rate = guard.Sign * events.GuardRate(guard.Switch, Time, State);
-            double near = GuardRounding * events.Sensitivity(guard.Switch, Time, State) + SameTime * Ulp(Time) * Math.Abs(rate);
-            bool together = search.StartsArmed(index) && guardValues[index] <= near;
-            if (index != found && !together) continue;
+            if (index != found && !(guardValues[index] <= GuardUncertainty(guard, rate))) continue;
             if (isShort && rate >= 0) return false;
             events.Meet(guard.Switch);
         }
